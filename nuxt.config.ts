@@ -1,0 +1,47 @@
+import { threadForNitro } from './server/compute/thread-plugin'
+import { writeRouteList } from './server/access/route-list'
+
+/** Tests and benches build into folders of their own, so that they can run beside a running product. */
+const build = process.env.HALFPLANE_BUILD_DIR
+
+export default defineNuxtConfig({
+  modules: ['@nuxt/eslint', '@nuxtjs/tailwindcss', '@pinia/nuxt', 'nuxt-auth-utils'],
+  ssr: true,
+  devtools: { enabled: false },
+  app: {
+    head: {
+      htmlAttrs: { lang: 'en-GB' },
+      title: 'Halfplane',
+      meta: [
+        { name: 'viewport', content: 'width=device-width, initial-scale=1' },
+        { name: 'description', content: 'Trade studies of modulation: error rates from geometry, set against the link budget.' },
+      ],
+      link: [{ rel: 'icon', type: 'image/svg+xml', href: '/mark.svg' }],
+    },
+  },
+  css: ['~/assets/css/sheet.css'],
+  runtimeConfig: {
+    session: {
+      password: '',
+      name: 'halfplane',
+      maxAge: 60 * 60 * 24 * 14,
+      // Secure is decided when the cookie is set, from BASE_URL.
+      cookie: { secure: false, sameSite: 'lax', httpOnly: true },
+    },
+  },
+  ...(build ? { buildDir: `${build}/nuxt` } : {}),
+  future: { compatibilityVersion: 4 },
+  experimental: { appManifest: false },
+  compatibilityDate: '2026-01-01',
+  nitro: {
+    ...(build ? { output: { dir: `${build}/output` } } : {}),
+    compressPublicAssets: true,
+    serverAssets: [{ baseName: 'migrations', dir: '../drizzle' }],
+    rollupConfig: { plugins: [threadForNitro()] },
+  },
+  vite: { build: { assetsInlineLimit: 0 } },
+  typescript: { strict: true },
+  telemetry: false,
+  hooks: { 'nitro:init': writeRouteList },
+  eslint: { config: { stylistic: true } },
+})

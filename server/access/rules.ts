@@ -1,0 +1,74 @@
+import type { StudyRole } from '#shared/schemas/members'
+
+/** How a route finds the study that it belongs to. */
+export type Subject = 'study' | 'candidate' | 'sweep'
+
+/**
+ * Who may call a route: anyone, any signed-in account, administrators,
+ * or people with one of the named roles in the study that the route's `id` belongs to.
+ */
+export type Rule =
+  | 'anyone'
+  | 'signedIn'
+  | 'admin'
+  | { roles: readonly StudyRole[], of: Subject, admin: boolean }
+
+const reads = (of: Subject): Rule => ({ roles: ['owner', 'editor', 'reviewer', 'observer'], of, admin: true })
+const edits = (of: Subject): Rule => ({ roles: ['owner', 'editor'], of, admin: false })
+const owns = (of: Subject): Rule => ({ roles: ['owner'], of, admin: false })
+
+/** Every route of the API. One that is not listed is refused for everybody. */
+export const rules: Record<string, Rule> = {
+  'GET /api/health': 'anyone',
+  'GET /api/openapi.json': 'anyone',
+  'POST /api/session': 'anyone',
+  'GET /api/session': 'signedIn',
+  'DELETE /api/session': 'signedIn',
+  // These two come with nuxt-auth-utils: the pages read the session through them.
+  'GET /api/_auth/session': 'anyone',
+  'DELETE /api/_auth/session': 'anyone',
+
+  'POST /api/account/password': 'signedIn',
+  'GET /api/account/tokens': 'signedIn',
+  'POST /api/account/tokens': 'signedIn',
+  'DELETE /api/account/tokens/:token': 'signedIn',
+
+  'GET /api/people': 'admin',
+  'POST /api/people': 'admin',
+  'PATCH /api/people/:person': 'admin',
+
+  'GET /api/studies': 'signedIn',
+  'POST /api/studies': 'signedIn',
+  'GET /api/studies/:id': reads('study'),
+  'PATCH /api/studies/:id': edits('study'),
+  'DELETE /api/studies/:id': owns('study'),
+  'POST /api/studies/:id/restore': owns('study'),
+  'GET /api/studies/:id/members': reads('study'),
+  'PUT /api/studies/:id/members': owns('study'),
+  'DELETE /api/studies/:id/members/:user': owns('study'),
+  'GET /api/studies/:id/activity': reads('study'),
+  'GET /api/studies/:id/events': reads('study'),
+
+  'GET /api/studies/:id/candidates': reads('study'),
+  'POST /api/studies/:id/candidates': edits('study'),
+  'POST /api/studies/:id/candidates/delete': edits('study'),
+  'POST /api/studies/:id/candidates/restore': edits('study'),
+  'POST /api/studies/:id/candidates/duplicate': edits('study'),
+  'POST /api/studies/:id/candidates/move': edits('study'),
+  'PUT /api/studies/:id/pins': edits('study'),
+  'GET /api/candidates/:id': reads('candidate'),
+  'PATCH /api/candidates/:id': edits('candidate'),
+  'DELETE /api/candidates/:id': edits('candidate'),
+  'GET /api/candidates/:id/curves': reads('candidate'),
+  'GET /api/candidates/:id/constellation': reads('candidate'),
+
+  'GET /api/studies/:id/sweeps': reads('study'),
+  'POST /api/studies/:id/sweeps': edits('study'),
+  'DELETE /api/sweeps/:id': edits('sweep'),
+
+  'GET /api/studies/:id/export.xlsx': reads('study'),
+  'GET /api/studies/:id/export.csv': reads('study'),
+  'GET /api/studies/:id/export.json': reads('study'),
+
+  'POST /api/evaluate': 'signedIn',
+}

@@ -1,0 +1,16 @@
+import { sql } from 'drizzle-orm'
+import { customType, varchar } from 'drizzle-orm/mysql-core'
+
+/** Identifier made by the application: a UUID, version 7. */
+export const uuid = (column: string) => varchar(column, { length: 36 })
+
+/** UTC time with milliseconds. */
+export const instant = customType<{ data: Date, driverData: Date | string }>({
+  dataType: () => 'datetime(3)',
+  toDriver: value => value.toISOString().slice(0, -1).replace('T', ' '),
+  // The connection's time zone is UTC; the driver hands dates over as text.
+  fromDriver: value => value instanceof Date ? value : new Date(`${value.replace(' ', 'T')}Z`),
+})
+
+/** Now, with milliseconds, in the connection's time zone, which is UTC. */
+export const now = sql`current_timestamp(3)`

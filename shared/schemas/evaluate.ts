@@ -1,0 +1,47 @@
+import { z } from 'zod'
+import { numberBetween, wholeBetween } from './common'
+import { families } from '../modulation'
+
+export const limits = { order: 4096, dimensions: 8, snrValues: 1001 } as const
+
+const coordinate = z.number({ error: 'A coordinate is a finite number.' })
+
+/** Constellation of an evaluation: points as given, or a family at unit mean energy. */
+export const evaluatedConstellation = z.strictObject({
+  family: z.enum(families.map(f => f.id) as [string, ...string[]], { error: `The family is one of ${families.map(f => f.id).join(', ')}.` }),
+  order: wholeBetween(2, limits.order, 'Order M is a whole number from 2 to 4096.').optional(),
+  rings: z.array(wholeBetween(1, limits.order, 'A ring has 1 to 4096 points.')).min(1).max(64, 'At most 64 rings.').optional(),
+  ratios: z.array(numberBetween(1e-3, 1e3, 'A ring ratio is a number from 0.001 to 1,000.')).max(63, 'At most 63 ring ratios.').optional(),
+  /** radians */
+  phases: z.array(numberBetween(-10, 10, 'A ring phase is in radians, from −10 to 10.')).max(64, 'At most 64 ring phases.').optional(),
+  points: z.array(z.array(coordinate).min(1, 'A point has 1 to 8 coordinates.').max(limits.dimensions, 'A point has 1 to 8 coordinates.'))
+    .min(2, 'Send 2 to 4096 points.').max(limits.order, 'Send 2 to 4096 points.').optional(),
+  labels: z.array(z.string().regex(/^[01]{1,12}$/, 'A label is a word of 1 to 12 bits such as 0110.')).max(limits.order).optional(),
+  probabilities: z.array(numberBetween(0, 1, 'A probability is from 0 to 1.')).max(limits.order).optional(),
+})
+
+export const evaluationQuantities = ['serUnion', 'serAllPairs', 'serNearest', 'serExact'] as const
+export type EvaluationQuantity = (typeof evaluationQuantities)[number]
+
+/** POST /api/evaluate */
+export const evaluation = z.strictObject({
+  constellation: evaluatedConstellation,
+  esN0Db: z.array(numberBetween(-60, 120, 'An Es/N0 value is from −60 to 120 dB.'))
+    .min(1, 'Send 1 to 1,001 values of Es/N0.').max(limits.snrValues, 'Send 1 to 1,001 values of Es/N0.'),
+  target: z.strictObject({
+    quantity: z.literal('ser', { error: 'The target is a symbol error rate (ser).' }),
+    value: numberBetween(1e-15, 0.5, 'Enter a target SER from 1e-15 to 0.5.'),
+  }).optional(),
+  quantities: z.array(z.enum(evaluationQuantities, { error: `A quantity is one of ${evaluationQuantities.join(', ')}.` })).min(1).max(8)
+    .default(['serUnion', 'serNearest', 'serExact']),
+})
+export type EvaluationRequest = z.infer<typeof evaluation>
+
+const numbers = z.array(z.number())
+export const evaluationAnswer = z.object({
+  order: z.int(), dimensions: z.int(), bitsPerSymbol: z.number(), meanEnergy: z.number(), peakEnergy: z.number(), paprDb: z.number(),
+  minimumDistance: z.number(),
+  neighbours: z.object({ relevantMean: z.number(), nearestMean: z.number(), relevant: z.array(z.array(z.int())) }),
+  curves: z.object({ esN0Db: numbers, serUnion: numbers.optional(), serAllPairs: numbers.optional(), serNearest: numbers.optional(), serExact: numbers.optional() }),
+  requiredEsN0Db: z.object({ serUnion: z.number(), serAllPairs: z.number(), serNearest: z.number(), serExact: z.number() }).partial().optional(),
+})

@@ -1,0 +1,110 @@
+import { z } from 'zod'
+import { decibels, name, numberBetween, text } from './common'
+
+/** Must-haves of a study; each kind has one unit. */
+export const mustHaveKinds = {
+  margin: { title: 'Required margin', unit: 'dB', sense: 'atLeast' },
+  netBitRate: { title: 'Minimum net bit rate', unit: 'Mbit/s', sense: 'atLeast' },
+  occupiedBandwidth: { title: 'Maximum occupied bandwidth', unit: 'MHz', sense: 'atMost' },
+  spectralEfficiency: { title: 'Minimum spectral efficiency', unit: 'bit/s/Hz', sense: 'atLeast' },
+  papr: { title: 'Maximum PAPR', unit: 'dB', sense: 'atMost' },
+} as const
+export type MustHaveKind = keyof typeof mustHaveKinds
+
+export const mustHave = z.strictObject({
+  id: z.string({ error: 'Give the requirement an ID.' }).trim().min(1, 'Give the requirement an ID.').max(24, 'An ID has at most 24 characters.'),
+  kind: z.enum(Object.keys(mustHaveKinds) as MustHaveKind[], { error: 'Choose what the requirement limits.' }),
+  /** in the kind's unit */
+  value: numberBetween(-1e6, 1e6, 'Enter a number from −1,000,000 to 1,000,000.'),
+  reason: text(1000),
+})
+export type MustHave = z.infer<typeof mustHave>
+
+const lineBase = { id: z.string().min(1).max(40), name: name('the line\'s name', 80), source: text(300) }
+const positive = (high: number, sentence: string) => z.number({ error: sentence }).positive(sentence).max(high, sentence)
+
+/** One line of the link budget. Losses are entered positive and subtracted. */
+export const linkLine = z.discriminatedUnion('kind', [
+  z.strictObject({ ...lineBase, kind: z.literal('power'), unit: z.enum(['dBm', 'dBW'], { error: 'The unit is dBm or dBW.' }), valueDb: decibels }),
+  z.strictObject({ ...lineBase, kind: z.literal('gain'), valueDb: decibels }),
+  z.strictObject({ ...lineBase, kind: z.literal('loss'), valueDb: numberBetween(0, 400, 'Enter a loss as 0 to 400 dB; it is subtracted.') }),
+  z.strictObject({
+    ...lineBase, kind: z.literal('freeSpaceLoss'),
+    frequencyGhz: positive(1e6, 'Enter a frequency above 0 and up to 1,000,000 GHz.'),
+    distanceKm: positive(1e12, 'Enter a distance above 0 and up to 1e12 km.'),
+  }),
+  z.strictObject({ ...lineBase, kind: z.literal('noiseFigure'), noiseFigureDb: numberBetween(0, 100, 'Enter a noise figure from 0 to 100 dB.') }),
+], { error: 'A line is a power, a gain, a loss, a free-space loss or a noise figure.' })
+export type LinkLine = z.infer<typeof linkLine>
+
+/** A link case such as clear or faded: what it adds to the common lines. */
+export const linkCase = z.strictObject({
+  id: z.string().min(1).max(40),
+  name: name('the case\'s name', 60),
+  /** null: the study's required margin holds */
+  requiredMarginDb: decibels.nullable(),
+  lines: z.array(linkLine).max(60, 'A case has at most 60 lines.'),
+})
+export type LinkCase = z.infer<typeof linkCase>
+
+const unique = <T>(key: (item: T) => string) => (items: T[]) => new Set(items.map(key)).size === items.length
+
+/** Where a row's available Es/N0 comes from. */
+export const available = z.discriminatedUnion('from', [
+  z.strictObject({ from: z.literal('entered'), esN0Db: decibels }),
+  z.strictObject({
+    from: z.literal('link'),
+    lines: z.array(linkLine).max(60, 'A link budget has at most 60 common lines.'),
+    cases: z.array(linkCase).min(1, 'A link budget has at least one case.').max(12, 'A link budget has at most 12 cases.')
+      .refine(unique(c => c.name.toLowerCase()), 'Every case has a name of its own.')
+      .refine(unique(c => c.id), 'Every case has an identifier of its own.'),
+  }),
+  z.strictObject({ from: z.literal('noiseDensity'), n0: positive(1e12, 'Enter N0 above 0, in signal units squared.') }),
+], { error: 'Available Es/N0 is entered, from the link budget, or from N0.' })
+export type Available = z.infer<typeof available>
+
+export const heldConstantKinds = {
+  symbolRate: { title: 'Symbol rate', unit: 'Msymbol/s' },
+  occupiedBandwidth: { title: 'Occupied bandwidth', unit: 'MHz' },
+  netBitRate: { title: 'Net bit rate', unit: 'Mbit/s' },
+} as const
+export type HeldConstant = keyof typeof heldConstantKinds
+
+/** Requirements of a study in their first form. */
+export const requirements = z.strictObject({
+  target: z.strictObject({
+    quantity: z.literal('ser', { error: 'The target is a symbol error rate (ser).' }),
+    value: numberBetween(1e-15, 0.5, 'Enter a target SER from 1e-15 to 0.5.'),
+  }),
+  mustHaves: z.array(mustHave).max(20, 'A study has at most 20 must-haves.')
+    .refine(unique(m => m.id.toLowerCase()), 'Every must-have has an ID of its own.')
+    .refine(unique(m => m.kind), 'Each kind of must-have is stated once.'),
+  heldConstant: z.strictObject({
+    kind: z.enum(Object.keys(heldConstantKinds) as HeldConstant[], { error: 'Hold the symbol rate, the occupied bandwidth or the net bit rate constant.' }),
+    /** Msymbol/s, MHz or Mbit/s by kind */
+    value: positive(1e9, 'Enter a value above 0 and up to 1e9.'),
+  }),
+  limitedBy: z.enum(['meanPower', 'peakPower'], { error: 'The amplifier is limited by mean or by peak power.' }),
+  /** share of the bit rate spent on framing, 0 to below 1 */
+  overhead: numberBetween(0, 0.95, 'Enter an overhead from 0 to 0.95 (0 to 95 %).'),
+  /** of the root-raised-cosine pulse */
+  rollOff: numberBetween(0, 1, 'Enter a roll-off from 0 to 1.'),
+  implementationLossDb: numberBetween(0, 100, 'Enter an implementation loss from 0 to 100 dB.'),
+  /** real dimensions that one symbol interval of one Nyquist band offers */
+  dimensionsPerInterval: z.union([z.literal(1), z.literal(2), z.literal(4)], { error: 'One symbol interval offers 1, 2 or 4 real dimensions.' }),
+  available,
+})
+export type Requirements = z.infer<typeof requirements>
+
+/** What a new study starts with: a plain set of requirements that computes at once. */
+export const defaultRequirements: Requirements = {
+  target: { quantity: 'ser', value: 1e-6 },
+  mustHaves: [{ id: 'R1', kind: 'margin', value: 1, reason: '' }],
+  heldConstant: { kind: 'symbolRate', value: 1 },
+  limitedBy: 'meanPower',
+  overhead: 0,
+  rollOff: 0.25,
+  implementationLossDb: 0,
+  dimensionsPerInterval: 2,
+  available: { from: 'entered', esN0Db: 20 },
+}
