@@ -1,0 +1,72 @@
+import { ceilToDigits, floorToDigits, roundingSlack } from './rounding'
+
+/**
+ * Kinds of must-have: the words and the unit that a verdict uses, digits shown, and on which side the limit lies.
+ * PAPR is the constellation's own, not the shaped waveform's.
+ */
+export const verdictKinds = {
+  margin: { words: 'margin', unit: 'dB', digits: 2, sense: 'atLeast', signed: true },
+  netBitRate: { words: 'net bit rate', unit: 'Mbit/s', digits: 1, sense: 'atLeast', signed: false },
+  occupiedBandwidth: { words: 'occupied bandwidth', unit: 'MHz', digits: 2, sense: 'atMost', signed: false },
+  spectralEfficiency: { words: 'spectral efficiency', unit: 'bit/s/Hz', digits: 2, sense: 'atLeast', signed: false },
+  papr: { words: 'PAPR', unit: 'dB', digits: 2, sense: 'atMost', signed: false },
+} as const
+export type VerdictKind = keyof typeof verdictKinds
+
+/** A must-have: a limit in its kind's unit, with the reason it is asked for. */
+export type VerdictLimit = { id: string, kind: VerdictKind, value: number, reason: string }
+
+/**
+ * A row's unrounded numbers, each in its kind's unit; null where the row has no such number.
+ * With link cases, margin is the deciding case's (the worst surplus), requiredMargin that case's own
+ * requirement where it has one, and decidingCase its name.
+ */
+export type VerdictValues = Record<VerdictKind, number | null> & { requiredMargin?: number | null, decidingCase?: string | null }
+
+/** One must-have judged: `by` is how much it holds (positive) or fails (negative), in the kind's unit; null when unknown. */
+export type VerdictCheck = { id: string, kind: VerdictKind, passes: boolean, by: number | null, sentence: string }
+
+export type Verdict = { passes: boolean, checks: VerdictCheck[], text: string }
+
+/** A decimal with a true minus sign, and a plus sign where the sign carries meaning. */
+const decimal = (x: number, digits: number, signed: boolean) => {
+  const sign = x < 0 ? '−' : signed ? '+' : ''
+  return `${sign}${Math.abs(x).toFixed(digits)}`
+}
+
+const limitOf = (mustHave: VerdictLimit, values: VerdictValues) =>
+  mustHave.kind === 'margin' ? values.requiredMargin ?? mustHave.value : mustHave.value
+
+const judge = (mustHave: VerdictLimit, values: VerdictValues): VerdictCheck => {
+  const { id, kind } = mustHave
+  const { words, unit, digits, sense, signed } = verdictKinds[kind]
+  const value = values[kind]
+  if (value === null || Number.isNaN(value)) {
+    return { id, kind, passes: false, by: null, sentence: `${words} is not known for this row` }
+  }
+  const limit = limitOf(mustHave, values)
+  const by = sense === 'atLeast' ? value - limit : limit - value
+  const passes = by >= -roundingSlack(limit)
+  // Rounded towards failing: a value just short of its limit never shows as the limit, nor its shortfall as nothing.
+  const shown = decimal((sense === 'atLeast' ? floorToDigits : ceilToDigits)(value, digits), digits, signed)
+  const distance = decimal(passes ? Math.max(0, floorToDigits(by, digits)) : ceilToDigits(-by, digits), digits, false)
+  const where = kind === 'margin' && values.decidingCase ? ` (${values.decidingCase})` : ''
+  const side = passes ? 'to spare' : sense === 'atLeast' ? 'short' : 'over'
+  return { id, kind, passes, by: by === 0 ? 0 : by, sentence: `${words} ${shown} ${unit}${where}, ${distance} ${unit} ${side}` }
+}
+
+/**
+ * Whether a row meets every must-have, on unrounded numbers, in words:
+ * "passes", or "fails R2: net bit rate 16.0 Mbit/s, 4.0 Mbit/s short" with one part for each that fails.
+ * A number that misses its limit by rounding error alone meets it; one that the row does not have fails.
+ * @see methods §7
+ */
+export function verdict(values: VerdictValues, mustHaves: readonly VerdictLimit[]): Verdict {
+  const checks = mustHaves.map(mustHave => judge(mustHave, values))
+  const failing = checks.filter(check => !check.passes)
+  return {
+    passes: failing.length === 0,
+    checks,
+    text: failing.length === 0 ? 'passes' : `fails ${failing.map(check => `${check.id}: ${check.sentence}`).join('; ')}`,
+  }
+}
