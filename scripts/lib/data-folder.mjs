@@ -20,6 +20,15 @@ const reasons = /** @type {Record<string, string>} */ ({
 })
 
 /**
+ * Makes the data folder where there is none.
+ * @param {string} folder absolute
+ * @throws {Refusal} when it cannot be made
+ */
+export function makeDataFolder(folder) {
+  writing(folder, () => mkdirSync(folder, { recursive: true, mode: 0o700 }))
+}
+
+/**
  * Makes the data folder and takes it for this process alone.
  * @param {string} folder absolute
  * @param {string} note what a second start is told about us: our address
@@ -27,10 +36,8 @@ const reasons = /** @type {Record<string, string>} */ ({
  * @throws {Refusal} when it cannot be written, or another start has it
  */
 export function takeDataFolder(folder, note) {
-  const lock = writing(folder, () => {
-    mkdirSync(folder, { recursive: true, mode: 0o700 })
-    return takeLock(join(folder, 'running.lock'), note)
-  })
+  makeDataFolder(folder)
+  const lock = writing(folder, () => takeLock(join(folder, 'running.lock'), note))
   if ('release' in lock) return lock.release
   const { pid, note: address } = lock.holder
   throw new Refusal(`Halfplane already runs on the data folder ${folder} (process ${pid}, ${address}): stop that one, or set HALFPLANE_DATA_DIR and PORT to start another.`)
