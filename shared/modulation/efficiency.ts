@@ -1,7 +1,5 @@
+import { decibels, fromDecibels } from './decibels'
 import { ModulationError } from './errors'
-
-const decibels = (ratio: number) => 10 * Math.log10(ratio)
-const fromDecibels = (db: number) => 10 ** (db / 10)
 
 /**
  * Net bits per symbol R = H − (1−r)·k; r·k for equal probabilities.
@@ -12,9 +10,9 @@ const fromDecibels = (db: number) => 10 ** (db / 10)
  * @see methods §0; Böcherer 2015
  */
 export function netBitsPerSymbol(entropy: number, bitsPerSymbol: number, codeRate: number): number {
-  if (!(codeRate > 0 && codeRate <= 1)) throw new ModulationError('codeRate', 'A code rate is above 0 and up to 1.')
+  if (!(codeRate > 0 && codeRate <= 1)) throw new ModulationError('A code rate is above 0 and up to 1.', ['codeRate'])
   const netBits = entropy - (1 - codeRate) * bitsPerSymbol
-  if (!(netBits > 0)) throw new ModulationError('codeRate', 'This code rate leaves no net bits: it must exceed 1 − H/k.')
+  if (!(netBits > 0)) throw new ModulationError('This code rate leaves no net bits: it must exceed 1 − H/k.', ['codeRate'])
   return netBits
 }
 
@@ -105,10 +103,10 @@ export type Rates = { symbolRateHz: number, occupiedBandwidthHz: number, netBitR
  */
 export function ratesOf({ heldConstant, value }: HeldConstantRate, inputs: RateInputs): Rates {
   const { netBits, dimensions, rollOff, overhead, dimensionsPerInterval } = inputs
-  if (!(value > 0 && value < Infinity)) throw new ModulationError('value', 'What is held constant is a number above 0.')
-  if (!(rollOff >= 0 && rollOff <= 1)) throw new ModulationError('rollOff', 'A roll-off is from 0 to 1.')
-  if (!(overhead >= 0 && overhead < 1)) throw new ModulationError('overhead', 'An overhead is from 0 to below 1.')
-  if (!(netBits > 0)) throw new ModulationError('netBits', 'Net bits per symbol are a number above 0.')
+  if (!(value > 0 && value < Infinity)) throw new ModulationError('What is held constant is a number above 0.', ['value'])
+  if (!(rollOff >= 0 && rollOff <= 1)) throw new ModulationError('A roll-off is from 0 to 1.', ['rollOff'])
+  if (!(overhead >= 0 && overhead < 1)) throw new ModulationError('An overhead is from 0 to below 1.', ['overhead'])
+  if (!(netBits > 0)) throw new ModulationError('Net bits per symbol are a number above 0.', ['netBits'])
   const bandwidthPerRate = dimensions * (1 + rollOff) / dimensionsPerInterval
   const bitsPerSymbol = netBits * (1 - overhead)
   const symbolRateHz = heldConstant === 'symbolRate'

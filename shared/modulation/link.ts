@@ -1,3 +1,4 @@
+import { decibels } from './decibels'
 import { ModulationError } from './errors'
 
 /** Boltzmann constant, J/K: exact since the 2019 definition of the kelvin (CODATA). */
@@ -48,8 +49,8 @@ export type LinkCaseResult = {
  * @see Recommendation ITU-R P.525
  */
 export function freeSpaceLossDb(frequencyGhz: number, distanceKm: number): number {
-  if (!(frequencyGhz > 0 && frequencyGhz < Infinity)) throw new ModulationError('frequencyGhz', 'A frequency is a number above 0 GHz.')
-  if (!(distanceKm > 0 && distanceKm < Infinity)) throw new ModulationError('distanceKm', 'A distance is a number above 0 km.')
+  if (!(frequencyGhz > 0 && frequencyGhz < Infinity)) throw new ModulationError('A frequency is a number above 0 GHz.', ['frequencyGhz'])
+  if (!(distanceKm > 0 && distanceKm < Infinity)) throw new ModulationError('A distance is a number above 0 km.', ['distanceKm'])
   return 20 * (Math.log10(4 * Math.PI * 1e12 / speedOfLight) + Math.log10(frequencyGhz) + Math.log10(distanceKm))
 }
 
@@ -60,8 +61,8 @@ export function freeSpaceLossDb(frequencyGhz: number, distanceKm: number): numbe
  * @throws ModulationError when the temperature is not positive
  */
 export function noiseDensityDbmHz(noiseFigureDb: number, temperatureK = referenceTemperature): number {
-  if (!(temperatureK > 0)) throw new ModulationError('temperatureK', 'A noise temperature is a number above 0 K.')
-  return 10 * Math.log10(boltzmann * temperatureK * 1000) + noiseFigureDb
+  if (!(temperatureK > 0)) throw new ModulationError('A noise temperature is a number above 0 K.', ['temperatureK'])
+  return decibels(boltzmann * temperatureK * 1000) + noiseFigureDb
 }
 
 const lineValue = (line: LinkLine, unit: PowerUnit): number => {
@@ -75,28 +76,32 @@ const lineValue = (line: LinkLine, unit: PowerUnit): number => {
 const signOf = { power: 1, gain: 1, loss: -1, freeSpaceLoss: -1, noiseFigure: 0 } as const
 
 const powerUnitOf = (lines: readonly LinkLine[]): PowerUnit => {
-  const powers = lines.filter(line => line.kind === 'power')
-  const [first] = powers
-  if (!first) throw new ModulationError('lines', 'A link case needs a power line, in dBm or dBW, to start from.')
-  const other = powers.find(line => line.unit !== first.unit)
+  const powers = lines.flatMap((line, index) => line.kind === 'power' ? [{ line, index }] : [])
+  const [first, second] = powers
+  if (!first) throw new ModulationError('A link case needs a power line, in dBm or dBW, to start from.', ['lines'])
+  const other = powers.find(({ line }) => line.unit !== first.line.unit)
   if (other) {
-    throw new ModulationError('lines', `“${first.name}” is in ${first.unit} and “${other.name}” in ${other.unit}: use one unit in a link case.`)
+    const sentence = `“${first.line.name}” is in ${first.line.unit} and “${other.line.name}” in ${other.line.unit}: use one unit in a link case.`
+    throw new ModulationError(sentence, ['lines', other.index, 'unit'])
   }
-  if (powers.length > 1) {
-    throw new ModulationError('lines', `“${powers[1]!.name}” is a second power: a link case has one, and further stages are gains or losses in dB.`)
+  if (second) {
+    const sentence = `“${second.line.name}” is a second power: a link case has one, and further stages are gains or losses in dB.`
+    throw new ModulationError(sentence, ['lines', second.index, 'kind'])
   }
-  return first.unit
+  return first.line.unit
 }
 
 const checkLines = (lines: readonly LinkLine[]) => {
   const noises = lines.filter(line => line.kind === 'noiseFigure').length
-  if (noises !== 1) throw new ModulationError('lines', `A link case has exactly one noise line; this one has ${noises}.`)
-  for (const line of lines) {
-    if (line.kind === 'loss' && line.valueDb < 0) {
-      throw new ModulationError('lines', `“${line.name}” is a loss: enter it positive, it is subtracted.`)
+  if (noises !== 1) throw new ModulationError(`A link case has exactly one noise line; this one has ${noises === 0 ? 'none' : noises}.`, ['lines'])
+  lines.forEach((line, index) => {
+    if (line.kind === 'freeSpaceLoss') return
+    const [field, value] = line.kind === 'noiseFigure' ? ['noiseFigureDb', line.noiseFigureDb] as const : ['valueDb', line.valueDb] as const
+    if (!Number.isFinite(value)) throw new ModulationError(`“${line.name}” is a finite number in dB.`, ['lines', index, field])
+    if (line.kind === 'loss' && value < 0) {
+      throw new ModulationError(`“${line.name}” is a loss: enter it positive, it is subtracted.`, ['lines', index, field])
     }
-    if ('valueDb' in line && !Number.isFinite(line.valueDb)) throw new ModulationError('lines', `“${line.name}” is a number in dB.`)
-  }
+  })
 }
 
 /**
@@ -136,8 +141,8 @@ export function linkCase(lines: readonly LinkLine[]): LinkCaseResult {
  * @see methods §7
  */
 export function availableEsN0Db(cOverN0DbHz: number, symbolRateHz: number, backOffDb: number): number {
-  if (!(symbolRateHz > 0)) throw new ModulationError('symbolRateHz', 'A symbol rate is a number above 0.')
-  return cOverN0DbHz - backOffDb - 10 * Math.log10(symbolRateHz)
+  if (!(symbolRateHz > 0)) throw new ModulationError('A symbol rate is a number above 0.', ['symbolRateHz'])
+  return cOverN0DbHz - backOffDb - decibels(symbolRateHz)
 }
 
 /** Margin in dB: available − required − implementation loss (methods §7). */
@@ -159,6 +164,6 @@ export function surplusDb(margin: number, requiredMarginDb: number): number {
  * @returns dBm (or dBW)
  */
 export function receiverThreshold(noiseDensity: number, symbolRateHz: number, requiredEsN0Db: number, implementationLossDb: number): number {
-  if (!(symbolRateHz > 0)) throw new ModulationError('symbolRateHz', 'A symbol rate is a number above 0.')
-  return noiseDensity + 10 * Math.log10(symbolRateHz) + requiredEsN0Db + implementationLossDb
+  if (!(symbolRateHz > 0)) throw new ModulationError('A symbol rate is a number above 0.', ['symbolRateHz'])
+  return noiseDensity + decibels(symbolRateHz) + requiredEsN0Db + implementationLossDb
 }

@@ -1,0 +1,81 @@
+/** Symbols of unit mean energy as the waveform uses them; im is zero for one dimension. */
+export type Symbols = { order: number, dimensions: number, re: Float64Array, im: Float64Array, probability: Float64Array }
+
+export type Direction = { x: number, y: number }
+
+/** Symbol distributions tilted towards each direction, one a strong tap: rows of `order` cumulative sums. */
+export type TiltedSymbols = {
+  strong: number[]
+  directions: Direction[]
+  tilt: number
+  cumulative: Float64Array
+  /** last cumulative sum of each row, direction by direction */
+  totals: Float64Array
+  /** logarithm of the moment generating function of all strong taps together, one a direction */
+  logMoments: Float64Array
+}
+
+/** Directions that a peak may take: both signs of a real signal, sixteen phases of a carrier. */
+export function directionsOf(dimensions: number): Direction[] {
+  const count = dimensions === 1 ? 2 : 16
+  return Array.from({ length: count }, (_, j) => ({ x: Math.cos(2 * Math.PI * j / count), y: Math.sin(2 * Math.PI * j / count) }))
+}
+
+/** Exponentially tilted distributions p_i·exp(tilt·tap·⟨s_i, u⟩) of the symbol under each strong tap, for each direction u. */
+export function tiltedSymbols(symbols: Symbols, strong: number[], directions: Direction[], tilt: number): TiltedSymbols {
+  const { order, re, im, probability } = symbols
+  const rows = directions.length * strong.length
+  const cumulative = new Float64Array(rows * order)
+  const totals = new Float64Array(rows)
+  const logMoments = new Float64Array(directions.length)
+  directions.forEach((u, j) => strong.forEach((tap, t) => {
+    const row = j * strong.length + t
+    let sum = 0
+    for (let i = 0; i < order; i++) {
+      sum += probability[i]! * Math.exp(tilt * tap * (re[i]! * u.x + im[i]! * u.y))
+      cumulative[row * order + i] = sum
+    }
+    totals[row] = sum
+    logMoments[j]! += Math.log(sum)
+  }))
+  return { strong, directions, tilt, cumulative, totals, logMoments }
+}
+
+/** Rate function tilt·K′ − K of the strong taps' sum in one direction, K its cumulant generating function. */
+const rateAt = ({ order, re, im, probability }: Symbols, strong: number[], u: Direction, tilt: number, stride: number): number => {
+  let rate = 0
+  for (const tap of strong) {
+    let total = 0
+    let mass = 0
+    let first = 0
+    for (let i = 0; i < order; i += stride) {
+      const projection = tilt * tap * (re[i]! * u.x + im[i]! * u.y)
+      const weight = probability[i]! * Math.exp(projection)
+      mass += probability[i]!
+      total += weight
+      first += weight * projection
+    }
+    rate += first / total - Math.log(total / mass)
+  }
+  return rate
+}
+
+/**
+ * Tilt at which the strong taps' sum reaches levels about as rare as the exceedance probability:
+ * where its rate function is −ln of it, which is exact for a Gaussian envelope. It stays within twice
+ * the Gaussian value, so that few-valued sums keep all of their values.
+ */
+export function chooseTilt(symbols: Symbols, strong: number[], directions: Direction[], exceedance: number): number {
+  const target = -Math.log(exceedance)
+  const some = directions.filter((_, j) => j % Math.ceil(directions.length / 4) === 0)
+  const stride = Math.ceil(symbols.order / 64)
+  let low = 0
+  let high = 2 * Math.sqrt(2 * target * symbols.dimensions)
+  for (let step = 0; step < 10; step++) {
+    const middle = (low + high) / 2
+    const rate = some.reduce((sum, u) => sum + rateAt(symbols, strong, u, middle, stride), 0) / some.length
+    if (rate < target) low = middle
+    else high = middle
+  }
+  return (low + high) / 2
+}
