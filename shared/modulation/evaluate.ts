@@ -1,0 +1,91 @@
+import type { Constellation } from './constellation'
+import { paprDb } from './constellation'
+import { fromDecibels } from './decibels'
+import { ModulationError } from './errors'
+import { generate } from './families'
+import type { FamilyId, FamilyParameters } from './families'
+import { analyse } from './geometry'
+import { requiredEsN0Db } from './required-snr'
+import { symbolErrorRates } from './symbol-error'
+import type { SymbolErrorKind } from './symbol-error'
+
+export const evaluationQuantities = Object.keys(symbolErrorRates) as SymbolErrorKind[]
+
+/** What to compute of one constellation, without a study around it. */
+export interface EvaluationRequest {
+  /** a family with its parameters (unit mean energy), or family 'custom' with points, taken as given */
+  constellation: FamilyParameters & { family: string, labels?: string[] | null, probabilities?: number[] | null }
+  /** SNR values, dB */
+  esN0Db: readonly number[]
+  /** left out: no required Es/N0 */
+  target?: { quantity: string, value: number } | null
+  /** left out: union bound, nearest-neighbour approximation and exact SER */
+  quantities?: readonly string[] | null
+}
+
+/** The answer of POST /api/evaluate. */
+export interface Evaluation {
+  order: number
+  dimensions: number
+  bitsPerSymbol: number
+  meanEnergy: number
+  peakEnergy: number
+  paprDb: number
+  minimumDistance: number
+  neighbours: { relevantMean: number, nearestMean: number, relevant: number[][] }
+  curves: { esN0Db: number[] } & Partial<Record<SymbolErrorKind, number[]>>
+  requiredEsN0Db?: Partial<Record<SymbolErrorKind, number>>
+}
+
+const defaultQuantities: SymbolErrorKind[] = ['serUnion', 'serNearest', 'serExact']
+
+/**
+ * Evaluates a constellation: geometry, error-rate curves and required Es/N0.
+ * @throws ModulationError for every input that is not allowed, with its path in the request
+ */
+export function evaluate(request: EvaluationRequest): Evaluation {
+  const quantities = checkedQuantities(request.quantities ?? defaultQuantities)
+  request.esN0Db.forEach((db, n) => {
+    if (!(Math.abs(db) <= 300)) throw new ModulationError('An Es/N0 value is from −300 to 300 dB.', ['esN0Db', n])
+  })
+  const { target } = request
+  if (target && target.quantity !== 'ser') throw new ModulationError('The target is a symbol error rate (ser).', ['target', 'quantity'])
+  const constellation = requestedConstellation(request.constellation)
+  const geometry = analyse(constellation)
+  const n0s = request.esN0Db.map(db => constellation.meanEnergy / fromDecibels(db))
+
+  const curves: Evaluation['curves'] = { esN0Db: [...request.esN0Db] }
+  const required: Partial<Record<SymbolErrorKind, number>> = {}
+  for (const kind of quantities) {
+    curves[kind] = n0s.map(n0 => symbolErrorRates[kind](geometry, n0))
+    if (target) required[kind] = requiredEsN0Db({ geometry, kind }, target.value)
+  }
+  const { offsets, neighbours, relevantMean, nearestMean, minimumDistance } = geometry
+  const { order, dimensions, bitsPerSymbol, meanEnergy, peakEnergy } = constellation
+  return {
+    order, dimensions, bitsPerSymbol, meanEnergy, peakEnergy, paprDb: paprDb(constellation), minimumDistance,
+    neighbours: {
+      relevantMean, nearestMean,
+      relevant: Array.from({ length: order }, (_, i) => [...neighbours.subarray(offsets[i], offsets[i + 1])]),
+    },
+    curves,
+    ...(target ? { requiredEsN0Db: required } : {}),
+  }
+}
+
+function checkedQuantities(quantities: readonly string[]): SymbolErrorKind[] {
+  return quantities.map((quantity, n) => {
+    const known = evaluationQuantities.find(kind => kind === quantity)
+    if (!known) throw new ModulationError(`A quantity is one of ${evaluationQuantities.join(', ')}.`, ['quantities', n])
+    return known
+  })
+}
+
+function requestedConstellation({ family, labels, probabilities, ...parameters }: EvaluationRequest['constellation']): Constellation {
+  try {
+    return generate(family as FamilyId, parameters, { labels, probabilities })
+  } catch (error) {
+    if (error instanceof ModulationError) throw new ModulationError(error.message, ['constellation', ...error.path])
+    throw error
+  }
+}

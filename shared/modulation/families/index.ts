@@ -1,0 +1,45 @@
+import type { Constellation, ConstellationOptions } from '../constellation'
+import { createConstellation } from '../constellation'
+import { ModulationError } from '../errors'
+import { normalise } from '../normalise'
+import { apsk } from './apsk'
+import { crossQam } from './cross-qam'
+import { custom } from './custom'
+import type { Family, FamilyId, FamilyParameters } from './family'
+import { hexagonal } from './hexagonal'
+import { pam } from './pam'
+import { psk } from './psk'
+import { qam } from './qam'
+
+export { apskPresets } from './apsk-presets'
+export type { ApskPreset } from './apsk-presets'
+export type { Family, FamilyId, FamilyParameter, FamilyParameters } from './family'
+
+/** All families. A new one is a file of its own and an entry here. */
+export const families: readonly Family[] = [pam, psk, qam, crossQam, apsk, hexagonal, custom]
+
+/**
+ * The family of an identifier.
+ * @throws ModulationError with path ['family'] for one that does not exist
+ */
+export function familyOf(id: string): Family {
+  const family = families.find(candidate => candidate.id === id)
+  if (!family) throw new ModulationError(`The family is one of ${families.map(({ id }) => id).join(', ')}.`, ['family'])
+  return family
+}
+
+/**
+ * Generates a constellation: unit mean energy, except for custom points, which are taken as given.
+ * @param id the family
+ * @param parameters its parameters; those of other families are ignored
+ * @param options probabilities and labels, in the order of the family's points
+ * @throws ModulationError with the first thing that is wrong
+ * @see methods §12
+ */
+export function generate(id: FamilyId, parameters: FamilyParameters, options: ConstellationOptions = {}): Constellation {
+  const family = familyOf(id)
+  const [issue] = family.validate(parameters)
+  if (issue) throw new ModulationError(issue.message, issue.path)
+  const constellation = createConstellation(family.points(parameters), options)
+  return id === 'custom' ? constellation : normalise(constellation, { normalisation: 'meanEnergy' })
+}

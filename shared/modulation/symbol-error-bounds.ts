@@ -1,0 +1,80 @@
+import type { Constellation } from './constellation'
+import { probabilityOf } from './constellation'
+import { requireNoiseDensity } from './errors'
+import { q } from './gaussian'
+import type { Geometry } from './geometry'
+
+/** A pair whose exponent exceeds the least one by this much adds less than 1e-13 of the sum, were there 4096² such pairs. */
+const negligibleExponent = 48
+
+/**
+ * Probability that a received vector is nearer to another point than to the one sent.
+ * @param distance of the two points, signal units
+ * @param n0 noise density N0 above 0, signal units squared
+ * @throws ModulationError when n0 is not positive and finite
+ * @see methods §2
+ */
+export function pairwiseError(distance: number, n0: number): number {
+  requireNoiseDensity(n0)
+  return q(distance / Math.sqrt(2 * n0))
+}
+
+/**
+ * Mean symbol error rate by the union bound over relevant neighbours.
+ * @param geometry decision regions, from analyse
+ * @param n0 noise density N0 above 0, signal units squared
+ * @returns may exceed 1 at low SNR (it is a bound)
+ * @throws ModulationError when n0 is not positive and finite
+ * @see methods §2; Proakis, Digital Communications, union bound
+ */
+export function serUnionBound(geometry: Geometry, n0: number): number {
+  requireNoiseDensity(n0)
+  const { distance, weight } = geometry.distanceClasses
+  const farthest = farthestOf(geometry.minimumDistance, n0)
+  let sum = 0
+  for (let n = 0; n < distance.length && distance[n]! <= farthest; n++) sum += weight[n]! * q(distance[n]! / Math.sqrt(2 * n0))
+  return sum
+}
+
+/**
+ * Mean symbol error rate by the union bound over all pairs: looser than that over relevant neighbours, for any dimension.
+ * @param constellation M points
+ * @param n0 noise density N0 above 0, signal units squared
+ * @returns may exceed 1 at low SNR
+ * @throws ModulationError when n0 is not positive and finite
+ */
+export function serAllPairs(constellation: Constellation, n0: number): number {
+  requireNoiseDensity(n0)
+  const { order, dimensions, points } = constellation
+  let least = Infinity
+  const square = (i: number, j: number) => {
+    let sum = 0
+    for (let n = 0; n < dimensions; n++) sum += (points[i * dimensions + n]! - points[j * dimensions + n]!) ** 2
+    return sum
+  }
+  let sum = 0
+  for (let i = 0; i < order; i++) {
+    for (let j = 0; j < i; j++) {
+      const s = square(i, j)
+      least = Math.min(least, s)
+      if (s - least > 4 * n0 * negligibleExponent) continue
+      sum += (probabilityOf(constellation, i) + probabilityOf(constellation, j)) * q(Math.sqrt(s / (2 * n0)))
+    }
+  }
+  return sum
+}
+
+/**
+ * Nearest-neighbour approximation Ā·Q(d_min/√(2·N0)); not a bound.
+ * @param geometry decision regions, from analyse
+ * @param n0 noise density N0 above 0, signal units squared
+ * @throws ModulationError when n0 is not positive and finite
+ * @see methods §2
+ */
+export function serNearest(geometry: Geometry, n0: number): number {
+  return geometry.nearestMean * pairwiseError(geometry.minimumDistance, n0)
+}
+
+function farthestOf(minimumDistance: number, n0: number): number {
+  return Math.sqrt(minimumDistance ** 2 + 4 * n0 * negligibleExponent)
+}
