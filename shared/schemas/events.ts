@@ -12,5 +12,7 @@ export const studyEvent = z.object({
   /** name, requirements, members or state changed: fetch the study again */
   study: z.literal(true).optional(),
   sweep: sweep.optional(),
+  /** more changed than is kept or than is worth sending: load all rows and sweeps again */
+  reload: z.literal(true).optional(),
 })
 export type StudyEvent = z.infer<typeof studyEvent>
