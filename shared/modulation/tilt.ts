@@ -15,9 +15,9 @@ export type TiltedSymbols = {
   logMoments: Float64Array
 }
 
-/** Directions that a peak may take: both signs of a real signal, sixteen phases of a carrier. */
+/** Directions that a peak may take: both signs of a real signal, twelve phases of a carrier. */
 export function directionsOf(dimensions: number): Direction[] {
-  const count = dimensions === 1 ? 2 : 16
+  const count = dimensions === 1 ? 2 : 12
   return Array.from({ length: count }, (_, j) => ({ x: Math.cos(2 * Math.PI * j / count), y: Math.sin(2 * Math.PI * j / count) }))
 }
 

@@ -26,8 +26,8 @@ type Instants = { power: Float64Array, weight: Float64Array }
 
 /** Symbols on either side of an instant that the pulse reaches. */
 const halfLength = 16
-/** Taps below this add less than 0.5 % of the energy each and are drawn as they are, untilted. */
-const strongTap = 0.07
+/** Taps below this add at most 0.25 % of the energy each and are drawn as they are, untilted. */
+const strongTap = 0.05
 
 const symbolsOf = (constellation: Pick<Constellation, 'order' | 'dimensions' | 'points' | 'probabilities' | 'meanEnergy'>): Symbols => {
   const { order, dimensions, points, probabilities, meanEnergy } = constellation
@@ -44,6 +44,12 @@ const symbolsOf = (constellation: Pick<Constellation, 'order' | 'dimensions' | '
   return { order, dimensions, re, im, probability }
 }
 
+const cumulativeOf = (probabilities: Float64Array): Float64Array => {
+  const cumulative = probabilities.slice()
+  for (let i = 1; i < cumulative.length; i++) cumulative[i]! += cumulative[i - 1]!
+  return cumulative
+}
+
 /** First index whose cumulative sum exceeds the level, in the row that starts at `start`. */
 const indexAt = (cumulative: Float64Array, start: number, order: number, level: number): number => {
   let low = start
@@ -58,7 +64,7 @@ const indexAt = (cumulative: Float64Array, start: number, order: number, level: 
 
 /** Draws one stratum: instants at one offset in the symbol interval, tilted towards one direction. */
 const drawStratum = (
-  symbols: Symbols, tilted: TiltedSymbols, direction: number, weak: number[], own: Float64Array, random: Random,
+  symbols: Symbols, tilted: TiltedSymbols, direction: number, weak: number[], own: Float64Array | null, random: Random,
   into: Instants, from: number, count: number,
 ) => {
   const { order, re, im } = symbols
@@ -77,8 +83,9 @@ const drawStratum = (
     for (let j = 0; j < directions.length; j++) {
       likelihood += Math.exp(tilt * (x * directions[j]!.x + y * directions[j]!.y) - logMoments[j]!)
     }
-    for (const tap of weak) {
-      const i = indexAt(own, 0, order, random() * own[order - 1]!)
+    for (let t = 0; t < weak.length; t++) {
+      const tap = weak[t]!
+      const i = own ? indexAt(own, 0, order, random() * own[order - 1]!) : Math.floor(random() * order)
       x += tap * re[i]!
       y += tap * im[i]!
     }
@@ -103,9 +110,9 @@ const tailAbove = ({ power, weight }: Instants, level: number): { probability: n
 
 /** Power in dB exceeded with the given probability; the estimated tail is a falling staircase, so halving finds it. */
 const levelDbAt = (instants: Instants, probability: number): number => {
-  let low = -60
-  let high = 60
-  for (let step = 0; step < 40; step++) {
+  let low = -20
+  let high = 40
+  for (let step = 0; step < 30; step++) {
     const middle = (low + high) / 2
     if (tailAbove(instants, fromDecibels(middle)).probability > probability) low = middle
     else high = middle
@@ -142,8 +149,7 @@ export function shapedBackOffDb(
   const count = Math.ceil(instants / (offsets.length * directions.length))
   const total = count * offsets.length * directions.length
   const drawn: Instants = { power: new Float64Array(total), weight: new Float64Array(total) }
-  const own = symbols.probability.slice()
-  for (let i = 1; i < own.length; i++) own[i]! += own[i - 1]!
+  const own = constellation.probabilities ? cumulativeOf(constellation.probabilities) : null
   let meanPower = 0
   offsets.forEach(({ strong, weak }, o) => {
     const tilted = tiltedSymbols(symbols, strong, directions, tilt)
