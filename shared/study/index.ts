@@ -1,0 +1,11 @@
+/** What browser and server know about the rows of a study. */
+export { canonicalInputs } from './canonical-inputs'
+export type { CanonicalBackOff, CanonicalInputs } from './canonical-inputs'
+export { canonicalStudy, requiredMarginOf } from './canonical-study'
+export type { CanonicalCase, CanonicalStudy } from './canonical-study'
+export { describeCandidate } from './describe-candidate'
+export { expandSweep, mostSweepRows } from './expand-sweep'
+export type { SweepPlan } from './expand-sweep'
+export { familyOfRow, familyParameters } from './family-parameters'
+export { inputIssues } from './input-issues'
+export { snrGrid, valuesOfRange } from './snr-grid'

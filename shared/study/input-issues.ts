@@ -1,0 +1,67 @@
+import type { CandidateField, CandidateInputs } from '../schemas/candidates'
+import type { Issue } from '../schemas/common'
+import { familyOfRow, familyParameters } from './family-parameters'
+import { mostValues, valuesOfRange } from './snr-grid'
+
+const fieldOf: Partial<Record<string, CandidateField>> = { phases: 'phasesDeg' }
+
+const at = (path: CandidateField, message: string): Issue => ({ path, message })
+
+/** What is wrong with the parameters of a row's family. */
+export function constellationIssues(inputs: CandidateInputs): Issue[] {
+  const family = familyOfRow(inputs)
+  if (!family) return []
+  const issues = family.validate(familyParameters(inputs)).map(({ path: [field, ...rest], message }) => ({
+    path: [fieldOf[String(field)] ?? field, ...rest].join('.'), message,
+  }))
+  const beyondPlane = inputs.family === 'custom' && (inputs.points?.some(point => point.length > 2) ?? false)
+  return issues.length > 0 || !beyondPlane ? issues : [at('points', 'Points of 3 or more coordinates are not offered so far: enter 1 or 2.')]
+}
+
+function basisIssues(inputs: CandidateInputs): Issue[] {
+  if (inputs.family === 'entered') {
+    return [
+      ...inputs.basis === 'entered' ? [] : [at('basis', 'An entered scheme has the basis entered.')],
+      ...inputs.enteredEsN0Db === null ? [at('enteredEsN0Db', 'Enter the required Es/N0 of this scheme, from −60 to 120 dB.')] : [],
+      ...inputs.enteredNetBits === null ? [at('enteredNetBits', 'Enter the net bits per symbol of this scheme, above 0 and up to 64.')] : [],
+    ]
+  }
+  if (inputs.basis === 'entered') {
+    return inputs.enteredEsN0Db === null ? [at('enteredEsN0Db', 'The basis is entered: enter the required Es/N0, from −60 to 120 dB.')] : []
+  }
+  return inputs.codeRate < 1
+    ? [at('codeRate', 'A code rate below 1 with an uncoded basis is refused: it would charge for the code and credit nothing. Use 1, or the basis entered.')]
+    : []
+}
+
+function backOffIssues(inputs: CandidateInputs): Issue[] {
+  if (inputs.family === 'entered' && inputs.backOff !== 'entered') {
+    return [at('backOff', 'An entered scheme has an entered back-off: there are no points to find one from.')]
+  }
+  return inputs.backOff === 'entered' && inputs.backOffDb === null ? [at('backOffDb', 'Enter the back-off, from 0 to 60 dB.')] : []
+}
+
+function rangeIssues({ snrStart, snrStop, snrStep }: CandidateInputs): Issue[] {
+  if (snrStop < snrStart) return [at('snrStop', 'The SNR range runs backwards: its stop is at or above its start.')]
+  return valuesOfRange(snrStart, snrStop, snrStep) > mostValues
+    ? [at('snrStep', 'An SNR range has at most 1,001 values: enter a larger step or a shorter range.')]
+    : []
+}
+
+/** Contradictions between a row's inputs other than its family's parameters. */
+export function settingIssues(inputs: CandidateInputs): Issue[] {
+  const spacingMissing = inputs.family !== 'entered' && inputs.normalisation === 'minimumDistance' && inputs.spacing === null
+  return [
+    ...spacingMissing ? [at('spacing', 'Enter the spacing, the minimum distance in signal units, from 1e-9 to 1e9.')] : [],
+    ...basisIssues(inputs), ...backOffIssues(inputs), ...rangeIssues(inputs),
+  ]
+}
+
+/**
+ * Contradictions within a row, each at the field to change, with a sentence that says what is allowed.
+ * The limits of single fields are the schema's (candidateInputs) and hold already.
+ * @returns empty when the row can be computed
+ */
+export function inputIssues(inputs: CandidateInputs): Issue[] {
+  return [...constellationIssues(inputs), ...settingIssues(inputs)]
+}
