@@ -1,6 +1,6 @@
 import { randomBytes } from 'node:crypto'
-import { linkSync, mkdirSync, readFileSync, rmSync, writeFileSync } from 'node:fs'
-import { join } from 'node:path'
+import { linkSync, mkdirSync, readFileSync, rmSync, statSync, writeFileSync } from 'node:fs'
+import { dirname, join } from 'node:path'
 import process from 'node:process'
 import { takeLock } from './lock.mjs'
 import { Refusal, codeOf } from './say.mjs'
@@ -15,6 +15,7 @@ const reasons = /** @type {Record<string, string>} */ ({
   EPERM: 'this account may not write there',
   EROFS: 'the file system is read-only',
   ENOSPC: 'the disk is full',
+  ENOENT: 'it cannot be made there',
   ENOTDIR: 'a part of its path is a file',
   EEXIST: 'there is a file of that name',
 })
@@ -25,7 +26,22 @@ const reasons = /** @type {Record<string, string>} */ ({
  * @throws {Refusal} when it cannot be made
  */
 export function makeDataFolder(folder) {
-  writing(folder, () => mkdirSync(folder, { recursive: true, mode: 0o700 }))
+  writing(folder, () => makeFolder(folder))
+}
+
+/**
+ * Node's own recursive form never ends where the system refuses with ENOENT, as /proc does.
+ * @param {string} folder
+ */
+function makeFolder(folder) {
+  if (statSync(folder, { throwIfNoEntry: false })?.isDirectory()) return
+  if (dirname(folder) !== folder) makeFolder(dirname(folder))
+  try {
+    mkdirSync(folder, { mode: 0o700 })
+  } catch (thrown) {
+    // Another start may have been quicker.
+    if (codeOf(thrown) !== 'EEXIST' || !statSync(folder).isDirectory()) throw thrown
+  }
 }
 
 /**
