@@ -1,0 +1,25 @@
+/**
+ * A number with all its digits as people write it: a true minus sign, and a power of ten only where it is far from 1.
+ * @param value finite
+ */
+export function decimalText(value: number): string {
+  return String(Number(value.toPrecision(15))).replaceAll('-', '−').replace('e+', 'e')
+}
+
+/**
+ * The number that a text stands for, or null. Takes a true minus sign for a hyphen.
+ * Never guesses about commas: "1,5" might be one and a half or a list.
+ */
+export function readNumber(text: string): number | null {
+  const plain = text.trim().replaceAll('−', '-').replaceAll(/[\u00a0\u202f ]/g, '')
+  if (!/^[+-]?(\d+\.?\d*|\.\d+)(e[+-]?\d+)?$/i.test(plain)) return null
+  const value = Number(plain)
+  return Number.isFinite(value) ? value : null
+}
+
+/** A decimal of fixed digits with a true minus sign; `signed` writes the plus as well. */
+export function fixedText(value: number, digits: number, signed = false): string {
+  const text = Math.abs(value).toFixed(digits)
+  const sign = value < 0 && Number(text) !== 0 ? '−' : signed ? '+' : ''
+  return `${sign}${text}`
+}
