@@ -1,0 +1,50 @@
+import { ceilToDigits, floorToDigits } from '../modulation/rounding'
+
+/**
+ * How a number is shown: decimals after the point, a plus sign where the sign carries meaning,
+ * powers of ten for probabilities, a fraction for code rates, or as many digits as it has.
+ */
+export type NumberFormat = '0.00' | '+0.00' | '0.0' | '0.000' | '0.00e-0' | 'integer' | 'fraction' | 'plain'
+/** Margins round down, so that no row looks better than it is. */
+export type Rounding = 'nearest' | 'down' | 'up'
+
+const trueMinus = (text: string) => text.replace(/-/g, '−')
+
+const decimals: Partial<Record<NumberFormat, number>> = { '0.00': 2, '+0.00': 2, '0.0': 1, '0.000': 3, 'integer': 0 }
+
+const exponent = (value: number) => {
+  const [digits = '0', power = '0'] = value.toExponential(2).split('e')
+  return trueMinus(`${digits}e${Number(power)}`)
+}
+
+/** A fraction of small whole numbers where the value is one within 1e-9, such as 3/4 or 9/10; else its decimals. */
+function fraction(value: number): string {
+  for (let below = 1; below <= 64; below++) {
+    const above = Math.round(value * below)
+    if (Math.abs(value - above / below) < 1e-9) return below === 1 ? plain(above) : trueMinus(`${above}/${below}`)
+  }
+  return plain(value)
+}
+
+/** Every digit that a number has, with a true minus sign: what copying a cell gives. */
+export function plain(value: number): string {
+  return trueMinus(String(Object.is(value, -0) ? 0 : value))
+}
+
+/**
+ * A number as a cell shows it.
+ * @param value in the column's unit; infinities show as ∞
+ * @param round down for margins: the largest shown decimal that is not above the value
+ */
+export function formatNumber(value: number, format: NumberFormat, round: Rounding = 'nearest'): string {
+  if (Number.isNaN(value)) return ''
+  if (!Number.isFinite(value)) return value > 0 ? '∞' : '−∞'
+  if (format === '0.00e-0') return exponent(value)
+  if (format === 'fraction') return fraction(value)
+  const digits = decimals[format]
+  if (digits === undefined) return plain(value)
+  const rounded = round === 'down' ? floorToDigits(value, digits) : round === 'up' ? ceilToDigits(value, digits) : value
+  const text = Math.abs(rounded).toFixed(digits)
+  const negative = rounded < 0 && Number(text) !== 0
+  return `${negative ? '−' : format.startsWith('+') ? '+' : ''}${text}`
+}

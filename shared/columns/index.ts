@@ -1,0 +1,88 @@
+import * as candidate from './candidate-columns'
+import * as error from './error-columns'
+import * as geometry from './geometry-columns'
+import * as link from './link-columns'
+import * as rate from './rate-columns'
+import * as required from './required-columns'
+import * as signal from './signal-columns'
+import * as verdict from './verdict-columns'
+import type { Column } from './column'
+
+export { columnGroups, headerOf, whyOf } from './column'
+export type { CellValue, Column, ColumnContext, ColumnGroup, ComputedColumn, Entry, InputColumn, Why } from './column'
+export { formatNumber, plain } from './format'
+export type { NumberFormat, Rounding } from './format'
+
+/**
+ * Every column of the grid, of exports and of the Methods page, in the order in which they stand.
+ * A new one is an entry of its subject's file and a line here.
+ */
+export const columns: readonly Column[] = [
+  candidate.name,
+  verdict.verdict,
+  verdict.surplus,
+  candidate.family,
+  candidate.order,
+  candidate.rings,
+  candidate.codeRate,
+  candidate.basis,
+  required.requiredEsN0,
+  required.delta,
+  required.requiredEbN0,
+  link.papr,
+  link.backOffValue,
+  link.availableEsN0,
+  link.receiverThreshold,
+  rate.spectralEfficiency,
+  rate.netRate,
+  geometry.minimumDistance,
+  geometry.nearestMean,
+  geometry.relevantMean,
+  error.serUnion,
+  error.serNearest,
+  error.serExact,
+  required.boundPenalty,
+  signal.snrRange,
+  candidate.note,
+
+  candidate.role,
+  candidate.roleReason,
+  candidate.phases,
+  verdict.margin,
+  verdict.requiredMargin,
+  verdict.decidingCase,
+  required.requiredEpkN0,
+  required.requiredUnion,
+  required.requiredAllPairs,
+  required.requiredNearest,
+  required.gapToCapacity,
+  required.evm,
+  required.enteredEsN0,
+  required.enteredNetBits,
+  required.enteredSource,
+  link.backOff,
+  link.backOffDb,
+  link.exceedance,
+  link.backOffError,
+  link.availableEbN0,
+  link.implementationLoss,
+  rate.symbolRate,
+  rate.occupiedBandwidth,
+  rate.netBits,
+  rate.bitsPerSymbol,
+  rate.rollOff,
+  geometry.asymptoticEfficiency,
+  geometry.dimensions,
+  error.serAllPairs,
+  signal.normalisation,
+  signal.spacing,
+  signal.points,
+  signal.meanEnergy,
+  signal.peakEnergy,
+  signal.signalDistance,
+]
+
+const byId = new Map(columns.map(column => [column.id, column]))
+
+/** The column of an id; undefined for one that does not exist, such as from an older saved set. */
+export const columnOf = (id: string): Column | undefined => byId.get(id)

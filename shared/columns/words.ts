@@ -1,0 +1,16 @@
+import { families } from '../modulation/families'
+import { backOffs, bases, normalisations, roles } from '../schemas/candidates'
+
+export type Choice = { value: string, title: string }
+
+const titled = <T extends string>(values: readonly T[], titles: Record<T, string>): Choice[] =>
+  values.map(value => ({ value, title: titles[value] }))
+
+export const familyChoices: readonly Choice[] = [
+  ...families.map(family => ({ value: family.id, title: family.title })),
+  { value: 'entered', title: 'entered' },
+]
+export const normalisationChoices = titled(normalisations, { meanEnergy: 'mean energy', peakEnergy: 'peak energy', minimumDistance: 'minimum distance' })
+export const basisChoices = titled(bases, { uncoded: 'uncoded', entered: 'entered' })
+export const backOffChoices = titled(backOffs, { simulated: 'simulated', entered: 'entered', papr: 'PAPR alone' })
+export const roleChoices = titled(roles, { reference: 'reference', chosen: 'chosen', fallback: 'fallback', rejected: 'rejected' })

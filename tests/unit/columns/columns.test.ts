@@ -1,0 +1,45 @@
+import { describe, expect, it } from 'vitest'
+import { columnOf, columns, headerOf, whyOf } from '../../../shared/columns'
+import { candidateChange, candidateInputs } from '../../../shared/schemas/candidates'
+import { sampleRow } from './sample-row'
+
+const row = sampleRow({})
+const context = { reference: sampleRow({ requiredEsN0Db: 20.5 }), requirements: null }
+
+describe('the columns', () => {
+  it('have ids of their own', () => expect(new Set(columns.map(c => c.id)).size).toBe(columns.length))
+  it('open as the Candidates page is described', () => expect(columns.filter(c => c.firstOpening).map(headerOf)).toEqual([
+    'Name', 'Verdict', 'Surplus, dB', 'Family', 'M', 'Rings/ratios', 'r', 'Basis', 'Required Es/N0, dB', 'Δ to reference, dB',
+    'Required Eb/N0, dB', 'PAPR, dB', 'Back-off, dB', 'Available Es/N0, dB', 'Receiver threshold, dBm', 'η, bit/s/Hz', 'Net rate, Mbit/s',
+    'Minimum distance at Es = 1', 'Mean nearest neighbours', 'Mean relevant neighbours', 'SER at available, bound',
+    'SER at available, approximation', 'SER at available, exact', 'Bound penalty, dB', 'SNR range, dB', 'Note',
+  ]))
+  it('make every input enterable', () => {
+    const entered = new Set(columns.flatMap(c => c.kind === 'input' ? c.fields : []))
+    expect(Object.keys(candidateInputs.shape).filter(field => !entered.has(field as 'name'))).toEqual([])
+  })
+  it.each(columns.flatMap(c => c.kind === 'input' && c.type !== 'points' ? [c] : []))('reads back what $id shows', (column) => {
+    const entry = column.parse(column.text(row.inputs))
+    if ('refused' in entry) throw new Error(entry.refused)
+    const changed = candidateChange.parse(entry.change)
+    for (const field of column.fields) if (field in changed) expect(changed[field]).toEqual(row.inputs[field])
+  })
+  it.each(columns.filter(c => c.kind === 'computed'))('explains $id', (column) => {
+    expect(whyOf(column, row, context)?.lines.join(' ')).toMatch(/\S/)
+  })
+})
+
+describe('values of columns', () => {
+  it('take the reference off in Δ', () => expect(columnOf('delta')?.value(row, context)).toBeCloseTo(0.42, 12))
+  it('have no Δ without a reference', () => expect(columnOf('delta')?.value(row, { ...context, reference: null })).toBeNull())
+  it('show the net rate in Mbit/s', () => expect(columnOf('netRate')?.value(row, context)).toBeCloseTo(21.28, 12))
+  it('count the points of an APSK set', () => {
+    const apsk = sampleRow({ order: 16 }, { family: 'apsk', order: 4, rings: [4, 12], ratios: [2.57] })
+    expect(columnOf('order')?.value(apsk, context)).toBe(16)
+  })
+  it('show rings and ratios of APSK only', () => expect(columnOf('rings')?.value(row, context)).toBeNull())
+  it('put the row\'s numbers into the margin', () => {
+    expect(whyOf(columnOf('margin')!, row, context)?.lines).toEqual(['23.28 dB − 20.92 dB − 1.50 dB = +0.86 dB'])
+  })
+  it('explain nothing while a row is computed', () => expect(whyOf(columnOf('margin')!, { ...row, values: null }, context)).toBeNull())
+})

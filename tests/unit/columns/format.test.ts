@@ -1,0 +1,20 @@
+import { describe, expect, it } from 'vitest'
+import { formatNumber, plain } from '../../../shared/columns/format'
+
+describe('numbers as cells show them', () => {
+  it('writes a true minus sign', () => expect(formatNumber(-1.76, '0.00')).toBe('−1.76'))
+  it('writes a plus sign where the sign carries meaning', () => expect(formatNumber(1.5, '+0.00')).toBe('+1.50'))
+  it('writes no minus sign before a zero', () => expect(formatNumber(-0.001, '0.00')).toBe('0.00'))
+  it('rounds a margin down', () => expect(formatNumber(1.087, '+0.00', 'down')).toBe('+1.08'))
+  it('rounds a negative margin down, away from zero', () => expect(formatNumber(-0.141, '+0.00', 'down')).toBe('−0.15'))
+  it('keeps a margin that is a decimal but for rounding error', () => expect(formatNumber(1.1 - 1e-15, '+0.00', 'down')).toBe('+1.10'))
+  it('rounds a threshold up', () => expect(formatNumber(-80.51, '0.0', 'up')).toBe('−80.5'))
+  it('writes probabilities in powers of ten', () => expect(formatNumber(1.234e-6, '0.00e-0')).toBe('1.23e−6'))
+  it('writes a positive power without a sign', () => expect(formatNumber(3, '0.00e-0')).toBe('3.00e0'))
+  it('writes a code rate as a fraction', () => expect(formatNumber(0.9, 'fraction')).toBe('9/10'))
+  it('writes code rate 1 as 1', () => expect(formatNumber(1, 'fraction')).toBe('1'))
+  it('writes a code rate that is no small fraction in decimals', () => expect(formatNumber(0.7071, 'fraction')).toBe('0.7071'))
+  it('writes infinity as a sign', () => expect(formatNumber(-Infinity, '0.00')).toBe('−∞'))
+  it('writes nothing for what is no number', () => expect(formatNumber(NaN, '0.00')).toBe(''))
+  it('keeps every digit of a copied value', () => expect(plain(-20.918273645)).toBe('−20.918273645'))
+})
