@@ -8,6 +8,7 @@ import { analyse } from './geometry'
 import { requiredEsN0Db } from './required-snr'
 import { symbolErrorRates } from './symbol-error'
 import type { SymbolErrorKind } from './symbol-error'
+import { serExactCurve } from './symbol-error-exact'
 
 export const evaluationQuantities = Object.keys(symbolErrorRates) as SymbolErrorKind[]
 
@@ -57,7 +58,7 @@ export function evaluate(request: EvaluationRequest): Evaluation {
   const curves: Evaluation['curves'] = { esN0Db: [...request.esN0Db] }
   const required: Partial<Record<SymbolErrorKind, number>> = {}
   for (const kind of quantities) {
-    curves[kind] = n0s.map(n0 => symbolErrorRates[kind](geometry, n0))
+    curves[kind] = kind === 'serExact' ? [...serExactCurve(geometry, n0s)] : n0s.map(n0 => symbolErrorRates[kind](geometry, n0))
     if (target) required[kind] = requiredEsN0Db({ geometry, kind }, target.value)
   }
   const { offsets, neighbours, relevantMean, nearestMean, minimumDistance } = geometry

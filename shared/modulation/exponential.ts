@@ -17,7 +17,8 @@ const powers = Float64Array.from({ length: 1 - lowestExponent }, (_, i) => 2 ** 
  */
 export function expNegative(x: number): number {
   if (!(x > -708)) return Number.isNaN(x) ? x : 0
-  const n = Math.round(x * stepsPerUnit)
+  // Truncation rounds to the nearest here, as x is not positive.
+  const n = (x * stepsPerUnit - 0.5) | 0
   const r = (x - n * high) - n * low
   const polynomial = 1 + r * (1 + r * (1 / 2 + r * (1 / 6 + r * (1 / 24 + r * (1 / 120)))))
   return powers[(n >> 6) - lowestExponent]! * (fractions[n & 63]! * polynomial)

@@ -1,37 +1,46 @@
 import { requireNoiseDensity } from './errors'
+import { expNegative } from './exponential'
 import type { Geometry } from './geometry'
-import { pieceError } from './symbol-error-edge'
+import { PieceIntegral } from './symbol-error-edge'
 
 /** Pieces that together cannot reach this part of the sum are left out. */
 const negligible = 1e-12
 
+/** One for the module: calls do not overlap, and each takes up its pieces anew. */
+const integral = new PieceIntegral()
+
 /**
- * Exact mean symbol error rate of minimum-distance decisions for one or two dimensions.
+ * Exact mean symbol error rates of minimum-distance decisions over many noise densities, for one or two dimensions.
  * @param geometry decision regions, from analyse
- * @param n0 noise density N0 above 0, signal units squared
- * @returns probability; relative error below 1e-9 from 0.9 down to 1e-30
- * @throws ModulationError when n0 is not positive and finite
+ * @param n0s noise densities N0 above 0, signal units squared
+ * @returns one probability for each of n0s; relative error below 1e-9 from 0.9 down to 1e-30
+ * @throws ModulationError when one is not positive and finite
  * @see methods §2; Craig 1991
  */
-export function serExact(geometry: Geometry, n0: number): number {
-  requireNoiseDensity(n0)
+export function serExactCurve(geometry: Geometry, n0s: ArrayLike<number>): Float64Array {
   const { h, a, b, reach, weight, remaining } = geometry.pieces
-  let sum = 0
-  for (let n = 0; n < h.length; n++) {
+  const sums = new Float64Array(n0s.length)
+  let open = Array.from(n0s, (n0, s) => {
+    requireNoiseDensity(n0)
+    return s
+  })
+  for (let n = 0; n < h.length && open.length > 0; n++) {
     // A wedge holds at most ½·exp(−(least distance)²/N0), and later pieces are farther away.
-    if (remaining[n]! * Math.exp(-reach[n]! / n0) / 2 <= negligible * sum) break
-    sum += weight[n]! * pieceError(h[n]!, a[n]!, b[n]!, n0)
+    open = open.filter(s => remaining[n]! * expNegative(-reach[n]! / n0s[s]!) > 2 * negligible * sums[s]!)
+    integral.take(h[n]!, a[n]!, b[n]!)
+    for (const s of open) sums[s]! += weight[n]! * integral.at(n0s[s]!)
   }
-  return sum
+  return sums
 }
 
 /**
- * Exact mean symbol error rates over many noise densities.
- * @returns one probability for each of n0s
- * @throws ModulationError when one is not positive and finite
+ * Exact mean symbol error rate of minimum-distance decisions at one noise density; as serExactCurve.
+ * @param geometry decision regions, from analyse
+ * @param n0 noise density N0 above 0, signal units squared
+ * @throws ModulationError when n0 is not positive and finite
  */
-export function serExactCurve(geometry: Geometry, n0s: ArrayLike<number>): Float64Array {
-  return Float64Array.from(n0s, n0 => serExact(geometry, n0))
+export function serExact(geometry: Geometry, n0: number): number {
+  return serExactCurve(geometry, [n0])[0]!
 }
 
 /**
@@ -58,4 +67,9 @@ function edgeError(h: number, t1: number, t2: number, n0: number): number {
   if (t1 >= 0) return pieceError(h, t1, t2, n0)
   if (t2 <= 0) return pieceError(h, -t2, -t1, n0)
   return pieceError(h, 0, t2, n0) + pieceError(h, 0, -t1, n0)
+}
+
+function pieceError(h: number, a: number, b: number, n0: number): number {
+  integral.take(h, a, b)
+  return integral.at(n0)
 }
