@@ -6,7 +6,7 @@ import { startMariadb } from './mariadb.mjs'
  * The embedded parts in a data folder that this process has taken: secrets and database.
  * @typedef {object} Embedded
  * @property {string} sessionPassword
- * @property {NodeJS.ProcessEnv} env what the server has to know about the database
+ * @property {{ DATABASE_URL: string, DATABASE_ADMIN_URL: string, HALFPLANE_DEMO: string }} env what the server has to know about the database
  */
 
 /**

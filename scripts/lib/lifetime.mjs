@@ -7,7 +7,7 @@ import { sentenceOf } from './say.mjs'
  * @typedef {object} Lifetime
  * @property {(close: () => unknown) => () => void} closing registers what has to be closed at the end (last in, first out);
  *   the answer takes it off the list
- * @property {(code: number, sentence?: string) => Promise<never>} end closes everything once and exits
+ * @property {(code: number, sentence?: string) => Promise<never>} end closes everything once and exits; a part of a life only says the sentence
  * @property {() => void} settled from here on a signal is the normal way to end: exit code 0
  * @property {boolean} ending whether the end has begun
  */
@@ -48,6 +48,32 @@ export function beginLifetime() {
 }
 
 /**
+ * A part of a process's life, for a test run or a measurement inside a process that others govern: it installs nothing and exits nothing.
+ * @returns {Lifetime & { close: () => Promise<void> }}
+ */
+export function beginPart() {
+  /** @type {Set<() => unknown>} */
+  const closers = new Set()
+  const part = {
+    ending: false,
+    closing(/** @type {() => unknown} */ close) {
+      closers.add(close)
+      return () => closers.delete(close)
+    },
+    end(/** @type {number} */ code, /** @type {string | undefined} */ sentence) {
+      if (!part.ending) process.stderr.write(`${sentence}\n`)
+      return /** @type {Promise<never>} */ (new Promise(() => {}))
+    },
+    settled() {},
+    async close() {
+      part.ending = true
+      await closeEach(closers)
+    },
+  }
+  return part
+}
+
+/**
  * Runs a command's body; what it throws becomes one sentence and exit code 1.
  * @param {(lifetime: Lifetime) => Promise<unknown>} body
  */
@@ -69,6 +95,14 @@ export async function command(body) {
  */
 async function closeAll(closers, code, sentence) {
   if (sentence) process.stderr.write(`${sentence}\n`)
+  await closeEach(closers)
+  process.exit(code)
+}
+
+/**
+ * @param {Set<() => unknown>} closers last in, first out
+ */
+async function closeEach(closers) {
   for (const close of [...closers].reverse()) {
     try {
       await close()
@@ -76,7 +110,6 @@ async function closeAll(closers, code, sentence) {
       process.stderr.write(`${sentenceOf(thrown)}\n`)
     }
   }
-  process.exit(code)
 }
 
 /**

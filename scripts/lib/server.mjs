@@ -38,12 +38,13 @@ export function serverEnv({ host, port, dataDir, sessionPassword, env }) {
  * @param {import('./lifetime.mjs').Lifetime | undefined} lifetime its end stops the server
  * @param {string} entry built server's entry
  * @param {NodeJS.ProcessEnv} env whole environment, from serverEnv
+ * @param {number | 'inherit'} [output] where its words go
  * @returns {Promise<Server>}
  * @throws {Refusal} when it ends before that
  */
-export async function startServer(lifetime, entry, env) {
+export async function startServer(lifetime, entry, env, output = 'inherit') {
   const url = localUrl(env.HOST ?? '', Number(env.PORT))
-  const child = spawnTied(process.execPath, [entry], { cwd: root, env })
+  const child = spawnTied(process.execPath, [entry], { cwd: root, env, stdio: ['ignore', output, output] })
   lifetime?.closing(() => child.stop(2100))
   say('Starting the server …')
   await untilHealthy(child, url)
