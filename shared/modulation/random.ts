@@ -2,23 +2,11 @@
 export type Random = () => number
 
 /**
- * Seeded generator xoshiro128**, its state filled by SplitMix32: the same seed gives the same numbers everywhere.
- * @param seed any integer; its low 32 bits count
- * @see Blackman and Vigna, Scrambled linear pseudorandom number generators, 2021
+ * Generator xoshiro128** from its state of four 32-bit words, not all zero.
+ * @returns a function whose every call gives the next whole number from 0 to 2³² − 1
+ * @see Blackman and Vigna, Scrambled linear pseudorandom number generators, ACM Trans. Math. Softw. 47 (2021)
  */
-export function seededRandom(seed: number): Random {
-  let mix = seed | 0
-  const split = () => {
-    mix = mix + 0x9E3779B9 | 0
-    let z = mix ^ mix >>> 16
-    z = Math.imul(z, 0x21F0AAAD)
-    z = Math.imul(z ^ z >>> 15, 0x735A2D97)
-    return z ^ z >>> 15
-  }
-  let a = split()
-  let b = split()
-  let c = split()
-  let d = split()
+export function xoshiro128(a: number, b: number, c: number, d: number): () => number {
   return () => {
     const scrambled = Math.imul(b, 5)
     const result = Math.imul(scrambled << 7 | scrambled >>> 25, 9)
@@ -29,6 +17,23 @@ export function seededRandom(seed: number): Random {
     a ^= d
     c ^= shifted
     d = d << 11 | d >>> 21
-    return (result >>> 0) / 4294967296
+    return result >>> 0
   }
+}
+
+/**
+ * Seeded uniform numbers: the same seed gives the same numbers everywhere. A 32-bit mixing sequence fills the state.
+ * @param seed any integer; its low 32 bits count
+ */
+export function seededRandom(seed: number): Random {
+  let counter = seed | 0
+  const mixed = () => {
+    counter = counter + 0x9E3779B9 | 0
+    let z = counter ^ counter >>> 16
+    z = Math.imul(z, 0x21F0AAAD)
+    z = Math.imul(z ^ z >>> 15, 0x735A2D97)
+    return z ^ z >>> 15
+  }
+  const next = xoshiro128(mixed(), mixed(), mixed(), mixed())
+  return () => next() / 4294967296
 }

@@ -41,41 +41,11 @@ export function tiltedSymbols(symbols: Symbols, strong: number[], directions: Di
   return { strong, directions, tilt, cumulative, totals, logMoments }
 }
 
-/** Rate function tilt·K′ − K of the strong taps' sum in one direction, K its cumulant generating function. */
-const rateAt = ({ order, re, im, probability }: Symbols, strong: number[], u: Direction, tilt: number, stride: number): number => {
-  let rate = 0
-  for (const tap of strong) {
-    let total = 0
-    let mass = 0
-    let first = 0
-    for (let i = 0; i < order; i += stride) {
-      const projection = tilt * tap * (re[i]! * u.x + im[i]! * u.y)
-      const weight = probability[i]! * Math.exp(projection)
-      mass += probability[i]!
-      total += weight
-      first += weight * projection
-    }
-    rate += first / total - Math.log(total / mass)
-  }
-  return rate
-}
-
 /**
- * Tilt at which the strong taps' sum reaches levels about as rare as the exceedance probability:
- * where its rate function is −ln of it, which is exact for a Gaussian envelope. It stays within twice
- * the Gaussian value, so that few-valued sums keep all of their values.
+ * Tilt that brings instants near a level as rare as the exceedance probability: twice √(−2·N·ln p), which a Gaussian signal
+ * of unit mean power would want. Bounded symbols need more than Gaussian ones, so twice left the least scatter for PSK, QAM, PAM
+ * and APSK at roll-off 0.05 to 1 and probabilities 1e-4 to 0.1; three times begins to miss levels at roll-off 0.05 (measured).
  */
-export function chooseTilt(symbols: Symbols, strong: number[], directions: Direction[], exceedance: number): number {
-  const target = -Math.log(exceedance)
-  const some = directions.filter((_, j) => j % Math.ceil(directions.length / 4) === 0)
-  const stride = Math.ceil(symbols.order / 64)
-  let low = 0
-  let high = 2 * Math.sqrt(2 * target * symbols.dimensions)
-  for (let step = 0; step < 10; step++) {
-    const middle = (low + high) / 2
-    const rate = some.reduce((sum, u) => sum + rateAt(symbols, strong, u, middle, stride), 0) / some.length
-    if (rate < target) low = middle
-    else high = middle
-  }
-  return (low + high) / 2
+export function tiltFor(dimensions: number, exceedance: number): number {
+  return 2 * Math.sqrt(-2 * dimensions * Math.log(exceedance))
 }
