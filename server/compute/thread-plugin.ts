@@ -52,6 +52,7 @@ export function threadForVitest(alias: Record<string, string>): Rollup.Plugin & 
         configFile: false,
         logLevel: 'error',
         resolve: { alias },
+        esbuild: { tsconfigRaw: '{}' },
         ssr: { noExternal: true },
         build: { ssr: worker, target: 'node20', outDir: folder, emptyOutDir: false, copyPublicDir: false, rollupOptions: { output: { entryFileNames: fileName } } },
       })

@@ -8,8 +8,8 @@ const n = z.number().nullable()
 export const check = z.object({
   id: z.string(), kind: z.enum(Object.keys(mustHaveKinds) as MustHaveKind[]),
   passes: z.boolean(),
-  /** by how much it holds (positive) or fails (negative), in the kind's unit */
-  by: z.number(),
+  /** by how much it holds (positive) or fails (negative), in the kind's unit; null where the row has no such number */
+  by: n,
   sentence: z.string(),
 })
 

@@ -24,8 +24,8 @@ export interface CanonicalStudy {
 }
 
 /** Required margin of a study, dB: its must-have, or none. */
-export function requiredMarginOf(requirements: Requirements): number {
-  return requirements.mustHaves.find(mustHave => mustHave.kind === 'margin')?.value ?? 0
+export function requiredMarginOf({ mustHaves }: { mustHaves: readonly { kind: MustHaveKind, value: number }[] }): number {
+  return mustHaves.find(mustHave => mustHave.kind === 'margin')?.value ?? 0
 }
 
 function canonicalAvailable(requirements: Requirements): CanonicalStudy['available'] {

@@ -1,0 +1,23 @@
+import { evaluate, ModulationError } from '#shared/modulation'
+import type { EvaluationRequest } from '#shared/modulation'
+import { drawConstellation } from './draw-constellation'
+import { evaluateCandidate } from './evaluate-candidate'
+import type { Task, Tasks } from './tasks'
+
+function evaluation(request: EvaluationRequest): Tasks['evaluation']['answer'] {
+  try {
+    return { evaluation: evaluate(request) }
+  } catch (error) {
+    if (!(error instanceof ModulationError)) throw error
+    return { issues: [{ path: error.path.join('.'), message: error.message }] }
+  }
+}
+
+/** Entry of a worker thread: one task at a time. What it throws is a fault, never a mistake in the inputs. */
+export default function work(task: Task): Tasks[Task['kind']]['answer'] {
+  switch (task.kind) {
+    case 'rows': return task.asked.map(evaluateCandidate)
+    case 'evaluation': return evaluation(task.asked)
+    case 'constellation': return drawConstellation(task.asked)
+  }
+}
