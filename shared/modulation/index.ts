@@ -25,19 +25,6 @@ export { requiredEsN0Db } from './required-snr'
 export type { ErrorCurve } from './required-snr'
 export { evaluate, evaluationQuantities } from './evaluate'
 export type { Evaluation, EvaluationRequest } from './evaluate'
-export {
-  capacity, distanceN0Db, ebN0Db, epkN0Db, esN0ForCapacity, evmPercentAt, gapToCapacityDb, netBitsPerSymbol, ratesOf,
-} from './efficiency'
-export type { HeldConstantRate, RateInputs, Rates } from './efficiency'
-export {
-  availableEsN0Db, freeSpaceLossDb, linkCase, marginDb, noiseDensityDbmHz, receiverThreshold, surplusDb,
-} from './link'
-export type { LinkCaseResult, LinkLine, LinkStep, PowerUnit } from './link'
-export { ceilToDigits, floorToDigits } from './rounding'
-export { verdict, verdictKinds } from './verdict'
-export type { Verdict, VerdictCheck, VerdictKind, VerdictLimit, VerdictValues } from './verdict'
-export { shapedBackOffDb } from './waveform'
-export type { BackOff, BackOffOptions } from './waveform'
 export * from './efficiency'
 export * from './link'
 export * from './rounding'
