@@ -10,6 +10,8 @@ const alias = { '#shared': folder('./shared'), '~~': folder('.'), '~': folder('.
 function project(name: string, order: number, test: TestProjectInlineConfiguration['test'] = {}): TestProjectInlineConfiguration {
   return {
     resolve: { alias },
+    // Given here, so that Nuxt's generated ones need not exist.
+    esbuild: { tsconfigRaw: '{}' },
     plugins: [threadForVitest(alias)],
     test: { name, include: [`tests/${name}/**/*.test.ts`], environment: 'node', sequence: { groupOrder: order }, ...test },
   }

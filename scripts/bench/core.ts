@@ -1,8 +1,9 @@
 import { analyse, createConstellation, evaluate, generate, requiredEsN0Db, serExactCurve } from '../../shared/modulation/index'
 import type { EvaluationRequest } from '../../shared/modulation/index'
 import { fromDecibels } from '../../shared/modulation/decibels'
+import type { Measure } from './measure'
 
-/** Measurements of the numerical core alone, in one thread. Run: npx tsx scripts/bench/core.ts */
+/* Measurements of the numerical core alone, in one thread. Run: npm run bench -- core */
 
 /** One line of the table. */
 export interface Measurement {
@@ -77,3 +78,10 @@ export function measureCore(): Measurement[] {
     ...(['qam', 'psk', 'hexagonal'] as const).map(measureRegular),
   ]
 }
+
+const measure: Measure = {
+  title: 'the numerical core in one thread',
+  needs: 'core',
+  run: async () => measureCore().map(({ what, milliseconds, limit }) => ({ what, figure: milliseconds, unit: 'ms', target: limit })),
+}
+export default measure
