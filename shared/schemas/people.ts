@@ -1,0 +1,21 @@
+import { z } from 'zod'
+import { id, name } from './common'
+import { accountRole, email, newPassword } from './session'
+
+/** An account as administrators see it; items of GET /api/people. */
+export const person = z.object({
+  id, email: z.string(), name: z.string(), role: accountRole,
+  disabledAt: z.string().nullable(), createdAt: z.string(),
+})
+export type Person = z.infer<typeof person>
+
+/** POST /api/people */
+export const personCreation = z.strictObject({ email, name: name('the person\'s name'), role: accountRole, password: newPassword })
+
+/** PATCH /api/people/{person}; a new password ends the person's sessions. */
+export const personChange = z.strictObject({
+  name: name('the person\'s name').optional(),
+  role: accountRole.optional(),
+  disabled: z.boolean({ error: 'Disabled is true or false.' }).optional(),
+  password: newPassword.optional(),
+})
