@@ -16,10 +16,3 @@ export function readNumber(text: string): number | null {
   const value = Number(plain)
   return Number.isFinite(value) ? value : null
 }
-
-/** A decimal of fixed digits with a true minus sign; `signed` writes the plus as well. */
-export function fixedText(value: number, digits: number, signed = false): string {
-  const text = Math.abs(value).toFixed(digits)
-  const sign = value < 0 && Number(text) !== 0 ? '−' : signed ? '+' : ''
-  return `${sign}${text}`
-}
