@@ -29,8 +29,7 @@ await command(async (lifetime) => {
   const parts = embedded ? await startEmbedded(lifetime, dataDir, env) : undefined
   const sessionPassword = parts?.sessionPassword ?? (env.NUXT_SESSION_PASSWORD || keepSecrets(dataDir).session)
   await probePort(host, port)
-  const { HALFPLANE_DEMO: _, ...others } = env
-  const server = await startServer(lifetime, entry, { ...serverEnv({ host, port, dataDir, sessionPassword, env: others }), ...parts?.env })
+  const server = await startServer(lifetime, entry, { ...serverEnv({ host, port, dataDir, sessionPassword, env }), HALFPLANE_DEMO: undefined, ...parts?.env })
 
   lifetime.settled()
   const accounts = join(dataDir, 'demo-accounts.json')

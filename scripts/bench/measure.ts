@@ -20,6 +20,6 @@ export interface Context {
 }
 
 /** A measurement: the default export of a file in this folder. */
-export type Measure =
-  | { title: string, needs: 'core', run: () => Promise<Row[]> }
-  | { title: string, needs: 'server' | 'browser', run: (context: Context) => Promise<Row[]> }
+export type Measure
+  = | { title: string, needs: 'core', run: () => Promise<Row[]> }
+    | { title: string, needs: 'server' | 'browser', run: (context: Context) => Promise<Row[]> }

@@ -1,16 +1,18 @@
-import { existsSync, mkdirSync, mkdtempSync, readFileSync, rmSync, statSync, writeFileSync } from 'node:fs'
+import { existsSync, mkdirSync, readFileSync, rmSync, statSync, writeFileSync } from 'node:fs'
 import { createServer } from 'node:net'
 import type { AddressInfo } from 'node:net'
-import { tmpdir } from 'node:os'
 import { join } from 'node:path'
 import { afterAll, beforeAll, describe, expect, it } from 'vitest'
 import { freePort } from '../../scripts/lib/address.mjs'
+import { testFolder } from '../../scripts/lib/stack.mjs'
 import { alive, familyOn, npmStart, untilGone, untilReady } from '../support/start'
 import type { Family, Start } from '../support/start'
 
-const folder = mkdtempSync(join(tmpdir(), 'halfplane-start-'))
-const dataDir = join(folder, 'data')
-afterAll(() => rmSync(folder, { recursive: true, force: true, maxRetries: 5 }))
+// Named as the other data of a test run, so that npm test removes them even when it is killed.
+const ownFolder = (name: string) => join(testFolder, `data-${process.env.HALFPLANE_TEST_RUN ?? process.pid}-${name}`)
+const dataDir = ownFolder('start')
+const refused = ownFolder('refused')
+afterAll(() => [dataDir, refused].forEach(folder => rmSync(folder, { recursive: true, force: true, maxRetries: 5 })))
 
 /** What a start says itself, without npm's two lines about the script. */
 const sentences = (start: Start) => start.said().split('\n').filter(line => line !== '' && !line.startsWith('>'))
@@ -20,17 +22,19 @@ describe('a start that cannot be', () => {
     const other = createServer()
     await new Promise<void>(resolve => other.listen(0, '127.0.0.1', resolve))
     const { port } = other.address() as AddressInfo
-    const start = npmStart(join(folder, 'unused'), port)
+    const start = npmStart(join(refused, 'unused'), port)
     expect(await start.ended).toBe(1)
     expect(sentences(start)).toEqual([expect.stringContaining(`Port ${port} on 127.0.0.1 is taken`)])
     other.close()
   })
 
   it('says in one sentence that the data folder cannot be written, with exit code 1', async () => {
-    writeFileSync(join(folder, 'file'), '')
-    const start = npmStart(join(folder, 'file', 'data'), await freePort())
+    const file = join(refused, 'file')
+    mkdirSync(refused, { recursive: true })
+    writeFileSync(file, '')
+    const start = npmStart(join(file, 'data'), await freePort())
     expect(await start.ended).toBe(1)
-    expect(sentences(start)).toEqual([expect.stringContaining(`Cannot write to the data folder ${join(folder, 'file', 'data')}`)])
+    expect(sentences(start)).toEqual([expect.stringContaining(`Cannot write to the data folder ${join(file, 'data')}`)])
   })
 })
 

@@ -37,8 +37,10 @@ export class Client {
   }
 
   private async call<Body>(method: string, path: string, body: unknown, headers: CallHeaders = {}): Promise<Answer<Body>> {
-    const json = body === undefined ? {} : { 'content-type': 'application/json' }
-    const response = await this.fetch(path, { method, headers: { ...json, ...headers }, body: body === undefined ? undefined : JSON.stringify(body) })
+    const init = body === undefined
+      ? { method, headers }
+      : { method, headers: { 'content-type': 'application/json', ...headers }, body: JSON.stringify(body) }
+    const response = await this.fetch(path, init)
     return { status: response.status, headers: response.headers, body: await read(response) as Body }
   }
 
