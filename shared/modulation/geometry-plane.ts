@@ -11,6 +11,12 @@ export const shortestFacet = 1e-9
 const rounding = 8 * Number.EPSILON
 
 /**
+ * A triangle no higher than this part of the largest coordinate has its apex on its longest side, as far as the coordinates
+ * can say: rows of a turned lattice are straight only to rounding. The longest side would be a facet that begins some 1e15 away.
+ */
+const flatness = 8 * Number.EPSILON
+
+/**
  * Facets of the Voronoi cells of planar points: the Delaunay edges whose dual edge is longer than 1e-9 of d_min.
  * Along the bisector, measured to the left of i → j from the middle between them, the circumcentre of the triangle
  * with apex k lies at (d/2)·cot(angle at k): only differences of coordinates enter.
@@ -21,6 +27,7 @@ export function planeFacets(xy: Float64Array): Facets {
   const mesh = triangulate(xy)
   const { origin, next, previous } = mesh
   const shortest = shortestEdge(xy, mesh)
+  const flat = flatness * xy.reduce((largest, x) => Math.max(largest, Math.abs(x)), 0)
   const first: number[] = []
   const second: number[] = []
   const distance: number[] = []
@@ -35,6 +42,7 @@ export function planeFacets(xy: Float64Array): Facets {
     const d = Math.hypot(xy[2 * j]! - xy[2 * i]!, xy[2 * j + 1]! - xy[2 * i + 1]!)
     const above = turnsLeft(xy, i, j, left) ? corner(xy, i, j, left, d) : open
     const below = turnsLeft(xy, j, i, right) ? corner(xy, j, i, right, d) : open
+    if ((above.t < 0 && above.height <= flat) || (below.t < 0 && below.height <= flat)) continue
     const excess = above.t + below.t - shortestFacet * shortest.distance
     const doubt = above.error + below.error
     const long = Math.abs(excess) > doubt ? excess > 0 : facetIsLong(xy, i, j, left, right, shortest.ends)
@@ -43,16 +51,26 @@ export function planeFacets(xy: Float64Array): Facets {
     second.push(j)
     distance.push(d)
     start.push(-below.t)
-    end.push(above.t)
+    // Rounding can turn round only a facet that the exact decision had to save.
+    end.push(Math.max(above.t, -below.t))
   }
   return { minimumDistance: shortest.distance, first, second, distance, start, end }
 }
 
 /** Side of an edge without a triangle: the facet runs to infinity. */
-const open = { t: Infinity, error: 0 }
+const open: Corner = { t: Infinity, error: 0, height: Infinity }
 
-/** Position along the bisector of i and j of the circumcentre of i, j, k, which turn left; and what rounding may have done to it. */
-function corner(xy: Float64Array, i: number, j: number, k: number, d: number): { t: number, error: number } {
+interface Corner {
+  /** position along the bisector of i and j of the circumcentre of i, j, k, to k's side */
+  t: number
+  /** what rounding may have done to it */
+  error: number
+  /** distance of k from the line through i and j */
+  height: number
+}
+
+/** Corner of the cells of i, j and k, which turn left. */
+function corner(xy: Float64Array, i: number, j: number, k: number, d: number): Corner {
   const ax = xy[2 * i]! - xy[2 * k]!
   const ay = xy[2 * i + 1]! - xy[2 * k + 1]!
   const bx = xy[2 * j]! - xy[2 * k]!
@@ -68,7 +86,7 @@ function corner(xy: Float64Array, i: number, j: number, k: number, d: number): {
   const cotangent = (ax * bx + ay * by) / Math.abs(area)
   const t = d / 2 * cotangent
   const error = rounding * (d / 2) * (a * b + Math.abs(cotangent) * product) / Math.abs(area)
-  return { t, error: Number.isFinite(error) ? error : Infinity }
+  return { t, error: Number.isFinite(error) ? error : Infinity, height: Math.abs(area) / d }
 }
 
 /** The minimum distance is that of some Delaunay edge. */

@@ -50,13 +50,14 @@ def cell(points, i):
 
 def wedge(h, t1, t2, n0):
     """(1/2 pi) times the integral of exp(-h^2/(n0 cos^2 theta)) over the edge's polar angle."""
-    low, high = atan2(t1, h), atan2(t2, h)
     least = h * h + (0 if t1 < 0 < t2 else min(t1 * t1, t2 * t2))
-    # The integrand lives within a few widths sqrt(n0)/h of the foot or of the nearer end.
-    width = sqrt(n0) / h
-    centre = mpf(0) if low < 0 < high else low if low >= 0 else high
-    cuts = {low, high, centre} | {centre + sign * w * width for sign in (-1, 1) for w in (1, 3, 9)}
-    cuts = sorted(c for c in cuts if low <= c <= high)
+    # The integrand lives within a few lengths sqrt(n0) of the foot, or less than that beyond the nearer end.
+    centre = mpf(0) if t1 < 0 < t2 else t1 if t1 >= 0 else t2
+    length = min(sqrt(n0), n0 / abs(centre)) if centre else sqrt(n0)
+    ends = {t1, t2, centre} | {centre + sign * w * length for sign in (-1, 1) for w in (1, 3, 9)}
+    # Almost through the point, the polar angle crowds towards a right angle.
+    ends |= {sign * h * mpf(10) ** m for sign in (-1, 1) for m in range(1, 10)} if h < length / 10 else set()
+    cuts = [atan2(t, h) for t in sorted(ends) if t1 <= t <= t2]
     value = quad(lambda theta: exp((least - (h / cos(theta)) ** 2) / n0), cuts, method='gauss-legendre')
     return exp(-least / n0) * value / (2 * mp.pi)
 
