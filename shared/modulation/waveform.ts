@@ -146,7 +146,7 @@ export function shapedBackOffDb(
   const random = seededRandom(seed)
   // The pulse is even, so offsets in the first half of the interval stand for those in the second.
   const offsets = Array.from({ length: oversampling / 2 }, (_, i) => tapsAt((i + 0.5) / oversampling, rollOff, halfLengthOf(rollOff), strongTap))
-  const tilt = tiltFor(symbols.dimensions, exceedance)
+  const tilt = tiltFor(symbols, offsets.at(-1)!.strong, exceedance)
   const count = Math.ceil(instants / (offsets.length * directions.length))
   const total = count * offsets.length * directions.length
   const drawn: Instants = { power: new Float64Array(total), weight: new Float64Array(total) }

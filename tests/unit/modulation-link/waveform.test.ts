@@ -34,7 +34,7 @@ describe('back-off of the demonstration\'s rows', () => {
   })
 })
 
-describe('back-off elsewhere, against plain simulations of 2.6 million symbols in NumPy', () => {
+describe('back-off elsewhere, against plain simulations of 1.6 to 2.6 million symbols in NumPy', () => {
   const binary = createConstellation([[-1], [1]])
   const pam4 = generate('pam', { order: 4 })
   const offset = createConstellation([[0, 0], [1, 0], [2, 1]])
@@ -49,7 +49,7 @@ describe('back-off elsewhere, against plain simulations of 2.6 million symbols i
     { name: 'QPSK', constellation: generate('qam', { order: 4 }), options: shaped, value: 4.269 },
     { name: '16-QAM at exceedance 1e-4', constellation: qam16, options: { rollOff: 0.25, exceedance: 1e-4 }, value: 6.180 },
     { name: '16-QAM at exceedance 0.01', constellation: qam16, options: { rollOff: 0.25, exceedance: 0.01 }, value: 4.456 },
-    { name: '16-QAM at roll-off 1', constellation: qam16, options: { rollOff: 1 }, value: 5.443 },
+    { name: '16-QAM at roll-off 1', constellation: qam16, options: { rollOff: 1 }, value: 5.409 },
     { name: '16-QAM at roll-off 0.05', constellation: qam16, options: { rollOff: 0.05 }, value: 6.296 },
     { name: '8-PSK at roll-off 0.05', constellation: psk8, options: { rollOff: 0.05 }, value: 5.412 },
     { name: '16 points of unequal probabilities', constellation: bell, options: shaped, value: 6.042 },
