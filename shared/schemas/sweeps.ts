@@ -43,3 +43,7 @@ export const sweep = z.object({
   createdAt: z.string(), createdBy: z.string(), finishedAt: z.string().nullable(),
 })
 export type Sweep = z.infer<typeof sweep>
+
+/** DELETE /api/sweeps/{id}: rows that had not been computed are removed, the others stay. */
+export const sweepCancellation = sweep.extend({ removed: z.int(), kept: z.int() })
+export type SweepCancellation = z.infer<typeof sweepCancellation>
