@@ -3,11 +3,12 @@ import { existsSync, mkdirSync, readFileSync, rmSync } from 'node:fs'
 import { join } from 'node:path'
 import process from 'node:process'
 import { spawnTied } from './lib/children.mjs'
+import { withoutOurs } from './lib/environment.mjs'
 import { ensurePackages } from './lib/install.mjs'
 import { command } from './lib/lifetime.mjs'
 import { inRoot, root } from './lib/places.mjs'
 import { say } from './lib/say.mjs'
-import { removeAbandoned, testFolder, withoutOurs } from './lib/stack.mjs'
+import { removeAbandoned, testFolder } from './lib/stack.mjs'
 
 await command(async (lifetime) => {
   await ensurePackages(lifetime)

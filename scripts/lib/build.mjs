@@ -2,6 +2,7 @@ import { existsSync, readFileSync, readdirSync, statSync, writeFileSync } from '
 import { join } from 'node:path'
 import process from 'node:process'
 import { run } from './children.mjs'
+import { withoutOurs } from './environment.mjs'
 import { underLock } from './lock.mjs'
 import { buildPlaces, inRoot, lockPlace, root } from './places.mjs'
 
@@ -27,7 +28,7 @@ export async function ensureBuild(lifetime, env) {
     const begun = Date.now()
     await run(lifetime, 'building the application (a minute or so)', inRoot('node_modules', '.bin', 'nuxt'), ['build'], {
       cwd: root,
-      env: { ...process.env, ...(buildDir ? { HALFPLANE_BUILD_DIR: buildDir } : {}), NODE_ENV: 'production', NUXT_TELEMETRY_DISABLED: '1', CI: '1' },
+      env: { ...withoutOurs(process.env), ...(buildDir ? { HALFPLANE_BUILD_DIR: buildDir } : {}), NODE_ENV: 'production', NUXT_TELEMETRY_DISABLED: '1', CI: '1' },
     })
     // What changes during a build is newer than it. Nitro empties the place first, so a broken build has no note.
     writeFileSync(note, JSON.stringify({ begun }))

@@ -5,6 +5,7 @@ import { freePort } from './address.mjs'
 import { ensureBuild } from './build.mjs'
 import { takeDataFolder } from './data-folder.mjs'
 import { startEmbedded } from './embedded.mjs'
+import { withoutOurs } from './environment.mjs'
 import { beginPart } from './lifetime.mjs'
 import { waitUntilUnused } from './mariadb-files.mjs'
 import { inRoot } from './places.mjs'
@@ -82,14 +83,4 @@ export async function removeAbandoned(of = run => beginningOf(run) === undefined
 async function removeData(dataDir) {
   await waitUntilUnused(join(dataDir, 'mariadb'))
   rmSync(dataDir, { recursive: true, force: true, maxRetries: 3 })
-}
-
-/**
- * An environment without what steers a start, so that a test run depends on nothing of the reader's own.
- * @param {NodeJS.ProcessEnv} env
- * @returns {NodeJS.ProcessEnv}
- */
-export function withoutOurs(env) {
-  const ours = /^(HALFPLANE_|NUXT_|NITRO_|VITEST|npm_)|^(HOST|PORT|BASE_URL|DATABASE_URL|DATABASE_ADMIN_URL|SMTP_URL|NODE_ENV|NODE_OPTIONS|TEST|MODE|DEV|PROD|SSR)$/
-  return Object.fromEntries(Object.entries(env).filter(([name]) => !ours.test(name)))
 }

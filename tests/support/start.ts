@@ -2,9 +2,10 @@ import { spawn } from 'node:child_process'
 import { readFileSync } from 'node:fs'
 import { join } from 'node:path'
 import { vi } from 'vitest'
+import { withoutOurs } from '../../scripts/lib/environment.mjs'
 import { root } from '../../scripts/lib/places.mjs'
 import { beginningOf } from '../../scripts/lib/processes.mjs'
-import { testBuild, withoutOurs } from '../../scripts/lib/stack.mjs'
+import { testBuild } from '../../scripts/lib/stack.mjs'
 
 /** A running or ended `npm start`. */
 export interface Start {
