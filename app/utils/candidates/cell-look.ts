@@ -1,0 +1,72 @@
+import type { Candidate } from '#shared/schemas/candidates'
+import { formatNumber, plain } from '#shared/columns'
+import type { Column, ColumnContext } from '#shared/columns'
+import type { CellSave } from './cell-saves'
+
+/** What a cell is drawn from. */
+export type CellView = { row: Candidate, column: Column, context: ColumnContext, save: CellSave | null, stale: boolean }
+
+/** The row's mistake at a cell's inputs, as the server found it. */
+export function errorAt(row: Candidate, column: Column): string | null {
+  if (column.kind === 'computed') return null
+  return row.errors.find(error => column.fields.some(field => error.path.split('.')[0] === field))?.message ?? null
+}
+
+const failure = (row: Candidate) => row.errors[0]?.message ?? 'This row cannot be computed.'
+
+/** Whether a computed cell has no fresh number, and why. */
+const lacking = ({ row, column, stale }: CellView): 'computing' | 'failed' | null => {
+  if (column.kind === 'input') return null
+  return stale || row.state === 'computing' ? 'computing' : row.state === 'failed' ? 'failed' : null
+}
+
+/** What the cell says: its number as shown, the text typed but not saved, or in words why there is none. */
+export function cellText(view: CellView): string {
+  const { row, column, context, save } = view
+  if (save) return save.text
+  const without = lacking(view)
+  if (without === 'failed' && column.id === 'verdict') return `cannot be computed: ${failure(row)}`
+  if (without) return without
+  const value = column.value(row, context)
+  if (value === null) return ''
+  return typeof value === 'number' ? formatNumber(value, column.format, column.round) : value
+}
+
+/** The full value, for copying and for the line under the grid. */
+export function fullText(view: CellView): string {
+  const { row, column, context, save } = view
+  if (save || lacking(view)) return cellText(view)
+  if (column.kind === 'input') return column.text(row.inputs)
+  const value = column.value(row, context)
+  return typeof value === 'number' ? plain(value) : value ?? ''
+}
+
+/** The sentence that goes with a cell: a refusal, the row's mistake, or why the cell is not used. */
+export function cellSentence(view: CellView): string | null {
+  const { row, column, save } = view
+  if (save) return save.state === 'saving' ? 'Being saved.' : save.sentence
+  const without = lacking(view)
+  if (without === 'failed') return failure(row)
+  if (without === 'computing') return 'Being computed.'
+  return errorAt(row, column) ?? (column.kind === 'input' ? column.unused?.(row.inputs) ?? null : null)
+}
+
+const sides = new Set(['verdict', 'surplus'])
+
+/** Classes of a cell: what it is, and what state it is in. */
+export function cellClasses(view: CellView): string[] {
+  const { row, column, save } = view
+  const without = lacking(view)
+  const classes = [column.kind === 'input' ? 'cell-input' : 'cell-computed']
+  if (column.type === 'number') classes.push('cell-number')
+  if (without) classes.push(`cell-${without}`)
+  if (save) classes.push(save.state === 'saving' ? 'cell-saving' : 'cell-refused')
+  else if (errorAt(row, column)) classes.push('cell-refused')
+  else if (column.kind === 'input' && column.unused?.(row.inputs)) classes.push('cell-unused')
+  if (!without && row.values && sides.has(column.id)) classes.push(row.values.passes ? 'cell-right-side' : 'cell-wrong-side')
+  return classes
+}
+
+/** Whether the reader may type into a cell. */
+export const isEditable = (row: Candidate, column: Column, canEdit: boolean) =>
+  canEdit && column.kind === 'input' && !column.unused?.(row.inputs)

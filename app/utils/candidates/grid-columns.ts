@@ -1,0 +1,81 @@
+import type { ColDef } from 'ag-grid-community'
+import type { Candidate } from '#shared/schemas/candidates'
+import { columns } from '#shared/columns'
+import type { Column } from '#shared/columns'
+import { cellClasses, cellSentence, cellText, isEditable } from './cell-look'
+import type { CellView } from './cell-look'
+import type { ColumnSet } from './column-set'
+import { GridEditor } from './grid-editor'
+import { GridHeader } from './grid-header'
+import type { HeaderParams } from './grid-header'
+import { NameCell } from './name-cell'
+
+/** What the columns of the grid ask of the page. */
+export type GridSeams = Pick<HeaderParams, 'sort' | 'onSort'> & {
+  view: (row: Candidate, column: Column) => CellView
+  pin: (row: Candidate) => number | null
+  /** place of the row in the study, counted from 1 */
+  place: (row: Candidate) => number
+  canEdit: () => boolean
+}
+
+/** Id of the row numbers' column; it is no column of the study. */
+export const placeColumn = 'place'
+const characterPx = 7.3
+const paddingPx = 18
+const wholeWords = 'Click to select the row, with Shift to select up to it.'
+
+const placeDef = (seams: GridSeams): ColDef<Candidate> => ({
+  colId: placeColumn, headerName: 'Row', width: 52, minWidth: 40, pinned: 'left', lockPinned: true, lockPosition: 'left', resizable: false,
+  suppressMovable: true, cellClass: 'cell-place', headerClass: 'cell-place', headerTooltip: wholeWords,
+  valueGetter: ({ data }) => data ? seams.place(data) : null,
+})
+
+const editorOf = (column: Column, seams: GridSeams): Partial<ColDef<Candidate>> => {
+  if (column.kind === 'computed' || column.type === 'points') return {}
+  return {
+    cellEditor: GridEditor,
+    cellEditorParams: {
+      entry: { column, textOf: (row: Candidate) => seams.view(row, column).save?.text ?? column.text(row.inputs) },
+    },
+  }
+}
+
+const columnDef = (column: Column, seams: GridSeams, shown: ReadonlySet<string>): ColDef<Candidate> => ({
+  colId: column.id,
+  headerComponent: GridHeader,
+  headerComponentParams: { heading: { column, sort: seams.sort, onSort: seams.onSort } satisfies HeaderParams },
+  headerName: column.title,
+  headerTooltip: column.meaning,
+  headerClass: column.type === 'number' ? 'head-number' : undefined,
+  width: Math.round(column.width * characterPx + paddingPx),
+  minWidth: 48,
+  hide: !shown.has(column.id),
+  pinned: column.id === 'name' ? 'left' : undefined,
+  lockPinned: true,
+  valueGetter: ({ data }) => data ? cellText(seams.view(data, column)) : '',
+  // States of a cell change without its text: always draw it again.
+  equals: () => false,
+  cellClass: ({ data }) => data ? cellClasses(seams.view(data, column)) : [],
+  tooltipValueGetter: ({ data }) => data ? cellSentence(seams.view(data, column)) ?? longText(cellText(seams.view(data, column))) : null,
+  editable: ({ data }) => data !== undefined && column.kind === 'input' && column.type !== 'points' && isEditable(data, column, seams.canEdit()),
+  ...editorOf(column, seams),
+  ...column.id === 'name'
+    ? { cellRenderer: NameCell, cellRendererParams: { cell: { text: (row: Candidate) => cellText(seams.view(row, column)), pin: seams.pin } } }
+    : {},
+})
+
+/** A text that its cell may cut off is worth repeating in full. */
+const longText = (text: string) => text.length > 24 ? text : null
+
+/** Column definitions of the grid out of the study's columns, those of the set shown, in its order. */
+export function gridColumns(seams: GridSeams, set: ColumnSet): ColDef<Candidate>[] {
+  const shown = new Set(set.map(({ id }) => id))
+  const rank = new Map(set.map(({ id }, index) => [id, index]))
+  const ordered = [...columns].sort((a, b) => (rank.get(a.id) ?? Infinity) - (rank.get(b.id) ?? Infinity) || 0)
+  const widths = new Map(set.map(({ id, width }) => [id, width]))
+  return [placeDef(seams), ...ordered.map((column) => {
+    const def = columnDef(column, seams, shown)
+    return { ...def, width: widths.get(column.id) ?? def.width }
+  })]
+}

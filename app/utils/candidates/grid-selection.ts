@@ -1,0 +1,47 @@
+import type { Ref } from 'vue'
+import type { GridApi } from 'ag-grid-community'
+import type { Candidate } from '#shared/schemas/candidates'
+
+/** Selected rows of the grid: one by one, up to another row, or all that are shown. */
+export function useGridSelection(api: Ref<GridApi<Candidate> | null>, told: (ids: string[]) => void) {
+  let anchor: string | null = null
+
+  const tell = () => told(api.value?.getSelectedNodes().flatMap(({ data }) => data ? [data.id] : []) ?? [])
+
+  const between = (grid: GridApi<Candidate>, from: number, to: number) => {
+    const nodes = []
+    for (let index = Math.min(from, to); index <= Math.max(from, to); index++) {
+      const node = grid.getDisplayedRowAtIndex(index)
+      if (node) nodes.push(node)
+    }
+    return nodes
+  }
+
+  /** Selects a row or lets it go; `upTo` selects the rows from the one selected last. */
+  const toggle = (row: Candidate, upTo: boolean) => {
+    const node = api.value?.getRowNode(row.id)
+    const start = anchor === null ? null : api.value?.getRowNode(anchor)?.rowIndex ?? null
+    if (!api.value || !node) return
+    if (upTo && start !== null && node.rowIndex !== null) {
+      api.value.setNodesSelected({ nodes: between(api.value, start, node.rowIndex), newValue: true })
+      return
+    }
+    node.setSelected(!node.isSelected())
+    anchor = row.id
+  }
+
+  const all = () => {
+    if (!api.value) return
+    api.value.setNodesSelected({ nodes: between(api.value, 0, api.value.getDisplayedRowCount() - 1), newValue: true })
+  }
+
+  /** Selects these rows and no others. */
+  const only = (ids: readonly string[]) => {
+    api.value?.deselectAll()
+    const nodes = ids.flatMap(id => api.value?.getRowNode(id) ?? [])
+    api.value?.setNodesSelected({ nodes, newValue: true })
+    anchor = ids.at(-1) ?? null
+  }
+
+  return { tell, toggle, all, only }
+}
