@@ -37,6 +37,30 @@ const decimal = (x: number, digits: number, signed: boolean) => {
 const limitOf = (mustHave: VerdictLimit, values: VerdictValues) =>
   mustHave.kind === 'margin' ? values.requiredMargin ?? mustHave.value : mustHave.value
 
+type Showing = {
+  passes: boolean
+  sense: 'atLeast' | 'atMost'
+  digits: number
+  /** whether the value always rounds down */
+  down: boolean
+  limit: number
+}
+
+/**
+ * A value and its distance from the limit as they are shown. Margins round down. Other values round to the nearest, as in the
+ * grid, unless that would hide that it fails: then it rounds towards failing, and so its distance is never nothing.
+ */
+const shownNumbers = (value: number, distance: number, { passes, sense, digits, down, limit }: Showing): [number, number] => {
+  const scale = 10 ** digits
+  const [nearest, apart] = [Math.round(value * scale) / scale, Math.round(distance * scale) / scale]
+  const hidden = !passes && (apart === 0 || (sense === 'atLeast' ? nearest >= limit : nearest <= limit))
+  if (!down && !hidden) return [nearest, apart]
+  return [
+    (sense === 'atLeast' ? floorToDigits : ceilToDigits)(value, digits),
+    (passes ? floorToDigits : ceilToDigits)(distance, digits),
+  ]
+}
+
 const judge = (mustHave: VerdictLimit, values: VerdictValues): VerdictCheck => {
   const { id, kind } = mustHave
   const { words, unit, digits, sense, signed } = verdictKinds[kind]
@@ -47,12 +71,10 @@ const judge = (mustHave: VerdictLimit, values: VerdictValues): VerdictCheck => {
   const limit = limitOf(mustHave, values)
   const by = sense === 'atLeast' ? value - limit : limit - value
   const passes = by >= -roundingSlack(limit)
-  // Rounded towards failing: a value just short of its limit never shows as the limit, nor its shortfall as nothing.
-  const shown = decimal((sense === 'atLeast' ? floorToDigits : ceilToDigits)(value, digits), digits, signed)
-  const distance = decimal(passes ? Math.max(0, floorToDigits(by, digits)) : ceilToDigits(-by, digits), digits, false)
+  const [shown, distance] = shownNumbers(value, Math.abs(by), { passes, sense, digits, down: signed, limit })
   const where = kind === 'margin' && values.decidingCase ? ` (${values.decidingCase})` : ''
   const side = passes ? 'to spare' : sense === 'atLeast' ? 'short' : 'over'
-  return { id, kind, passes, by: by === 0 ? 0 : by, sentence: `${words} ${shown} ${unit}${where}, ${distance} ${unit} ${side}` }
+  return { id, kind, passes, by: by === 0 ? 0 : by, sentence: `${words} ${decimal(shown, digits, signed)} ${unit}${where}, ${decimal(distance, digits, false)} ${unit} ${side}` }
 }
 
 /**

@@ -10,7 +10,13 @@ describe('verdict in words', () => {
   it('passes without must-haves', () => expect(text({})).toBe('passes'))
   it('passes when every must-have holds', () => expect(text({}, must('R1', 'margin', 1), must('R2', 'netBitRate', 20))).toBe('passes'))
   it('says which must-have fails and by how much', () => {
-    expect(text({ netBitRate: 15.96 }, must('R2', 'netBitRate', 20))).toBe('fails R2: net bit rate 15.9 Mbit/s, 4.1 Mbit/s short')
+    expect(text({ netBitRate: 15.96 }, must('R2', 'netBitRate', 20))).toBe('fails R2: net bit rate 16.0 Mbit/s, 4.0 Mbit/s short')
+  })
+  it('rounds a rate towards failing where the nearest decimal would meet the limit', () => {
+    expect(text({ netBitRate: 19.98 }, must('R2', 'netBitRate', 20))).toBe('fails R2: net bit rate 19.9 Mbit/s, 0.1 Mbit/s short')
+  })
+  it('does so for a limit between two decimals', () => {
+    expect(text({ netBitRate: 19.93 }, must('R2', 'netBitRate', 19.96))).toBe('fails R2: net bit rate 19.9 Mbit/s, 0.1 Mbit/s short')
   })
   it('shows 16-QAM of the demonstration short by 0.14 dB', () => {
     expect(text({ margin: 0.8612 }, must('R1', 'margin', 1))).toBe('fails R1: margin +0.86 dB, 0.14 dB short')
