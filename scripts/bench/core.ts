@@ -21,7 +21,7 @@ export function mixedSweep(): EvaluationRequest['constellation'][] {
   for (let order = 2; order <= 256; order++) rows.push({ family: 'psk', order })
   for (let order = 2; order <= 256; order += 4) rows.push({ family: 'pam', order }, { family: 'hexagonal', order })
   for (const order of [4, 8, 16, 32, 64, 128, 256]) rows.push({ family: 'qam', order })
-  for (const order of [32, 128]) rows.push({ family: 'crossQam', order })
+  for (const order of [32, 128]) rows.push({ family: 'cross-qam', order })
   for (let n = 0; rows.length < 1000; n++) {
     const ratio = 1.8 + n / 300
     const rings = [[4, 12], [5, 11], [1, 5, 10], [4, 12, 16], [8, 16, 20, 20], [16, 48, 64, 128]][n % 6]!

@@ -32,9 +32,9 @@ describe('PAPR of square QAM', () => {
 describe('Smith 1975, cross sets', () => {
   it.each([{ order: 32, energy: 20 }, { order: 128, energy: 82 }, { order: 512, energy: 330 }])(
     '$order points have mean energy $energy at d_min = 2',
-    ({ order, energy }) => expect(4 * energyAtUnitDistance('crossQam', order)).toBeCloseTo(energy, 9),
+    ({ order, energy }) => expect(4 * energyAtUnitDistance('cross-qam', order)).toBeCloseTo(energy, 9),
   )
-  it('cross 32 has a PAPR of 10·log10(34/20) = 2.30 dB', () => expect(paprDb(generate('crossQam', { order: 32 }))).toBeCloseTo(2.3045, 4))
+  it('cross 32 has a PAPR of 10·log10(34/20) = 2.30 dB', () => expect(paprDb(generate('cross-qam', { order: 32 }))).toBeCloseTo(2.3045, 4))
 })
 
 // ETSI EN 302 307-1, tables 9 and 10 (from memory): γ by code rate

@@ -6,7 +6,7 @@ const orders = 'Cross QAM has 32, 128 or 512 points.'
 
 /** Cross QAM: the square grid of 3·2^((k−3)/2) columns without its four corners of side 2^((k−5)/2); methods §12. */
 export const crossQam: Family = {
-  id: 'crossQam',
+  id: 'cross-qam',
   title: 'Cross QAM',
   orders,
   parameters: ['order'],

@@ -1,6 +1,6 @@
 import type { Issue } from '../errors'
 
-export type FamilyId = 'pam' | 'psk' | 'qam' | 'crossQam' | 'apsk' | 'hexagonal' | 'custom'
+export type FamilyId = 'pam' | 'psk' | 'qam' | 'cross-qam' | 'apsk' | 'hexagonal' | 'custom'
 export type FamilyParameter = 'order' | 'rings' | 'ratios' | 'phases' | 'points'
 
 /** Parameters of a family; each family reads its own and ignores the others, so that a change of family loses nothing. */

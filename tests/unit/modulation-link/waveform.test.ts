@@ -17,7 +17,7 @@ const rows = [
   { name: '16-QAM', constellation: qam16, stated: 5.47, long: 5.482 },
   { name: '4+12 at 3.15', constellation: apsk([4, 12], [3.15]), stated: 4.83, long: 4.835 },
   { name: '16-PSK', constellation: generate('psk', { order: 16 }), stated: 4.04, long: 4.043 },
-  { name: 'cross 32', constellation: generate('crossQam', { order: 32 }), stated: 5.29, long: 5.282 },
+  { name: 'cross 32', constellation: generate('cross-qam', { order: 32 }), stated: 5.29, long: 5.282 },
   { name: '8-PSK', constellation: psk8, stated: 4.03, long: 4.040 },
 ]
 

@@ -11,7 +11,7 @@ const rows: [string, FamilyId, FamilyParameters, number][] = [
   ['4+12 at 2.57', 'apsk', { rings: [4, 12], ratios: [2.57] }, 21.41],
   ['4+12 at 3.15', 'apsk', { rings: [4, 12], ratios: [3.15] }, 22.17],
   ['16-PSK', 'psk', { order: 16 }, 24.97],
-  ['cross 32', 'crossQam', { order: 32 }, 23.96],
+  ['cross 32', 'cross-qam', { order: 32 }, 23.96],
   ['8-PSK', 'psk', { order: 8 }, 19.12],
 ]
 
