@@ -4,8 +4,9 @@ import type { CandidateInputs } from '#shared/schemas/candidates'
 import type { Issue } from '#shared/schemas/common'
 import type { Requirements } from '#shared/schemas/requirements'
 import type { SweepCreation } from '#shared/schemas/sweeps'
-import { studyRoles } from '#shared/schemas/members'
-import { accountRoles } from '#shared/schemas/session'
+// By their paths: drizzle-kit reads this file and knows no aliases.
+import { studyRoles } from '../../shared/schemas/members'
+import { accountRoles } from '../../shared/schemas/session'
 import { instant, now, uuid } from './columns'
 
 export const users = mysqlTable('users', {
