@@ -6,13 +6,14 @@ export type Direction = { x: number, y: number }
 /** Symbol distributions tilted towards each direction, one a strong tap: rows of `order` cumulative sums. */
 export type TiltedSymbols = {
   strong: number[]
+  /** the second half opposite to the first */
   directions: Direction[]
   tilt: number
   cumulative: Float64Array
   /** last cumulative sum of each row, direction by direction */
   totals: Float64Array
-  /** logarithm of the moment generating function of all strong taps together, one a direction */
-  logMoments: Float64Array
+  /** one over the moment generating function of all strong taps together, one a direction */
+  inverseMoments: Float64Array
 }
 
 /** Directions that a peak may take: both signs of a real signal, twelve phases of a carrier. */
@@ -25,20 +26,31 @@ export function directionsOf(dimensions: number): Direction[] {
 export function tiltedSymbols(symbols: Symbols, strong: number[], directions: Direction[], tilt: number): TiltedSymbols {
   const { order, re, im, probability } = symbols
   const rows = directions.length * strong.length
+  const half = directions.length / 2
   const cumulative = new Float64Array(rows * order)
   const totals = new Float64Array(rows)
-  const logMoments = new Float64Array(directions.length)
-  directions.forEach((u, j) => strong.forEach((tap, t) => {
-    const row = j * strong.length + t
-    let sum = 0
-    for (let i = 0; i < order; i++) {
-      sum += probability[i]! * Math.exp(tilt * tap * (re[i]! * u.x + im[i]! * u.y))
-      cumulative[row * order + i] = sum
+  const inverseMoments = new Float64Array(directions.length).fill(1)
+  for (let j = 0; j < half; j++) {
+    const u = directions[j]!
+    for (let t = 0; t < strong.length; t++) {
+      const row = j * strong.length + t
+      const opposite = (j + half) * strong.length + t
+      let towards = 0
+      let away = 0
+      for (let i = 0; i < order; i++) {
+        const factor = Math.exp(tilt * strong[t]! * (re[i]! * u.x + im[i]! * u.y))
+        towards += probability[i]! * factor
+        away += probability[i]! / factor
+        cumulative[row * order + i] = towards
+        cumulative[opposite * order + i] = away
+      }
+      totals[row] = towards
+      totals[opposite] = away
+      inverseMoments[j]! /= towards
+      inverseMoments[j + half]! /= away
     }
-    totals[row] = sum
-    logMoments[j]! += Math.log(sum)
-  }))
-  return { strong, directions, tilt, cumulative, totals, logMoments }
+  }
+  return { strong, directions, tilt, cumulative, totals, inverseMoments }
 }
 
 /** Rate function tilt·K′ − K of the strong taps' sum in one direction, K its cumulant generating function. */

@@ -68,8 +68,9 @@ const drawStratum = (
   into: Instants, from: number, count: number,
 ) => {
   const { order, re, im } = symbols
-  const { strong, cumulative, totals, directions, tilt, logMoments } = tilted
+  const { strong, cumulative, totals, directions, tilt, inverseMoments } = tilted
   const taps = strong.length
+  const half = directions.length / 2
   for (let n = from; n < from + count; n++) {
     let x = 0
     let y = 0
@@ -80,8 +81,9 @@ const drawStratum = (
       y += strong[t]! * im[i]!
     }
     let likelihood = 0
-    for (let j = 0; j < directions.length; j++) {
-      likelihood += Math.exp(tilt * (x * directions[j]!.x + y * directions[j]!.y) - logMoments[j]!)
+    for (let j = 0; j < half; j++) {
+      const factor = Math.exp(tilt * (x * directions[j]!.x + y * directions[j]!.y))
+      likelihood += factor * inverseMoments[j]! + inverseMoments[j + half]! / factor
     }
     for (let t = 0; t < weak.length; t++) {
       const tap = weak[t]!
@@ -128,7 +130,7 @@ const levelDbAt = (instants: Instants, probability: number): number => {
  * A seeded simulation by importance sampling: at instants spread evenly over the symbol interval the symbols under the
  * pulse's strong taps are drawn with probabilities tilted exponentially towards one of several directions, so that
  * most instants lie near the level sought, and each counts with its likelihood ratio. 4096 instants give a standard error
- * of 0.01 to 0.02 dB at roll-off 0.25 (to 0.03 dB elsewhere), as a plain simulation of 100,000 symbols would, in 2 to 6 ms for M ≤ 256.
+ * of 0.01 to 0.02 dB at roll-off 0.25 (to 0.03 dB elsewhere), as a plain simulation of 100,000 symbols would, in 2 to 4 ms for M ≤ 256.
  * @param constellation one or two dimensions
  * @returns dB above mean power, and the standard error of the simulation in dB
  * @throws ModulationError for more dimensions or options outside their ranges
