@@ -5,6 +5,7 @@ import { join } from 'node:path'
 import { afterAll, beforeAll, describe, expect, it } from 'vitest'
 import { freePort } from '../../scripts/lib/address.mjs'
 import { testFolder } from '../../scripts/lib/stack.mjs'
+import { Client } from '../support/client'
 import { alive, familyOn, npmStart, untilGone, untilReady } from '../support/start'
 import type { Family, Start } from '../support/start'
 
@@ -51,15 +52,19 @@ describe('starts on one folder', () => {
     family = familyOn(dataDir)
   }
 
-  async function signIn(): Promise<number> {
+  /** The answer's status, and the client that is then signed in. */
+  async function signIn() {
+    const client = new Client(`http://127.0.0.1:${port}`)
     const { email, password } = JSON.parse(accounts)[0]
-    const origin = `http://127.0.0.1:${port}`
-    const response = await fetch(`${origin}/api/session`, {
-      method: 'POST',
-      headers: { origin, 'content-type': 'application/json' },
-      body: JSON.stringify({ email, password }),
-    })
-    return response.status
+    const { status } = await client.post('/api/session', { email, password })
+    return { client, status }
+  }
+
+  /** Opens the event stream of the first study, and leaves it open. */
+  async function openStream(): Promise<Response> {
+    const { client } = await signIn()
+    const { body } = await client.get<{ items: { id: string }[] }>('/api/studies')
+    return client.fetch(`/api/studies/${body.items[0]?.id}/events`)
   }
 
   beforeAll(async () => {
@@ -95,7 +100,7 @@ describe('starts on one folder', () => {
     const second = npmStart(dataDir, await freePort())
     expect(await second.ended).toBe(1)
     expect(sentences(second)).toEqual([expect.stringContaining(`Halfplane already runs on the data folder ${dataDir}`)])
-    expect(await signIn()).toBeLessThan(300)
+    expect((await signIn()).status).toBeLessThan(300)
   })
 
   it('leaves nothing running when it is killed', async () => {
@@ -116,7 +121,7 @@ describe('starts on one folder', () => {
     process.kill(family.script, 'SIGKILL')
     await untilGone(Object.values(family))
     await startAgain()
-    expect(await signIn()).toBeLessThan(300)
+    expect((await signIn()).status).toBeLessThan(300)
   })
 
   it('ends with exit code 1 and stops the server when the database dies', async () => {
@@ -126,14 +131,18 @@ describe('starts on one folder', () => {
     expect(alive(Object.values(family))).toEqual([])
   })
 
-  it('stops everything within 3 s of a SIGTERM to npm, with exit code 0', async () => {
+  it('stops everything within 3 s of a SIGTERM to npm with an event stream open, with exit code 0', async () => {
     await startAgain()
+    const stream = await openStream()
+    expect(stream.headers.get('content-type')).toContain('text/event-stream')
     const began = performance.now()
     process.kill(start.npm, 'SIGTERM')
     const code = await start.ended
     expect(performance.now() - began).toBeLessThan(3000)
     expect(alive([start.npm, ...Object.values(family)])).toEqual([])
     expect(code).toBe(0)
+    // The stream's end is no answer to anybody: only that it has one.
+    await stream.body?.cancel().catch(() => {})
   })
 
   it('stops everything within 3 s of Ctrl-C, with exit code 0', async () => {
