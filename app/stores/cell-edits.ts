@@ -62,12 +62,10 @@ export const useCellEditsStore = defineStore('cell-edits', () => {
       if (isCandidate(thrown.current)) candidates.adopt([thrown.current])
       const theirs = candidates.byId(row)
       set(key, { state: 'conflict', text, change, theirs: theirs ? column.text(theirs.inputs) : '', sentence: staleSentence })
-    }
-    else if (thrown.status === 422) {
+    } else if (thrown.status === 422) {
       const sentence = thrown.errors.find(error => column.fields.some(field => error.path.split('.')[0] === field))?.message ?? thrown.detail
       set(key, { state: 'refused', text, sentence })
-    }
-    else {
+    } else {
       set(key, { state: 'failed', text, change, sentence: `${thrown.detail} Your value is not saved.` })
     }
   }
@@ -84,8 +82,7 @@ export const useCellEditsStore = defineStore('cell-edits', () => {
         if (version !== undefined) await candidates.change(row, change, version)
         stale.set(row, (stale.get(row) ?? 0) - numbers)
         if (saves.get(key) === own) set(key, null)
-      }
-      catch (thrown) {
+      } catch (thrown) {
         stale.set(row, (stale.get(row) ?? 0) - numbers)
         // A later edit of the same cell has taken this one's place.
         if (saves.get(key) === own) fail(key, column, text, change, thrown)
@@ -112,11 +109,9 @@ export const useCellEditsStore = defineStore('cell-edits', () => {
     const sentence = sentenceAgainst(now, entry.change)
     if (sentence) {
       set(key, { state: 'refused', text, sentence })
-    }
-    else if (before && column.text(before.inputs) !== shown && !saves.has(key)) {
+    } else if (before && column.text(before.inputs) !== shown && !saves.has(key)) {
       set(key, { state: 'conflict', text, change: entry.change, theirs: shown, sentence: staleSentence })
-    }
-    else {
+    } else {
       await send(row, column, text, entry.change)
     }
   }

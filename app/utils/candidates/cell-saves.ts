@@ -1,14 +1,14 @@
 import type { Candidate, CandidateChange } from '#shared/schemas/candidates'
 
 /** What became of an edit that is not, or not yet, what the server holds. A saved cell has no such state. */
-export type CellSave =
-  | { state: 'saving', text: string }
+export type CellSave
+  = | { state: 'saving', text: string }
   /** not allowed: the typed text stays, with the sentence that says what is allowed */
-  | { state: 'refused', text: string, sentence: string }
+    | { state: 'refused', text: string, sentence: string }
   /** somebody else changed the row first: both values are offered */
-  | { state: 'conflict', text: string, change: CandidateChange, theirs: string, sentence: string }
+    | { state: 'conflict', text: string, change: CandidateChange, theirs: string, sentence: string }
   /** no answer came: nothing is known to be saved */
-  | { state: 'failed', text: string, change: CandidateChange, sentence: string }
+    | { state: 'failed', text: string, change: CandidateChange, sentence: string }
 
 export type CellKey = `${string} ${string}`
 export const cellKey = (row: string, column: string): CellKey => `${row} ${column}`

@@ -1,5 +1,4 @@
-/** Lines that the overlay tells apart. */
-export const pinSlots = 12
+import { pinSlots } from '../pin-style'
 
 /** The lowest slot of the overlay that no row has, or null when all are taken. */
 export function freeSlot(taken: readonly (number | null)[]): number | null {

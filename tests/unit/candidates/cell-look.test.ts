@@ -1,0 +1,42 @@
+import { describe, expect, it } from 'vitest'
+import { columnOf } from '#shared/columns'
+import { cellClasses, cellSentence, cellText, fullText, isEditable } from '~/utils/candidates/cell-look'
+import type { CellView } from '~/utils/candidates/cell-look'
+import { sampleRow } from '../columns/sample-row'
+
+const view = (column: string, change: Partial<CellView> = {}): CellView =>
+  ({ row: sampleRow({ marginDb: 0.8677 }), column: columnOf(column)!, context: { reference: null, requirements: null }, save: null, stale: false, ...change })
+const failed = { ...sampleRow({}), state: 'failed' as const, values: null, errors: [{ path: 'order', message: 'QAM has a power of two of points from 4 to 4096.' }] }
+
+describe('what a cell says', () => {
+  it('is its number, a margin rounded down', () => expect(cellText(view('margin'))).toBe('+0.86'))
+  it('is the full value when copied', () => expect(fullText(view('margin'))).toBe('0.8677'))
+  it('is never a stale number', () => expect(cellText(view('margin', { stale: true }))).toBe('computing'))
+  it('is the input while its row is computed', () => expect(cellText(view('name', { stale: true }))).toBe('16-QAM'))
+  it('is the typed text until it is saved', () => expect(cellText(view('order', { save: { state: 'saving', text: '64' } }))).toBe('64'))
+  it('is the refused text', () => expect(cellText(view('order', { save: { state: 'refused', text: 'ten', sentence: '' } }))).toBe('ten'))
+  it('is the reason of a failure in the verdict', () =>
+    expect(cellText(view('verdict', { row: failed }))).toBe('cannot be computed: QAM has a power of two of points from 4 to 4096.'))
+})
+
+describe('marks of a cell', () => {
+  it('tell an input from a computed cell', () => expect([cellClasses(view('name'))[0], cellClasses(view('papr'))[0]]).toEqual(['cell-input', 'cell-computed']))
+  it('do not look saved while saving', () => expect(cellClasses(view('order', { save: { state: 'saving', text: '64' } }))).toContain('cell-saving'))
+  it('show a refusal', () => expect(cellClasses(view('order', { save: { state: 'refused', text: 'x', sentence: 's' } }))).toContain('cell-refused'))
+  it('show the row\'s mistake at its input', () => expect(cellClasses(view('order', { row: failed }))).toContain('cell-refused'))
+  it('leave other inputs of that row alone', () => expect(cellClasses(view('name', { row: failed }))).not.toContain('cell-refused'))
+  it('show the wrong side of a must-have', () => expect(cellClasses(view('verdict'))).toContain('cell-wrong-side'))
+})
+
+describe('the sentence of a cell', () => {
+  it('is the mistake at its input', () => expect(cellSentence(view('order', { row: failed }))).toBe('QAM has a power of two of points from 4 to 4096.'))
+  it('is why a cell is not used', () => expect(cellSentence(view('rings'))).toBe('QAM does not use rings and ratios.'))
+  it('is the server\'s after a refusal', () => expect(cellSentence(view('order', { save: { state: 'refused', text: 'x', sentence: 'No.' } }))).toBe('No.'))
+})
+
+describe('editing', () => {
+  it('is for inputs', () => expect(isEditable(sampleRow({}), columnOf('name')!, true)).toBe(true))
+  it('is not for computed cells', () => expect(isEditable(sampleRow({}), columnOf('papr')!, true)).toBe(false))
+  it('is not for readers', () => expect(isEditable(sampleRow({}), columnOf('name')!, false)).toBe(false))
+  it('is not for inputs that the family does not use', () => expect(isEditable(sampleRow({}), columnOf('rings')!, true)).toBe(false))
+})
