@@ -107,14 +107,14 @@ const tailAbove = ({ power, weight }: Instants, level: number): { probability: n
     }
   }
   const probability = sum / power.length
-  return { probability, variance: (squares / power.length - probability * probability) / power.length }
+  return { probability, variance: Math.max(0, squares / power.length - probability * probability) / power.length }
 }
 
 /** Power in dB exceeded with the given probability; the estimated tail is a falling staircase, so halving finds it. */
 const levelDbAt = (instants: Instants, probability: number): number => {
-  let low = -20
-  let high = 40
-  for (let step = 0; step < 30; step++) {
+  let low = -100
+  let high = 60
+  for (let step = 0; step < 34; step++) {
     const middle = (low + high) / 2
     if (tailAbove(instants, fromDecibels(middle)).probability > probability) low = middle
     else high = middle

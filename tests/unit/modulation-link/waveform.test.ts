@@ -78,6 +78,14 @@ describe('the simulation', () => {
     expect(ratio).toBeGreaterThan(0.4)
     expect(ratio).toBeLessThan(0.6)
   })
+  it('has a finite standard error for three points far from the origin', () => {
+    const far = createConstellation([[10, 0], [10, 1], [11, 0]])
+    expect(shapedBackOffDb(far, { rollOff: 0.25, exceedance: 1e-4 }).standardErrorDb).toBeLessThan(0.01)
+  })
+  it('admits to a large standard error where a single rare point makes the peaks', () => {
+    const rare = createConstellation([[0, 0], [1, 0], [0, 50]], { probabilities: [0.5, 0.4999, 0.0001] })
+    expect(shapedBackOffDb(rare, { rollOff: 0.25, exceedance: 1e-4 }).standardErrorDb).toBeGreaterThan(0.3)
+  })
   it('refuses three dimensions', () => {
     expect(() => shapedBackOffDb(createConstellation([[1, 0, 0], [0, 1, 0]]), shaped)).toThrow('1 or 2 dimensions')
   })
