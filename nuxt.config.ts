@@ -1,5 +1,6 @@
 import { threadForNitro } from './server/compute/thread-plugin'
 import { writeRouteList } from './server/access/route-list'
+import { registerErrorHandler } from './server/errors/register'
 
 /** Tests and benches build into folders of their own, so that they can run beside a running product. */
 const build = process.env.HALFPLANE_BUILD_DIR
@@ -42,6 +43,11 @@ export default defineNuxtConfig({
   vite: { build: { assetsInlineLimit: 0 } },
   typescript: { strict: true },
   telemetry: false,
-  hooks: { 'nitro:init': writeRouteList },
+  hooks: {
+    'nitro:init': (nitro) => {
+      writeRouteList(nitro)
+      registerErrorHandler(nitro)
+    },
+  },
   eslint: { config: { stylistic: true } },
 })

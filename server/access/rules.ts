@@ -4,14 +4,22 @@ import type { StudyRole } from '#shared/schemas/members'
 export type Subject = 'study' | 'candidate' | 'sweep'
 
 /**
- * Who may call a route: anyone, any signed-in account, administrators,
+ * Who may call a route: anyone, any signed-in account, one signed in with its password and not by an API token, administrators,
  * or people with one of the named roles in the study that the route's `id` belongs to.
  */
-export type Rule =
-  | 'anyone'
-  | 'signedIn'
-  | 'admin'
-  | { roles: readonly StudyRole[], of: Subject, admin: boolean }
+export type Rule
+  = | 'anyone'
+    | 'signedIn'
+    | 'session'
+    | 'admin'
+    | {
+      roles: readonly StudyRole[]
+      of: Subject
+      /** whether administrators may who have no part in the study */
+      admin: boolean
+      /** whether it is also for deleted studies, which otherwise exist for nobody */
+      deleted?: true
+    }
 
 const reads = (of: Subject): Rule => ({ roles: ['owner', 'editor', 'reviewer', 'observer'], of, admin: true })
 const edits = (of: Subject): Rule => ({ roles: ['owner', 'editor'], of, admin: false })
@@ -23,14 +31,14 @@ export const rules: Record<string, Rule> = {
   'GET /api/openapi.json': 'anyone',
   'POST /api/session': 'anyone',
   'GET /api/session': 'signedIn',
-  'DELETE /api/session': 'signedIn',
+  'DELETE /api/session': 'session',
   // These two come with nuxt-auth-utils: the pages read the session through them.
   'GET /api/_auth/session': 'anyone',
   'DELETE /api/_auth/session': 'anyone',
 
-  'POST /api/account/password': 'signedIn',
+  'POST /api/account/password': 'session',
   'GET /api/account/tokens': 'signedIn',
-  'POST /api/account/tokens': 'signedIn',
+  'POST /api/account/tokens': 'session',
   'DELETE /api/account/tokens/:token': 'signedIn',
 
   'GET /api/people': 'admin',
@@ -42,7 +50,7 @@ export const rules: Record<string, Rule> = {
   'GET /api/studies/:id': reads('study'),
   'PATCH /api/studies/:id': edits('study'),
   'DELETE /api/studies/:id': owns('study'),
-  'POST /api/studies/:id/restore': owns('study'),
+  'POST /api/studies/:id/restore': { roles: ['owner'], of: 'study', admin: false, deleted: true },
   'GET /api/studies/:id/members': reads('study'),
   'PUT /api/studies/:id/members': owns('study'),
   'DELETE /api/studies/:id/members/:user': owns('study'),

@@ -1,3 +1,4 @@
+import { sql } from 'drizzle-orm'
 import { bigint, double, foreignKey, index, int, json, mysqlEnum, mysqlTable, primaryKey, text, uniqueIndex, varchar } from 'drizzle-orm/mysql-core'
 import type { CandidateCurves, CandidateValues } from '#shared/schemas/values'
 import type { CandidateInputs } from '#shared/schemas/candidates'
@@ -78,6 +79,9 @@ export const results = mysqlTable('results', {
   values: json('values').$type<CandidateValues>(),
   curves: json('curves').$type<CandidateCurves>(),
   errors: json('errors').$type<Issue[]>().notNull(),
+  /** taken out of `values`, so that lists of studies need not parse thousands of them */
+  passes: int('passes').generatedAlwaysAs(sql`json_value(\`values\`, '$.passes')`, { mode: 'stored' }),
+  surplusDb: double('surplus_db').generatedAlwaysAs(sql`json_value(\`values\`, '$.surplusDb')`, { mode: 'stored' }),
   computedAt: instant('computed_at').notNull().default(now),
 })
 

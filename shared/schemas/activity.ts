@@ -1,5 +1,5 @@
 import { z } from 'zod'
-import { id } from './common'
+import { id, pageQuery } from './common'
 
 /** Who did what, when; items of GET /api/studies/{id}/activity, the latest first. */
 export const activityEntry = z.object({
@@ -13,3 +13,6 @@ export const activityEntry = z.object({
   at: z.string(),
 })
 export type ActivityEntry = z.infer<typeof activityEntry>
+
+/** Query of GET /api/studies/{id}/activity; the cursor is the last entry's id. */
+export const activityQuery = pageQuery.extend({ cursor: id.optional() })

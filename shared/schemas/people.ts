@@ -1,5 +1,5 @@
 import { z } from 'zod'
-import { id, name } from './common'
+import { id, name, pageQuery } from './common'
 import { accountRole, email, newPassword } from './session'
 
 /** An account as administrators see it; items of GET /api/people. */
@@ -19,3 +19,6 @@ export const personChange = z.strictObject({
   disabled: z.boolean({ error: 'Disabled is true or false.' }).optional(),
   password: newPassword.optional(),
 })
+
+/** Query of GET /api/people; the cursor is the last account's id. */
+export const peopleQuery = pageQuery.extend({ cursor: id.optional() })

@@ -41,3 +41,7 @@ export const token = z.object({
   createdAt: z.string(), expiresAt: z.string(), lastUsedAt: z.string().nullable(),
 })
 export type Token = z.infer<typeof token>
+
+/** Answer of POST /api/account/tokens: the token's text is shown this once. */
+export const createdToken = token.extend({ secret: z.string() })
+export type CreatedToken = z.infer<typeof createdToken>

@@ -1,5 +1,5 @@
 import { z } from 'zod'
-import { id, name, text } from './common'
+import { id, name, pageQuery, text } from './common'
 import { studyRole } from './members'
 import { requirements } from './requirements'
 
@@ -34,10 +34,16 @@ export const study = z.object({
 })
 export type Study = z.infer<typeof study>
 
+export const studyStates = ['draft', 'archived', 'deleted'] as const
+export type StudyState = (typeof studyStates)[number]
+
+/** Query of GET /api/studies. */
+export const studiesQuery = pageQuery.extend({ state: z.enum(studyStates, { error: 'The state is draft, archived or deleted.' }).default('draft') })
+
 /** A study in the list: who works on it, its leading candidate and that one's worst surplus. */
 export const studySummary = z.object({
   id, name: z.string(), description: z.string(), role: studyRole.nullable(), version: z.int(),
-  state: z.enum(['draft', 'archived', 'deleted']),
+  state: z.enum(studyStates),
   members: z.array(z.object({ name: z.string(), role: studyRole })),
   candidates: z.int(), computing: z.int(), passing: z.int(),
   leading: z.object({ name: z.string(), surplusDb: z.number() }).nullable(),

@@ -1,0 +1,2 @@
+ALTER TABLE `results` ADD `passes` int GENERATED ALWAYS AS (json_value(`values`, '$.passes')) STORED;--> statement-breakpoint
+ALTER TABLE `results` ADD `surplus_db` double GENERATED ALWAYS AS (json_value(`values`, '$.surplusDb')) STORED;

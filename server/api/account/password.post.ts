@@ -1,0 +1,11 @@
+import { passwordChange } from '#shared/schemas/session'
+import { changePassword } from '../../services/accounts'
+import { callerAddress } from '../../utils/address'
+import { callerOf } from '../../utils/caller'
+import { validBody } from '../../utils/validate'
+
+/** POST /api/account/password: changes the caller's password and ends their other sessions. */
+export default defineEventHandler(async (event) => {
+  await changePassword(callerOf(event), await validBody(event, passwordChange), callerAddress(event))
+  return sendNoContent(event)
+})

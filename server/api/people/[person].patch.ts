@@ -1,0 +1,10 @@
+import { personChange } from '#shared/schemas/people'
+import { changePerson } from '../../services/people'
+import { callerOf } from '../../utils/caller'
+import { validBody, validParam } from '../../utils/validate'
+
+/** PATCH /api/people/:person: renames, disables, gives a role or a new password. */
+export default defineEventHandler(async (event) => {
+  const id = validParam(event, 'person')
+  return changePerson(id, await validBody(event, personChange), callerOf(event).account)
+})
