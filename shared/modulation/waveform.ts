@@ -163,9 +163,11 @@ export function shapedBackOffDb(
   const { probability, variance } = tailAbove(drawn, fromDecibels(level))
   const span = 0.3
   const decibelsPerNeper = (levelDbAt(drawn, exceedance * Math.exp(-span)) - levelDbAt(drawn, exceedance * Math.exp(span))) / (2 * span)
+  // Where no instant lies above the level, one of them outweighs the whole probability sought.
+  const relativeError = probability > 0 ? Math.sqrt(variance) / probability : 1
   return {
     backOffDb: level - decibels(meanPower),
-    standardErrorDb: decibelsPerNeper * Math.sqrt(variance) / probability,
+    standardErrorDb: decibelsPerNeper * relativeError,
   }
 }
 
