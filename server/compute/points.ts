@@ -1,6 +1,7 @@
-import { analyse, fromDecibels, generate, ModulationError, requiredEsN0Db } from '#shared/modulation'
+import {
+  analyse, fromDecibels, generate, ModulationError, requiredEsN0Db, serAllPairs, serExact, serExactCurve, serNearest, serUnionBound,
+} from '#shared/modulation'
 import type { Geometry, SymbolErrorKind } from '#shared/modulation'
-import { serAllPairs, serExact, serExactCurve, serNearest, serUnionBound } from '#shared/modulation'
 import { shapedBackOffDb } from '#shared/modulation/waveform'
 import type { BackOff } from '#shared/modulation/waveform'
 import type { CandidateCurves } from '#shared/schemas/values'

@@ -23,7 +23,7 @@ export class ComputationFailed extends Error {
 }
 
 interface Job {
-  task: Task
+  task: { kind: TaskKind, asked: unknown }
   options: ComputeOptions
   left: number
   resolve: (answer: unknown) => void

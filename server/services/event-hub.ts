@@ -48,7 +48,7 @@ export async function publish(studyId: string): Promise<void> {
 
 /** Resolves when no transaction holds the study's row lock any more. */
 export async function unlocked(studyId: string): Promise<void> {
-  await useDatabase().select({ id: studies.id }).from(studies).where(eq(studies.id, studyId)).for('share')
+  await useDatabase().select({ id: studies.id }).from(studies).where(eq(studies.id, studyId)).for('update')
 }
 
 /**

@@ -8,9 +8,7 @@ import { inputIssues } from '#shared/study/input-issues'
 import { resultKey } from '../compute/result-key'
 
 /** Where a row's result is found, or why it can have none. */
-export type RowKey =
-  | { resultKey: string, errors: [], canonical: CanonicalInputs }
-  | { resultKey: null, errors: Issue[], canonical: null }
+export type RowKey = { resultKey: string, errors: [], canonical: CanonicalInputs } | { resultKey: null, errors: Issue[], canonical: null }
 
 /** Key of a row in its study; the errors are at the row's fields, or at the study's requirements. */
 export function rowKey(inputs: CandidateInputs, requirements: Requirements): RowKey {

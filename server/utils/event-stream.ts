@@ -1,12 +1,15 @@
 import type { H3Event } from 'h3'
 import { join } from '../services/event-hub'
+import { sessionAccount } from '../services/sessions'
+import { studyStanding } from '../services/study-access'
+import type { Caller } from './caller'
 import { registerStream } from './streams'
 
 /** Streams of each account, to be closed when its session ends or it leaves a study. */
 const open = new Map<string, Set<() => void>>()
 
-/** How often an idle stream says that it is alive, in milliseconds: proxies close silent connections. */
-const heartbeatEvery = 20_000
+/** How often a stream says that it is alive, in milliseconds: proxies close silent connections. */
+const heartbeatEvery = 15_000
 /** How long a page waits before it connects again, in milliseconds. */
 const retryAfter = 1000
 /** Unsent bytes above which a slow reader is let go; it comes back and gets what it missed as few messages. */
@@ -23,12 +26,20 @@ function lastEventId(event: H3Event): number | null {
   return typeof id === 'string' && /^\d{1,15}$/.test(id) ? Number(id) : null
 }
 
+/** Whether a caller may still read a study: another server may have ended the session or changed the members. */
+async function mayRead(studyId: string, { account, sessionId }: Caller): Promise<boolean> {
+  if (sessionId !== null && await sessionAccount(sessionId) === null) return false
+  const standing = await studyStanding('study', studyId, account.id)
+  return standing !== null && (standing.role !== null || account.role === 'admin')
+}
+
 /**
  * Answers with a study's events as they come (server-sent events), each with the number of the last event in it.
  * @returns when the stream has ended
  */
-export async function streamEvents(event: H3Event, studyId: string, userId: string): Promise<void> {
+export async function streamEvents(event: H3Event, studyId: string, caller: Caller): Promise<void> {
   const { res } = event.node
+  const userId = caller.account.id
   res.writeHead(200, {
     'content-type': 'text/event-stream; charset=utf-8', 'cache-control': 'no-store', 'x-accel-buffering': 'no', 'connection': 'keep-alive',
   })
@@ -36,16 +47,21 @@ export async function streamEvents(event: H3Event, studyId: string, userId: stri
   const ended = new Promise<void>(resolve => res.once('close', resolve))
   const close = () => {
     res.end()
-    res.destroySoon()
+    res.socket?.destroySoon()
   }
   const streams = open.get(userId) ?? new Set()
   open.set(userId, streams.add(close))
   const unregister = registerStream(close)
-  const heartbeat = setInterval(() => res.write(': alive\n\n'), heartbeatEvery)
+  const check = () => mayRead(studyId, caller).then(may => may || close(), () => {})
+  const heartbeat = setInterval(() => {
+    res.write(': alive\n\n')
+    void check()
+  }, heartbeatEvery)
   let leave = () => {}
   try {
     leave = await join(studyId, lastEventId(event), (message, number) => {
       if (res.writableLength > mostUnsent) return close()
+      if (message.study) void check()
       res.write(`${number === null ? '' : `id: ${number}\n`}data: ${JSON.stringify(message)}\n\n`)
     })
     await ended

@@ -1,5 +1,4 @@
-import type { FamilyId, FamilyParameters } from '../modulation'
-import type { Normalisation } from '../modulation'
+import type { FamilyId, FamilyParameters, Normalisation } from '../modulation'
 import type { CandidateInputs } from '../schemas/candidates'
 import type { Requirements } from '../schemas/requirements'
 import { canonicalStudy } from './canonical-study'

@@ -1,0 +1,67 @@
+import { beforeAll, describe, expect, it } from 'vitest'
+import type { Evaluation } from '#shared/modulation'
+import type { Problem } from '#shared/schemas/common'
+import { signIn } from '../support/client'
+import type { Client } from '../support/client'
+
+let observer: Client
+beforeAll(async () => { observer = await signIn('observer') })
+
+const evaluate = <Body = Evaluation>(body: object) => observer.post<Body>('/api/evaluate', body)
+const points = { family: 'custom', points: [[1, 0], [-0.2, 1.1], [-1, -0.5], [0.1, -1]] }
+
+describe('POST /api/evaluate', () => {
+  it('takes points as given', async () => {
+    const { body } = await evaluate({ constellation: points, esN0Db: [8] })
+    expect([body.order, body.dimensions, body.peakEnergy]).toEqual([4, 2, 1.25])
+  })
+  it('scales families to unit mean energy', async () => {
+    const { body } = await evaluate({ constellation: { family: 'apsk', rings: [4, 12], ratios: [3.15] }, esN0Db: [8] })
+    expect(body.meanEnergy).toBeCloseTo(1, 14)
+  })
+  it('gives the three symbol error rates where none is named', async () => {
+    const { body } = await evaluate({ constellation: points, esN0Db: [8, 12.5] })
+    expect(Object.keys(body.curves)).toEqual(['esN0Db', 'serUnion', 'serNearest', 'serExact'])
+  })
+  it('names the relevant neighbours of each point', async () => {
+    const { body } = await evaluate({ constellation: { family: 'psk', order: 4 }, esN0Db: [8] })
+    expect(body.neighbours.relevant).toEqual([[1, 3], [0, 2], [1, 3], [0, 2]])
+  })
+  it('finds the required Es/N0 of a target', async () => {
+    const { body } = await evaluate({
+      constellation: { family: 'qam', order: 16 }, esN0Db: [8], target: { quantity: 'ser', value: 1e-6 }, quantities: ['serExact'],
+    })
+    expect(body.requiredEsN0Db!.serExact).toBeCloseTo(20.918, 3)
+  })
+  it('leaves the required Es/N0 out without a target', async () =>
+    expect((await evaluate({ constellation: points, esN0Db: [8] })).body.requiredEsN0Db).toBeUndefined())
+
+  const bad: [string, object, string][] = [
+    ['a quantity that is not offered', { constellation: points, esN0Db: [8], quantities: ['serExact', 'mutualInformation'] }, 'quantities.1'],
+    ['a family that does not exist', { constellation: { family: 'spiral' }, esN0Db: [8] }, 'constellation.family'],
+    ['an order that a family cannot have', { constellation: { family: 'cross-qam', order: 16 }, esN0Db: [8] }, 'constellation.order'],
+    ['coincident points', { constellation: { family: 'custom', points: [[1, 0], [1, 0]] }, esN0Db: [8] }, 'constellation.points.1'],
+    ['a string where a number belongs', { constellation: points, esN0Db: ['8'] }, 'esN0Db.0'],
+    ['no SNR value', { constellation: points, esN0Db: [] }, 'esN0Db'],
+    ['1,002 SNR values', { constellation: points, esN0Db: Array.from({ length: 1002 }, (_, i) => i / 100) }, 'esN0Db'],
+    ['an unknown field', { constellation: points, esN0Db: [8], precision: 3 }, 'precision'],
+    ['probabilities that do not add up', { constellation: { ...points, probabilities: [0.5, 0.1, 0.1, 0.1] }, esN0Db: [8] }, 'constellation.probabilities'],
+    ['points of nine coordinates', { constellation: { family: 'custom', points: [[1, 0, 0, 0, 0, 0, 0, 0, 0], [0, 1, 0, 0, 0, 0, 0, 0, 0]] }, esN0Db: [8] }, 'constellation.points.0'],
+  ]
+  for (const [what, body, path] of bad) {
+    it(`refuses ${what}, naming it`, async () => {
+      const answer = await evaluate<Problem>(body)
+      expect([answer.status, answer.body.errors![0]!.path]).toEqual([422, path])
+    })
+  }
+  it('refuses points of three coordinates, naming the dimensions', async () => {
+    const { status, body } = await evaluate<Problem>({ constellation: { family: 'custom', points: [[1, 0, 0], [0, 1, 0]] }, esN0Db: [8] })
+    expect([status, body.detail]).toEqual([422, 'Geometry is offered for one and two dimensions.'])
+  })
+  it('refuses what would take too long, saying what to reduce', async () => {
+    const { status, body } = await evaluate<Problem>({
+      constellation: { family: 'psk', order: 4096 }, esN0Db: Array.from({ length: 1001 }, (_, i) => i / 50), quantities: ['serAllPairs'],
+    })
+    expect([status, body.errors![0]!.path]).toEqual([422, 'quantities'])
+  })
+})
