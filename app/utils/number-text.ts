@@ -1,9 +1,11 @@
 /**
- * A number with all its digits as people write it: a true minus sign, and a power of ten only where it is far from 1.
+ * A number with all its digits as people write it: a true minus sign, and a power of ten where it is far from 1.
  * @param value finite
  */
 export function decimalText(value: number): string {
-  return String(Number(value.toPrecision(15))).replaceAll('-', '−').replace('e+', 'e')
+  const rounded = Number(value.toPrecision(15))
+  const far = rounded !== 0 && (Math.abs(rounded) < 1e-3 || Math.abs(rounded) >= 1e9)
+  return (far ? rounded.toExponential() : String(rounded)).replaceAll('-', '−').replace('e+', 'e')
 }
 
 /**
