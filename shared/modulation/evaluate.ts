@@ -2,8 +2,8 @@ import type { Constellation } from './constellation'
 import { paprDb } from './constellation'
 import { fromDecibels } from './decibels'
 import { ModulationError } from './errors'
-import { generate } from './families'
-import type { FamilyId, FamilyParameters } from './families'
+import { familyOf, generate } from './families'
+import type { FamilyParameters } from './families'
 import { analyse } from './geometry'
 import { requiredEsN0Db } from './required-snr'
 import { symbolErrorRates } from './symbol-error'
@@ -51,15 +51,15 @@ export function evaluate(request: EvaluationRequest): Evaluation {
   })
   const { target } = request
   if (target && target.quantity !== 'ser') throw new ModulationError('The target is a symbol error rate (ser).', ['target', 'quantity'])
-  const constellation = requestedConstellation(request.constellation)
-  const geometry = analyse(constellation)
+  const constellation = within(path => ['constellation', ...path], () => requestedConstellation(request.constellation))
+  const geometry = within(() => ['constellation', 'points'], () => analyse(constellation))
   const n0s = request.esN0Db.map(db => constellation.meanEnergy / fromDecibels(db))
 
   const curves: Evaluation['curves'] = { esN0Db: [...request.esN0Db] }
   const required: Partial<Record<SymbolErrorKind, number>> = {}
   for (const kind of quantities) {
     curves[kind] = kind === 'serExact' ? [...serExactCurve(geometry, n0s)] : n0s.map(n0 => symbolErrorRates[kind](geometry, n0))
-    if (target) required[kind] = requiredEsN0Db({ geometry, kind }, target.value)
+    if (target) required[kind] = within(() => ['target', 'value'], () => requiredEsN0Db({ geometry, kind }, target.value))
   }
   const { offsets, neighbours, relevantMean, nearestMean, minimumDistance } = geometry
   const { order, dimensions, bitsPerSymbol, meanEnergy, peakEnergy } = constellation
@@ -83,10 +83,15 @@ function checkedQuantities(quantities: readonly string[]): SymbolErrorKind[] {
 }
 
 function requestedConstellation({ family, labels, probabilities, ...parameters }: EvaluationRequest['constellation']): Constellation {
+  return generate(familyOf(family).id, parameters, { labels, probabilities })
+}
+
+/** Runs a part of the work; a refusal's path becomes one of the request. */
+function within<T>(place: (path: (string | number)[]) => (string | number)[], compute: () => T): T {
   try {
-    return generate(family as FamilyId, parameters, { labels, probabilities })
+    return compute()
   } catch (error) {
-    if (error instanceof ModulationError) throw new ModulationError(error.message, ['constellation', ...error.path])
+    if (error instanceof ModulationError) throw new ModulationError(error.message, place(error.path))
     throw error
   }
 }

@@ -1,0 +1,56 @@
+import { describe, expect, it } from 'vitest'
+import { ModulationError, coreVersion, evaluate } from '../../../shared/modulation'
+import type { EvaluationRequest } from '../../../shared/modulation'
+
+const points = [[1, 0], [-0.2, 1.1], [-1, -0.5], [0.1, -1]]
+const request: EvaluationRequest = {
+  constellation: { family: 'custom', points, labels: ['00', '01', '11', '10'], probabilities: [0.25, 0.25, 0.25, 0.25] },
+  esN0Db: [8, 12.5],
+  target: { quantity: 'ser', value: 1e-6 },
+  quantities: ['serUnion', 'serAllPairs', 'serNearest', 'serExact'],
+}
+const answer = evaluate(request)
+
+describe('an evaluation', () => {
+  it('answers with the fields of the contract', () => expect(Object.keys(answer)).toEqual([
+    'order', 'dimensions', 'bitsPerSymbol', 'meanEnergy', 'peakEnergy', 'paprDb', 'minimumDistance', 'neighbours', 'curves', 'requiredEsN0Db']))
+  it('takes points as given', () => expect(answer.meanEnergy).toBeCloseTo(1.1275, 14))
+  it('lists relevant neighbours', () => expect(answer.neighbours).toEqual({
+    relevantMean: 2.5, nearestMean: 0.5, relevant: [[1, 3], [0, 2, 3], [1, 3], [0, 1, 2]] }))
+  it('has a value for each SNR', () => expect(Object.values(answer.curves).map(curve => curve.length)).toEqual([2, 2, 2, 2, 2]))
+  it('has a required Es/N0 for each quantity', () => {
+    expect(Object.keys(answer.requiredEsN0Db!)).toEqual(['serUnion', 'serAllPairs', 'serNearest', 'serExact'])
+  })
+  it('has the three error rates when no quantities are named', () => {
+    expect(Object.keys(evaluate({ ...request, quantities: undefined }).curves)).toEqual(['esN0Db', 'serUnion', 'serNearest', 'serExact'])
+  })
+  it('has no required Es/N0 without a target', () => expect('requiredEsN0Db' in evaluate({ ...request, target: undefined })).toBe(false))
+  it('gives families unit mean energy', () => {
+    expect(evaluate({ constellation: { family: 'apsk', rings: [4, 12], ratios: [3.15] }, esN0Db: [10] }).meanEnergy).toBeCloseTo(1, 14)
+  })
+  it('survives JSON', () => expect(JSON.parse(JSON.stringify(answer))).toEqual(answer))
+})
+
+describe('a refused evaluation names the field', () => {
+  const cases: [string, Partial<EvaluationRequest>, (string | number)[]][] = [
+    ['family', { constellation: { family: 'spiral' } }, ['constellation', 'family']],
+    ['order', { constellation: { family: 'psk', order: 1 } }, ['constellation', 'order']],
+    ['coincident points', { constellation: { family: 'custom', points: [[0, 1], [0, 1]] } }, ['constellation', 'points', 1]],
+    ['three dimensions', { constellation: { family: 'custom', points: [[0, 1, 2], [0, 1, 3]] } }, ['constellation', 'points']],
+    ['quantity', { quantities: ['serExact', 'berExact'] }, ['quantities', 1]],
+    ['SNR', { esN0Db: [1, NaN] }, ['esN0Db', 1]],
+    ['target', { target: { quantity: 'ser', value: 0.95 } }, ['target', 'value']],
+  ]
+  it.each(cases)('%s', (_, change, path) => {
+    try {
+      evaluate({ ...request, ...change })
+      expect.unreachable()
+    } catch (error) {
+      expect((error as ModulationError).path).toEqual(path)
+    }
+  })
+})
+
+describe('the core', () => {
+  it('has a version', () => expect(coreVersion).toMatch(/^\d+\.\d+\.\d+$/))
+})
