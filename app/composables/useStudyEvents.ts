@@ -5,12 +5,14 @@ export type EventsState = 'connecting' | 'open' | 'lost'
 type Shared = { kind: 'message', data: string } | { kind: 'state', state: EventsState } | { kind: 'askState' }
 type Handlers = {
   onEvent: (event: StudyEvent) => void
-  /** what was shown may be out of date: read everything again */
+  /** read everything: first when events have begun to arrive, and again when some may have been missed */
   onReload: () => void
 }
 
 const firstWaitMs = 1000
 const longestWaitMs = 15_000
+/** How long the page waits for events to begin before it reads the rows without them. */
+const patienceMs = 1500
 
 /**
  * Events of one study. One page of a browser holds the stream and passes its messages on to the others
@@ -22,13 +24,21 @@ export function useStudyEvents(studyId: string, { onEvent, onReload }: Handlers)
   let channel: BroadcastChannel | null = null
   let source: EventSource | null = null
   let leading = false
+  let begun = false
   /** events may have passed that neither this page nor its last connection has seen */
   let gap = false
   let waitMs = firstWaitMs
   let retry: ReturnType<typeof setTimeout> | undefined
+  let patience: ReturnType<typeof setTimeout> | undefined
   const ending = new AbortController()
 
   const share = (message: Shared) => channel?.postMessage(message)
+
+  const read = () => {
+    begun = true
+    clearTimeout(patience)
+    onReload()
+  }
 
   const setState = (next: EventsState) => {
     state.value = next
@@ -37,7 +47,8 @@ export function useStudyEvents(studyId: string, { onEvent, onReload }: Handlers)
 
   const take = (data: string) => {
     const event = JSON.parse(data) as StudyEvent
-    if (event.reload) onReload()
+    if (event.reload || gap || !begun) read()
+    gap = false
     onEvent(event)
   }
 
@@ -47,9 +58,8 @@ export function useStudyEvents(studyId: string, { onEvent, onReload }: Handlers)
     source.onopen = () => {
       waitMs = firstWaitMs
       setState('open')
-      if (gap) onReload()
-      gap = false
     }
+    // A stream's first message says that it has joined: what is read from then on misses nothing.
     source.onmessage = ({ data }: MessageEvent<string>) => {
       share({ kind: 'message', data })
       take(data)
@@ -66,7 +76,7 @@ export function useStudyEvents(studyId: string, { onEvent, onReload }: Handlers)
 
   const lead = () => new Promise<void>((resolve) => {
     leading = true
-    gap = state.value !== 'connecting'
+    gap = begun
     connect()
     ending.signal.addEventListener('abort', () => resolve(), { once: true })
   })
@@ -75,10 +85,14 @@ export function useStudyEvents(studyId: string, { onEvent, onReload }: Handlers)
     if (data.kind === 'askState' && leading) share({ kind: 'state', state: state.value })
     if (leading) return
     if (data.kind === 'message') take(data.data)
-    if (data.kind === 'state') setState(data.state)
+    if (data.kind === 'state') {
+      setState(data.state)
+      if (!begun) read()
+    }
   }
 
   const start = () => {
+    patience = setTimeout(() => begun || read(), patienceMs)
     if (!('locks' in navigator)) {
       void lead()
       return
@@ -94,6 +108,7 @@ export function useStudyEvents(studyId: string, { onEvent, onReload }: Handlers)
   const stop = () => {
     ending.abort()
     clearTimeout(retry)
+    clearTimeout(patience)
     source?.close()
     channel?.close()
   }

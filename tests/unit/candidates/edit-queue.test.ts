@@ -13,7 +13,9 @@ describe('edits of one row', () => {
         resolve()
       }
     }))
-    const second = queue.run('a', async () => { log.push('second') })
+    const second = queue.run('a', async () => {
+      log.push('second')
+    })
     await Promise.resolve()
     release()
     await Promise.all([first, second])
@@ -23,14 +25,18 @@ describe('edits of one row', () => {
     const queue = new EditQueue()
     void queue.run('a', () => new Promise<void>(() => {}))
     let ran = false
-    await queue.run('b', async () => { ran = true })
+    await queue.run('b', async () => {
+      ran = true
+    })
     expect(ran).toBe(true)
   })
   it('go on after one that fails', async () => {
     const queue = new EditQueue()
     const failing = queue.run('a', () => Promise.reject(new Error('lost')))
     let ran = false
-    const following = queue.run('a', async () => { ran = true })
+    const following = queue.run('a', async () => {
+      ran = true
+    })
     await expect(failing).rejects.toThrow('lost')
     await following
     expect(ran).toBe(true)
