@@ -11,7 +11,7 @@ const coincidence = 1e-9
  * Checks number, length and finiteness of points.
  * @returns the dimension N
  */
-export function checkPoints(points: ArrayLike<number>[]): number {
+export function checkPoints(points: readonly ArrayLike<number>[]): number {
   if (!Array.isArray(points) || points.length < 2 || points.length > maximalOrder) {
     throw new ModulationError('A constellation has 2 to 4096 points.', ['points'])
   }

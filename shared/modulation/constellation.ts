@@ -37,7 +37,7 @@ export interface ConstellationOptions {
  * @throws ModulationError naming the offending field; coincident points are named both, counted from 1
  * @see methods §0
  */
-export function createConstellation(points: ArrayLike<number>[], options: ConstellationOptions = {}): Constellation {
+export function createConstellation(points: readonly ArrayLike<number>[], options: ConstellationOptions = {}): Constellation {
   const dimensions = checkPoints(points)
   const order = points.length
   const coordinates = new Float64Array(order * dimensions)

@@ -6,16 +6,16 @@ import { symbolErrorRates } from './symbol-error'
 import type { SymbolErrorKind } from './symbol-error'
 
 /** An error rate to invert: one of the core's, or any function of N0 with the energy its SNR axis refers to. */
-export type ErrorCurve =
-  | { geometry: Geometry, kind: SymbolErrorKind }
-  | {
+export type ErrorCurve
+  = | { geometry: Geometry, kind: SymbolErrorKind }
+    | {
     /** error rate at noise density N0 */
-    rate: (n0: number) => number
-    /** Es, signal units squared */
-    meanEnergy: number
-    /** whether the rate is known never to rise with the SNR; otherwise the axis is searched from above */
-    monotone?: boolean
-  }
+      rate: (n0: number) => number
+      /** Es, signal units squared */
+      meanEnergy: number
+      /** whether the rate is known never to rise with the SNR; otherwise the axis is searched from above */
+      monotone?: boolean
+    }
 
 /** Range of the search, dB. */
 const lowest = -30

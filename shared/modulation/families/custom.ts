@@ -12,7 +12,7 @@ export const custom: Family = {
   parameters: ['points'],
   validate: ({ points }) => {
     try {
-      createConstellation((points ?? []) as ArrayLike<number>[])
+      createConstellation(points ?? [])
       return []
     } catch (error) {
       if (error instanceof ModulationError) return [{ path: error.path, message: error.message }]

@@ -1,6 +1,6 @@
 import { describe, expect, it } from 'vitest'
-import { ModulationError, coreVersion, evaluate } from '../../../shared/modulation'
-import type { EvaluationRequest } from '../../../shared/modulation'
+import { coreVersion, evaluate } from '../../../shared/modulation'
+import type { EvaluationRequest, ModulationError } from '../../../shared/modulation'
 
 const points = [[1, 0], [-0.2, 1.1], [-1, -0.5], [0.1, -1]]
 const request: EvaluationRequest = {

@@ -10,19 +10,19 @@ function energyAtUnitDistance(id: FamilyId, order: number): number {
 const radius = (points: Float64Array, i: number) => Math.hypot(points[2 * i]!, points[2 * i + 1]!)
 
 describe('families', () => {
-  it('are listed in order', () => expect(families.map(({ id }) => id)).toEqual(['pam', 'psk', 'qam', 'crossQam', 'apsk', 'hexagonal', 'custom']))
-  it('are found by their identifier', () => expect(familyOf('crossQam').title).toBe('Cross QAM'))
+  it('are listed in order', () => expect(families.map(({ id }) => id)).toEqual(['pam', 'psk', 'qam', 'cross-qam', 'apsk', 'hexagonal', 'custom']))
+  it('are found by their identifier', () => expect(familyOf('cross-qam').title).toBe('Cross QAM'))
   it('refuse an unknown identifier', () => {
-    expect(() => familyOf('spiral')).toThrow('The family is one of pam, psk, qam, crossQam, apsk, hexagonal, custom.')
+    expect(() => familyOf('spiral')).toThrow('The family is one of pam, psk, qam, cross-qam, apsk, hexagonal, custom.')
   })
   const members: [FamilyId, FamilyParameters, number, string][] = [
     ['pam', { order: 3 }, 3, '3-PAM'],
     ['psk', { order: 4 }, 4, 'QPSK'],
     ['psk', { order: 8 }, 8, '8-PSK'],
     ['qam', { order: 8 }, 8, '8-QAM'],
-    ['crossQam', { order: 32 }, 32, 'Cross 32-QAM'],
-    ['crossQam', { order: 128 }, 128, 'Cross 128-QAM'],
-    ['crossQam', { order: 512 }, 512, 'Cross 512-QAM'],
+    ['cross-qam', { order: 32 }, 32, 'Cross 32-QAM'],
+    ['cross-qam', { order: 128 }, 128, 'Cross 128-QAM'],
+    ['cross-qam', { order: 512 }, 512, 'Cross 512-QAM'],
     ['apsk', { rings: [4, 12], ratios: [2.57] }, 16, '4+12-APSK 2.57'],
     ['apsk', { rings: [1, 7] }, 8, '1+7-APSK'],
     ['hexagonal', { order: 7 }, 7, 'Hexagonal 7'],
@@ -39,7 +39,7 @@ describe('points of the families', () => {
     expect(familyOf('qam').points({ order: 8 })).toEqual([[-3, -1], [-3, 1], [-1, -1], [-1, 1], [1, -1], [1, 1], [3, -1], [3, 1]])
   })
   it('cross 32 lacks the four corners', () => {
-    const points = familyOf('crossQam').points({ order: 32 })
+    const points = familyOf('cross-qam').points({ order: 32 })
     expect(points.filter(([x, y]) => Math.abs(x!) === 5 && Math.abs(y!) === 5)).toEqual([])
   })
   // 3GPP TS 38.211 §5.1: factors 1/√2, 1/√10, 1/√42, 1/√170
@@ -102,7 +102,7 @@ describe('refused parameters', () => {
     ['PSK of 4097', 'psk', { order: 4097 }, 'PSK has any whole number of points from 2 to 4096.', ['order']],
     ['PSK of 4.5', 'psk', { order: 4.5 }, 'PSK has any whole number of points from 2 to 4096.', ['order']],
     ['QAM of 12', 'qam', { order: 12 }, 'QAM has a power of two of points from 4 to 4096.', ['order']],
-    ['cross QAM of 64', 'crossQam', { order: 64 }, 'Cross QAM has 32, 128 or 512 points.', ['order']],
+    ['cross QAM of 64', 'cross-qam', { order: 64 }, 'Cross QAM has 32, 128 or 512 points.', ['order']],
     ['hexagonal NaN', 'hexagonal', { order: NaN }, 'Hexagonal has any whole number of points from 2 to 4096.', ['order']],
     ['APSK without rings', 'apsk', {}, 'Rings are the numbers of points on each, the innermost first, such as 4+12.', ['rings']],
     ['an empty first ring', 'apsk', { rings: [0, 4] }, 'The first ring has 1 (at the origin) to 4096 points.', ['rings', 0]],
