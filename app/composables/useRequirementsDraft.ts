@@ -4,8 +4,10 @@ import { requirements as schema } from '#shared/schemas/requirements'
 import type { Requirements } from '#shared/schemas/requirements'
 import type { Study } from '#shared/schemas/studies'
 
+/** How a value is called and shown where two of them are offered: its label, its unit, and 100 for per cent. */
+export type Words = { label: string, unit?: string, scale?: number }
 /** One value that differs from what is saved; `base` is what it was when the reader began to change it. */
-export type Edit = { path: Path, label: string, value: unknown, base: unknown }
+export type Edit = { path: Path, words: Words, value: unknown, base: unknown }
 /** A value that somebody else changed meanwhile, too. */
 export type Conflict = { edit: Edit, theirs: unknown }
 
@@ -46,12 +48,12 @@ export function useRequirementsDraft() {
     else unread.value.add(path.join('.'))
   }
 
-  const edit = (path: Path, value: unknown, label: string, pause = pauseMs) => {
+  const edit = (path: Path, value: unknown, words: Words, pause = pauseMs) => {
     const before = edits.value.find(entry => sameValue(entry.path, path))
     const base = before ? before.base : readAt(saved.value, path)
     // A new value of a whole list already holds what was changed inside it.
     const others = edits.value.filter(entry => !isWithin(entry.path, path))
-    edits.value = sameValue(base, value) && !before ? others : [...others, { path, value, label, base }]
+    edits.value = sameValue(base, value) && !before ? others : [...others, { path, value, words, base }]
     refused.value = []
     clearTimeout(timer)
     timer = setTimeout(() => void flush(), pause)
