@@ -37,6 +37,8 @@ export default defineNuxtConfig({
   nitro: {
     ...(build ? { output: { dir: `${build}/output` } } : {}),
     compressPublicAssets: true,
+    // The core decides close cases with big integers.
+    esbuild: { options: { target: 'es2022' } },
     serverAssets: [{ baseName: 'migrations', dir: '../drizzle' }],
     rollupConfig: { plugins: [threadForNitro()] },
   },
