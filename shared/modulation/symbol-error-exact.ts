@@ -20,15 +20,21 @@ const integral = new PieceIntegral()
 export function serExactCurve(geometry: Geometry, n0s: ArrayLike<number>): Float64Array {
   const { h, a, b, reach, weight, remaining } = geometry.pieces
   const sums = new Float64Array(n0s.length)
-  let open = Array.from(n0s, (n0, s) => {
-    requireNoiseDensity(n0)
-    return s
-  })
-  for (let n = 0; n < h.length && open.length > 0; n++) {
-    // A wedge holds at most ½·exp(−(least distance)²/N0), and later pieces are farther away.
-    open = open.filter(s => remaining[n]! * expNegative(-reach[n]! / n0s[s]!) > 2 * negligible * sums[s]!)
+  const open = Int32Array.from({ length: n0s.length }, (_, s) => s)
+  open.forEach(s => requireNoiseDensity(n0s[s]!))
+  let count = open.length
+  for (let n = 0; n < h.length && count > 0; n++) {
     integral.take(h[n]!, a[n]!, b[n]!)
-    for (const s of open) sums[s]! += weight[n]! * integral.at(n0s[s]!)
+    let kept = 0
+    for (let m = 0; m < count; m++) {
+      const s = open[m]!
+      const n0 = n0s[s]!
+      // A wedge holds at most ½·exp(−(least distance)²/N0), and later pieces are farther away.
+      if (remaining[n]! * expNegative(-reach[n]! / n0) <= 2 * negligible * sums[s]!) continue
+      sums[s]! += weight[n]! * integral.at(n0)
+      open[kept++] = s
+    }
+    count = kept
   }
   return sums
 }
