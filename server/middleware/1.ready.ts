@@ -6,9 +6,8 @@ export default defineEventHandler((event) => {
   if (databaseState() === 'ok') return
   const path = event.path.split('?')[0]!
   if (path === '/api/health' || path === '/api/openapi.json') return
-  const headers = { 'retry-after': '2' }
-  if (path === '/api' || path.startsWith('/api/')) problem(503, databaseReason(), { headers })
+  if (path === '/api' || path.startsWith('/api/')) problem(503, databaseReason(), { headers: { 'retry-after': '2' } })
   setResponseStatus(event, 503)
-  setResponseHeaders(event, { ...headers, 'content-type': 'text/html; charset=utf-8', 'cache-control': 'no-store' })
+  setResponseHeaders(event, { 'retry-after': 2, 'content-type': 'text/html;charset=utf-8', 'cache-control': 'no-store' })
   return waitingPage(databaseReason(), event.context.nonce)
 })
