@@ -1,5 +1,5 @@
+import { version } from '../../package.json'
 import { checkDatabase, databaseReason } from '../database/ready'
-import { version } from '../utils/settings'
 
 /** GET /api/health: whether the server and its database work. */
 export default defineEventHandler(async () => {
