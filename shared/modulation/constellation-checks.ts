@@ -4,6 +4,10 @@ import { ModulationError } from './errors'
 export const maximalOrder = 4096
 export const maximalDimensions = 8
 
+/** Fourth powers of coordinates decide the geometry: they must neither overflow nor vanish. */
+const largestCoordinate = 1e60
+const leastLargest = 1e-60
+
 /** Two points closer than this part of the largest |s| are the same point: methods §0. */
 const coincidence = 1e-9
 
@@ -24,8 +28,7 @@ export function checkPoints(points: readonly ArrayLike<number>[]): number {
       throw new ModulationError(`All points have the same number of coordinates: point ${i + 1} has ${point.length}, the first ${dimensions}.`, ['points', i])
     }
     for (let n = 0; n < dimensions; n++) {
-      // Beyond 1e150 squares overflow, and with them every energy.
-      if (!(Math.abs(point[n]!) <= 1e150)) throw new ModulationError('A coordinate is a finite number.', ['points', i, n])
+      if (!(Math.abs(point[n]!) <= largestCoordinate)) throw new ModulationError('A coordinate is a number from −1e60 to 1e60.', ['points', i, n])
     }
   })
   return dimensions
@@ -51,6 +54,7 @@ export function checkDistinct(points: Float64Array, dimensions: number): void {
     largest = Math.max(largest, energy)
   }
   if (largest === 0) throw new ModulationError('The points are not all at the origin: the mean energy is above 0.', ['points'])
+  if (Math.sqrt(largest) < leastLargest) throw new ModulationError('The largest point is at least 1e-60 from the origin.', ['points'])
   const radius = coincidence * Math.sqrt(largest)
   // |direction| = 1, so a projection differs by no more than the points do; the rest is rounding.
   const window = radius * (1 + 1e-5)

@@ -60,15 +60,18 @@ function distanceClassesOf(distance: number[], weights: number[], step: number):
 /** Rows whose three lengths agree to a step, together; in rising order of h, a and b. */
 function merged(rows: Row[], step: number): Row[] {
   const key = (length: number) => length === Infinity ? Infinity : Math.round(length / step)
-  const keyed = rows.map(row => ({ row, h: key(row.h), a: key(row.a), b: key(row.b) }))
-  keyed.sort((x, y) => x.h - y.h || x.a - y.a || (x.b === y.b ? 0 : x.b - y.b))
+  const h = Float64Array.from(rows, row => key(row.h))
+  const a = Float64Array.from(rows, row => key(row.a))
+  const b = Float64Array.from(rows, row => key(row.b))
+  const sorted = Uint32Array.from(rows.keys()).sort((x, y) =>
+    h[x]! - h[y]! || a[x]! - a[y]! || (b[x] === b[y] ? 0 : b[x]! - b[y]!))
   const result: Row[] = []
-  keyed.forEach((entry, n) => {
-    const before = keyed[n - 1]
-    if (before && before.h === entry.h && before.a === entry.a && before.b === entry.b) {
-      result[result.length - 1]!.weight += entry.row.weight
+  sorted.forEach((m, n) => {
+    const before = sorted[n - 1]
+    if (before !== undefined && h[before] === h[m] && a[before] === a[m] && b[before] === b[m]) {
+      result[result.length - 1]!.weight += rows[m]!.weight
     } else {
-      result.push({ ...entry.row })
+      result.push(rows[m]!)
     }
   })
   return result

@@ -101,3 +101,9 @@ function area(polygon: number[][]): number {
     return sum + (x! * v! - u! * y!) / 2
   }, 0)
 }
+
+describe('sizes of the coordinates', () => {
+  it.each([1e-60, 1e-9, 1e60])('%d times a grid has the grid\'s neighbours', (size) => {
+    expect(relevant([[0, 0], [size, 0], [size, size], [0, size]])).toEqual([[1, 3], [0, 2], [1, 3], [0, 2]])
+  })
+})
