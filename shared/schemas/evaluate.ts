@@ -32,7 +32,9 @@ export const evaluation = z.strictObject({
     quantity: z.literal('ser', { error: 'The target is a symbol error rate (ser).' }),
     value: numberBetween(1e-15, 0.5, 'Enter a target SER from 1e-15 to 0.5.'),
   }).optional(),
-  quantities: z.array(z.enum(evaluationQuantities, { error: `A quantity is one of ${evaluationQuantities.join(', ')}.` })).min(1).max(8)
+  quantities: z.array(z.enum(evaluationQuantities, {
+    error: ({ input }) => `The quantity ${String(input).slice(0, 40)} is not offered: a quantity is one of ${evaluationQuantities.join(', ')}.`,
+  })).min(1).max(8)
     .default(['serUnion', 'serNearest', 'serExact']),
 })
 export type EvaluationRequest = z.infer<typeof evaluation>
