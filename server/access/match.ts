@@ -13,7 +13,7 @@ interface Pattern { method: string, route: string, rule: Rule, parts: string[] }
 
 const partsOf = (path: string) => path.split('/').slice(1)
 
-const patterns: Pattern[] = Object.entries(rules).map(([route, rule]) => {
+const patterns: Pattern[] = Object.entries<Rule>(rules).map(([route, rule]) => {
   const [method = '', path = ''] = route.split(' ')
   return { method, route, rule, parts: partsOf(path) }
 // A path written out goes before one with a parameter in its place, as in the router.

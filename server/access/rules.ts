@@ -26,7 +26,7 @@ const edits = (of: Subject): Rule => ({ roles: ['owner', 'editor'], of, admin: f
 const owns = (of: Subject): Rule => ({ roles: ['owner'], of, admin: false })
 
 /** Every route of the API. One that is not listed is refused for everybody. */
-export const rules: Record<string, Rule> = {
+export const rules = {
   'GET /api/health': 'anyone',
   'GET /api/openapi.json': 'anyone',
   'POST /api/session': 'anyone',
@@ -79,4 +79,7 @@ export const rules: Record<string, Rule> = {
   'GET /api/studies/:id/export.json': reads('study'),
 
   'POST /api/evaluate': 'signedIn',
-}
+} satisfies Record<string, Rule>
+
+/** Key of a route: its method and its path. */
+export type Route = keyof typeof rules
