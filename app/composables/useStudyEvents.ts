@@ -92,7 +92,10 @@ export function useStudyEvents(studyId: string, { onEvent, onReload }: Handlers)
   }
 
   const start = () => {
-    patience = setTimeout(() => begun || read(), patienceMs)
+    patience = setTimeout(() => {
+      read()
+      gap = true
+    }, patienceMs)
     if (!('locks' in navigator)) {
       void lead()
       return

@@ -34,6 +34,7 @@ const placeDef = (seams: GridSeams): ColDef<Candidate> => ({
 const editorOf = (column: Column, seams: GridSeams): Partial<ColDef<Candidate>> => {
   if (column.kind === 'computed' || column.type === 'points') return {}
   return {
+    editable: ({ data }) => data !== undefined && isEditable(data, column, seams.canEdit()),
     cellEditor: GridEditor,
     cellEditorParams: {
       entry: { column, textOf: (row: Candidate) => seams.view(row, column).save?.text ?? column.text(row.inputs) },
@@ -58,7 +59,6 @@ const columnDef = (column: Column, seams: GridSeams, shown: ReadonlySet<string>)
   equals: () => false,
   cellClass: ({ data }) => data ? cellClasses(seams.view(data, column)) : [],
   tooltipValueGetter: ({ data }) => data ? cellSentence(seams.view(data, column)) ?? longText(cellText(seams.view(data, column))) : null,
-  editable: ({ data }) => data !== undefined && column.kind === 'input' && column.type !== 'points' && isEditable(data, column, seams.canEdit()),
   ...editorOf(column, seams),
   ...column.id === 'name'
     ? { cellRenderer: NameCell, cellRendererParams: { cell: { text: (row: Candidate) => cellText(seams.view(row, column)), pin: seams.pin } } }
