@@ -39,6 +39,10 @@ export default defineNuxtConfig({
     compressPublicAssets: true,
     // The core decides close cases with big integers.
     esbuild: { options: { target: 'es2022' } },
+    // ExcelJS reaches these through a conditional export that the tracing of files does not follow.
+    externals: {
+      traceInclude: ['async-function', 'async-generator-function', 'generator-function'].map(name => `node_modules/${name}/require.mjs`),
+    },
     serverAssets: [{ baseName: 'migrations', dir: '../drizzle' }],
     rollupConfig: { plugins: [threadForNitro()] },
   },
@@ -46,6 +50,10 @@ export default defineNuxtConfig({
   typescript: { strict: true },
   telemetry: false,
   hooks: {
+    // The hints would have every page fetch the grid and the charts; what a page needs is still preloaded.
+    'build:manifest': (manifest) => {
+      for (const resource of Object.values(manifest)) resource.prefetch = false
+    },
     'nitro:init': (nitro) => {
       writeRouteList(nitro)
       registerErrorHandler(nitro)
