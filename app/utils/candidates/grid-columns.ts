@@ -23,6 +23,8 @@ export type GridSeams = Pick<HeaderParams, 'sort' | 'onSort'> & {
 export const placeColumn = 'place'
 const characterPx = 7.3
 const paddingPx = 18
+/** a number with its sign, or its row's state in a word */
+const shortestNumber = 9
 const wholeWords = 'Click to select the row, with Shift to select up to it.'
 
 const placeDef = (seams: GridSeams): ColDef<Candidate> => ({
@@ -42,6 +44,12 @@ const editorOf = (column: Column, seams: GridSeams): Partial<ColDef<Candidate>> 
   }
 }
 
+/** Cells of numbers are as wide as their head, whose unit stands below its title; other cells as their column says. */
+const widthOf = ({ type, title, unit, width }: Column) => {
+  const characters = type === 'number' ? Math.max(title.length, unit?.length ?? 0, Math.min(width, shortestNumber)) : width
+  return Math.round(characters * characterPx + paddingPx)
+}
+
 const columnDef = (column: Column, seams: GridSeams, shown: ReadonlySet<string>): ColDef<Candidate> => ({
   colId: column.id,
   headerComponent: GridHeader,
@@ -49,7 +57,7 @@ const columnDef = (column: Column, seams: GridSeams, shown: ReadonlySet<string>)
   headerName: column.title,
   headerTooltip: column.meaning,
   headerClass: column.type === 'number' ? 'head-number' : undefined,
-  width: Math.round(column.width * characterPx + paddingPx),
+  width: widthOf(column),
   minWidth: 48,
   hide: !shown.has(column.id),
   pinned: column.id === 'name' ? 'left' : undefined,
