@@ -33,11 +33,11 @@ export async function validBody<T extends z.ZodType>(event: H3Event, schema: T, 
   return parsed(schema, fromJson(raw.toString()))
 }
 
-/** A body of unstated length; undefined as soon as it is too long. */
+/** A body of unstated length; undefined as soon as it is too long. The rest stays with the connection, which still has to carry the answer. */
 async function readChunks(request: IncomingMessage, limit: number): Promise<Buffer | undefined> {
   const chunks: Buffer[] = []
   let length = 0
-  for await (const chunk of request as AsyncIterable<Buffer>) {
+  for await (const chunk of request.iterator({ destroyOnReturn: false }) as AsyncIterable<Buffer>) {
     length += chunk.length
     if (length > limit) return undefined
     chunks.push(chunk)
