@@ -34,12 +34,19 @@ function inline(original: Element, copy: Element) {
  * A drawing of the page as a file of its own: colours of the light sheet on its paper, styles as attributes, a named face.
  * Elements marked `data-screen-only` stay away; those marked `data-paper-only` are shown, and `data-paper-height` of the
  * drawing makes room for them.
+ * @param layers of the drawing, the lowest first; it decides the size
  * @param title what the file says it is
  */
-export function drawingText(drawing: SVGSVGElement, title: string): DrawingText {
+export function drawingText(layers: readonly [SVGSVGElement, ...SVGSVGElement[]], title: string): DrawingText {
+  const [drawing] = layers
   const copy = drawing.cloneNode(true) as SVGSVGElement
   const paper = onLightSheet(() => {
     inline(drawing, copy)
+    for (const layer of layers.slice(1)) {
+      const over = layer.cloneNode(true) as SVGSVGElement
+      inline(layer, over)
+      copy.append(...over.children)
+    }
     return `rgb(${getComputedStyle(document.documentElement).getPropertyValue('--paper').trim().split(/\s+/).join(', ')})`
   })
   for (const element of copy.querySelectorAll('[data-screen-only]')) element.remove()

@@ -26,14 +26,34 @@ const candidatesOf = (id: string, text: string, line: readonly Place[]): Label[]
   })))
 }
 
+/** Points of the drawing's lines, by bands as high as a text: a text meets those of at most three bands. */
+class Dots {
+  private readonly bands = new Map<number, Place[]>()
+  private readonly bandOf = (y: number) => Math.floor(y / lettering.height)
+
+  constructor(lines: readonly (readonly Place[])[], frame: Frame) {
+    for (const dot of lines.flatMap(line => along(inFrame(line, frame), 5, 0))) {
+      const band = this.bands.get(this.bandOf(dot[1]))
+      if (band) band.push(dot)
+      else this.bands.set(this.bandOf(dot[1]), [dot])
+    }
+  }
+
+  * around({ top, bottom }: Frame) {
+    for (let band = this.bandOf(top); band <= this.bandOf(bottom); band++) yield this.bands.get(band) ?? []
+  }
+}
+
 /** What a place costs: lines under the text most, then lines that the leader crosses, then the leader's length. */
-const costOf = ({ box, at, x, anchor, y }: Label, dots: readonly Place[]) => {
+const costOf = ({ box, at, x, anchor, y }: Label, dots: Dots) => {
   let cost = Math.abs(x - at[0]) / 40
   const near = anchor === 'start' ? at[0] + 4 : x
   const far = anchor === 'start' ? x : at[0] - 4
-  for (const [u, v] of dots) {
-    if (u > box.left && u < box.right && v > box.top && v < box.bottom) cost += 3
-    else if (u > near && u < far && Math.abs(v - y) < 3) cost += 0.6
+  for (const band of dots.around(box)) {
+    for (const [u, v] of band) {
+      if (u > box.left && u < box.right && v > box.top && v < box.bottom) cost += 3
+      else if (u > near && u < far && Math.abs(v - y) < 3) cost += 0.6
+    }
   }
   return cost
 }
@@ -53,7 +73,7 @@ export function placeLabels(
   taken: readonly Frame[],
 ): Label[] {
   const seen = lines.map(({ id, text, line }) => ({ id, text: shortened(text), line: inFrame(line, frame) }))
-  const dots = crossed.flatMap(line => along(inFrame(line, frame), 5, 0))
+  const dots = new Dots(crossed, frame)
   const labels: Label[] = []
   for (const { id, text, line } of seen.sort((a, b) => (a.line[0]?.[0] ?? 0) - (b.line[0]?.[0] ?? 0))) {
     let best: Label | null = null
