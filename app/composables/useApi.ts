@@ -27,8 +27,7 @@ export function useApi() {
         method, body, query, signal, retry: 0,
         headers: version === undefined ? {} : { 'if-match': `"${version}"` },
       }) as T
-    }
-    catch (thrown) {
+    } catch (thrown) {
       const problem = problemOf(thrown)
       const here = router.currentRoute.value
       if (import.meta.client && problem instanceof ApiProblem && problem.status === 401 && here.path !== '/sign-in') {

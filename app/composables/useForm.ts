@@ -13,12 +13,10 @@ export function useForm() {
     try {
       await action()
       return true
-    }
-    catch (thrown) {
+    } catch (thrown) {
       problem.value = thrown instanceof ApiProblem ? thrown : new ApiProblem(0, { detail: sentenceOf(thrown) })
       return false
-    }
-    finally {
+    } finally {
       busy.value = false
     }
   }

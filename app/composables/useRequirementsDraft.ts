@@ -92,11 +92,9 @@ export function useRequirementsDraft() {
     try {
       await store.change({ requirements: applied(saved.value, sent) })
       edits.value = edits.value.filter(entry => !sent.some(other => sameValue(other, entry)))
-    }
-    catch (thrown) {
+    } catch (thrown) {
       fail(thrown)
-    }
-    finally {
+    } finally {
       saving.value = false
     }
     if (!failure.value && !conflicts.value.length) await flush()

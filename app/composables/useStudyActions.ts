@@ -12,8 +12,7 @@ export function useStudyActions(refresh: () => Promise<unknown>) {
   const attempt = async (action: () => Promise<unknown>) => {
     try {
       await action()
-    }
-    catch (thrown) {
+    } catch (thrown) {
       notices.tell(sentenceOf(thrown), { tone: 'error' })
     }
     await refresh()

@@ -23,8 +23,7 @@ export const useNoticesStore = defineStore('notices', () => {
     dismiss(notice.id)
     try {
       await notice.undo?.()
-    }
-    catch (thrown) {
+    } catch (thrown) {
       tell(sentenceOf(thrown), { tone: 'error' })
     }
   }

@@ -21,8 +21,7 @@ export function changesOf(from: unknown, to: unknown, limit = 12): Change[] {
     if ((isObject(a) || isObject(b)) && (isObject(a) || a === undefined || a === null) && (isObject(b) || b === undefined || b === null)) {
       const keys = new Set([...Object.keys(a ?? {}), ...Object.keys(b ?? {})])
       for (const key of keys) compare((a as Record<string, unknown> | undefined)?.[key], (b as Record<string, unknown> | undefined)?.[key], [...path, words(key)])
-    }
-    else {
+    } else {
       const change = { what: path.join(' · '), from: shown(a), to: shown(b) }
       if (change.from !== change.to) found.push(change)
     }

@@ -10,8 +10,7 @@ export type CaseTable = { result: LinkCaseResult, sentence?: undefined } | { res
 export function caseTable(lines: readonly LinkLine[]): CaseTable {
   try {
     return { result: linkCase(lines) }
-  }
-  catch (thrown) {
+  } catch (thrown) {
     return { sentence: thrown instanceof Error ? thrown.message : String(thrown) }
   }
 }
