@@ -40,8 +40,9 @@ async function mayRead(studyId: string, { account, sessionId }: Caller): Promise
 export async function streamEvents(event: H3Event, studyId: string, caller: Caller): Promise<void> {
   const { res } = event.node
   const userId = caller.account.id
+  // The connection ends with its stream: a caller that took it up again would find it closed.
   res.writeHead(200, {
-    'content-type': 'text/event-stream; charset=utf-8', 'cache-control': 'no-store', 'x-accel-buffering': 'no', 'connection': 'keep-alive',
+    'content-type': 'text/event-stream; charset=utf-8', 'cache-control': 'no-store', 'x-accel-buffering': 'no', 'connection': 'close',
   })
   res.write(`retry: ${retryAfter}\n\n`)
   const ended = new Promise<void>(resolve => res.once('close', resolve))

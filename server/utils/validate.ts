@@ -33,16 +33,19 @@ export async function validBody<T extends z.ZodType>(event: H3Event, schema: T, 
   return parsed(schema, fromJson(raw.toString()))
 }
 
-/** A body of unstated length; undefined as soon as it is too long. The rest stays with the connection, which still has to carry the answer. */
+/** A body of unstated length; undefined when it is too long. */
 async function readChunks(request: IncomingMessage, limit: number): Promise<Buffer | undefined> {
   const chunks: Buffer[] = []
   let length = 0
   for await (const chunk of request.iterator({ destroyOnReturn: false }) as AsyncIterable<Buffer>) {
-    length += chunk.length
-    if (length > limit) return undefined
     chunks.push(chunk)
+    length += chunk.length
+    if (length > limit) break
   }
-  return Buffer.concat(chunks)
+  if (length <= limit) return Buffer.concat(chunks)
+  // Left unread, the rest would block the connection, which still has to carry the answer.
+  request.resume()
+  return undefined
 }
 
 function fromJson(text: string): unknown {
