@@ -61,8 +61,10 @@ export function useRowAnswers<T>(
     }
     for (const row of wanted) {
       const answer = kept.get(row.id)
-      // Before its computation ends a changed row has an older state's drawing at best.
-      if (answer?.fresh && (row.state === 'computing' || answer.key !== keyOf(row))) kept.set(row.id, { ...answer, key: '', fresh: false })
+      // Before its computation ends a changed row has an older state's drawing at best, and so has an answer on its way.
+      if (!answer || (row.state !== 'computing' && answer.key === keyOf(row))) continue
+      running.get(row.id)?.abort()
+      kept.set(row.id, { ...answer, key: '', fresh: false })
     }
     answers.value = kept
     for (const row of wanted) {

@@ -50,6 +50,13 @@ describe('answers for rows', () => {
     await bench.set([row()])
     expect(bench.asked).toHaveLength(2)
   })
+  it('on their way are not taken when the computation begins anew', async () => {
+    await bench.set([row({ version: 2 })])
+    await bench.set([row({ version: 2, state: 'computing' })])
+    await bench.set([row({ version: 2 })])
+    await bench.settled(() => bench.asked[1]!.answer('too early'))
+    expect([bench.asked.length, bench.answers.value.get('a')?.value]).toEqual([3, 'first'])
+  })
   it('that a newer change has overtaken are not taken', async () => {
     await bench.set([row({ version: 2 })])
     await bench.set([row({ version: 3 })])
