@@ -2,6 +2,7 @@ import { closeDatabase, databaseUrl } from '../database/client'
 import { migrate } from '../database/migrate'
 import { readMigrations } from '../database/migration-files'
 import { watchDatabase } from '../database/ready'
+import { seedFirstAdministrator } from '../database/first-administrator'
 import { seedAccounts } from '../database/seed-accounts'
 import { purgeStudies } from '../services/study-removal'
 import { pruneSessions } from '../services/sessions'
@@ -30,6 +31,7 @@ export default defineNitroPlugin((nitro) => {
     const steps = await migrate({ adminUrl: process.env.DATABASE_ADMIN_URL || url, url, migrations })
     if (steps > 0) console.info(`The database's tables are up to date: ${steps} steps.`)
     await seedAccounts()
+    await seedFirstAdministrator()
     await upkeep()
   }
 

@@ -74,12 +74,12 @@ const judge = (mustHave: VerdictLimit, values: VerdictValues): VerdictCheck => {
   const [shown, distance] = shownNumbers(value, Math.abs(by), { passes, sense, digits, down: signed, limit })
   const where = kind === 'margin' && values.decidingCase ? ` (${values.decidingCase})` : ''
   const side = passes ? 'to spare' : sense === 'atLeast' ? 'short' : 'over'
-  return { id, kind, passes, by: by === 0 ? 0 : by, sentence: `${words} ${decimal(shown, digits, signed)} ${unit}${where}, ${decimal(distance, digits, false)} ${unit} ${side}` }
+  return { id, kind, passes, by: by === 0 ? 0 : by, sentence: `${words} ${decimal(distance, digits, false)} ${unit} ${side} at ${decimal(shown, digits, signed)} ${unit}${where}` }
 }
 
 /**
  * Whether a row meets every must-have, on unrounded numbers, in words:
- * "passes", or "fails R2: net bit rate 16.0 Mbit/s, 4.0 Mbit/s short" with one part for each that fails.
+ * "passes", or "fails R2: net bit rate 4.0 Mbit/s short at 16.0 Mbit/s" with one part for each that fails.
  * A number that misses its limit by rounding error alone meets it; one that the row does not have fails.
  * @see methods §7
  */

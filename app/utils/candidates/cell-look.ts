@@ -1,4 +1,5 @@
 import type { Candidate } from '#shared/schemas/candidates'
+import type { CandidateValues } from '#shared/schemas/values'
 import { formatNumber, plain } from '#shared/columns'
 import type { Column, ColumnContext } from '#shared/columns'
 import type { CellSave } from './cell-saves'
@@ -51,7 +52,11 @@ export function cellSentence(view: CellView): string | null {
   return errorAt(row, column) ?? (column.kind === 'input' ? column.unused?.(row.inputs) ?? null : null)
 }
 
-const sides = new Set(['verdict', 'surplus'])
+/** Whether a judged cell stands on the right side: the row by its must-haves, a surplus by its own sign. */
+const judged: Record<string, (values: CandidateValues) => boolean | null> = {
+  verdict: values => values.passes,
+  surplus: values => values.surplusDb === null ? null : values.surplusDb >= 0,
+}
 
 /** Classes of a cell: what it is, and what state it is in. */
 export function cellClasses(view: CellView): string[] {
@@ -63,7 +68,8 @@ export function cellClasses(view: CellView): string[] {
   if (save) classes.push(save.state === 'saving' ? 'cell-saving' : 'cell-refused')
   else if (errorAt(row, column)) classes.push('cell-refused')
   else if (column.kind === 'input' && column.unused?.(row.inputs)) classes.push('cell-unused')
-  if (!without && row.values && sides.has(column.id)) classes.push(row.values.passes ? 'cell-right-side' : 'cell-wrong-side')
+  const right = without || !row.values ? null : judged[column.id]?.(row.values) ?? null
+  if (right !== null) classes.push(right ? 'cell-right-side' : 'cell-wrong-side')
   return classes
 }
 

@@ -13,8 +13,8 @@ const values: CandidateValues = {
   decidingCase: 'faded', availableEsN0Db: 23.28, availableEbN0Db: 17.26, marginDb: 0.86, requiredMarginDb: 1, surplusDb: -0.14,
   implementationLossDb: 1.5, rollOff: 0.25, receiverThresholdDbm: -79.1,
   serUnion: 1e-9, serAllPairs: 1e-9, serNearest: 1e-9, serExact: 1e-9,
-  passes: false, verdict: 'fails R1: margin +0.86 dB (faded), 0.14 dB short',
-  checks: [{ id: 'R1', kind: 'margin', passes: false, by: -0.14, sentence: 'margin +0.86 dB (faded), 0.14 dB short' }],
+  passes: false, verdict: 'fails R1: margin 0.14 dB short at +0.86 dB (faded)',
+  checks: [{ id: 'R1', kind: 'margin', passes: false, by: -0.14, sentence: 'margin 0.14 dB short at +0.86 dB (faded)' }],
 }
 
 /** A computed row of 16-QAM with some values and inputs replaced; numbers of the demonstration study, rounded. */
