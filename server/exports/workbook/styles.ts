@@ -26,6 +26,8 @@ export const proseStyle: Partial<ExcelJS.Style> = { alignment: { wrapText: true,
 
 /** Applies a style to every cell of a row that holds something, and finishes the row. */
 export function styleRow(row: ExcelJS.Row, style: Partial<ExcelJS.Style>) {
-  row.eachCell((cell) => { cell.style = { ...cell.style, ...style } })
+  row.eachCell((cell) => {
+    cell.style = { ...cell.style, ...style }
+  })
   return row
 }
