@@ -68,6 +68,11 @@ describe('the table of routes', () => {
       Object.keys(methods).map(method => `${method.toUpperCase()} ${path.replace(/\{(\w+)\}/g, ':$1')}`))
     expect(described.sort()).toEqual(Object.keys(expected).sort())
   })
+  it('is described by schemas that the description has', async () => {
+    const { body } = await anonymous().get<{ components: { schemas: object } }>('/api/openapi.json')
+    const references = new Set([...JSON.stringify(body).matchAll(/"\$ref":"#\/components\/schemas\/([^"]+)"/g)].map(([, name]) => name!))
+    expect([references.size > 20, [...references].filter(name => !(name in body.components.schemas))]).toEqual([true, []])
+  })
   it('has a summary of each route in the description', () => {
     expect(routes.filter(route => !/^[A-Z].*\.$/.test(operations[route].summary))).toEqual([])
   })
