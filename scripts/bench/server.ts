@@ -21,11 +21,12 @@ type Call = Awaited<ReturnType<typeof signedIn>>
 
 /** Calls back for each message of a study's events. */
 async function listen(call: Call, study: string, receive: (event: StudyEvent) => void): Promise<() => Promise<void>> {
-  const reader = (await call<ReadableStream<Uint8Array>>('GET', `/api/studies/${study}/events`)).pipeThrough(new TextDecoderStream()).getReader()
+  const reader = (await call<ReadableStream<Uint8Array>>('GET', `/api/studies/${study}/events`)).getReader()
   const read = async () => {
+    const decoder = new TextDecoder()
     let text = ''
     for (let part = await reader.read(); !part.done; part = await reader.read()) {
-      const messages = (text + part.value).split('\n\n')
+      const messages = (text + decoder.decode(part.value, { stream: true })).split('\n\n')
       text = messages.pop()!
       for (const message of messages) {
         const data = message.split('\n').find(line => line.startsWith('data: '))
@@ -50,7 +51,9 @@ async function sweepTime(call: Call): Promise<Row> {
   const study = await newStudy(call, 'A thousand rows')
   const done = new Set<string>()
   let finish = () => {}
-  const finished = new Promise<void>((resolve) => { finish = resolve })
+  const finished = new Promise<void>((resolve) => {
+    finish = resolve
+  })
   const stop = await listen(call, study, ({ sweep }) => {
     if (sweep?.state === 'done') done.add(sweep.id)
     if (done.size === sweeps.length) finish()

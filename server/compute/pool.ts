@@ -30,10 +30,12 @@ interface Job {
   reject: (error: unknown) => void
 }
 
-/** One worker is always left to interactive work, so that a sweep never delays an edit by more than its own time. */
 const threads = Math.min(8, Math.max(2, availableParallelism()))
 const waiting: Record<Priority, Job[]> = { interactive: [], bulk: [] }
 const running: Record<Priority, number> = { interactive: 0, bulk: 0 }
+/** While somebody works, and this long after (milliseconds), bulk work leaves one worker free for them. */
+const attention = 5000
+let lastInteractive = -Infinity
 let pool: Piscina | undefined
 
 /** Made when it is first needed: while modules load, the built server does not yet know where its worker is. */
@@ -47,7 +49,8 @@ function usePool(): Piscina {
 
 function next(): Job | undefined {
   if (running.interactive + running.bulk >= threads) return undefined
-  return waiting.interactive.shift() ?? (running.bulk < threads - 1 ? waiting.bulk.shift() : undefined)
+  const bulkThreads = performance.now() - lastInteractive < attention ? threads - 1 : threads
+  return waiting.interactive.shift() ?? (running.bulk < bulkThreads ? waiting.bulk.shift() : undefined)
 }
 
 function pump() {
@@ -82,6 +85,7 @@ export function compute<K extends TaskKind>(task: Task<K>, options: ComputeOptio
     if (signal?.aborted) return reject(signal.reason)
     const job: Job = { task, options, left: attempts, resolve: answer => resolve(answer as Tasks[K]['answer']), reject }
     waiting[priority].push(job)
+    if (priority === 'interactive') lastInteractive = performance.now()
     signal?.addEventListener('abort', () => {
       const place = waiting[priority].indexOf(job)
       if (place < 0) return

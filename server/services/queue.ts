@@ -20,10 +20,11 @@ export interface Computation {
   rows: WaitingRow[]
 }
 
-/** Rows computed in one message: a few tens of milliseconds of one worker. */
+/** Rows computed in one message, and points of all of them together: a few tens of milliseconds of one worker. */
 const batchSize = 12
-/** Batches on their way at a time: one that is computed and one that is next. */
-const batchesAtOnce = 2
+const batchPoints = 2500
+/** Batches on their way at a time: those that are computed and the next. */
+const batchesAtOnce = 3
 /** From so many rows at a time on, nobody waits for a single one of them. */
 const manyRows = 24
 /** Keys asked for in one statement. */
@@ -103,7 +104,7 @@ function pump() {
 }
 
 async function batch() {
-  const some = [...take(batchSize)]
+  const some = [...take()]
   batches++
   try {
     const evaluated = await compute({ kind: 'rows', asked: some.map(one => one.inputs) }, { priority: 'bulk', attempts: 1 })
@@ -126,10 +127,20 @@ async function again(computation: Computation) {
   }
 }
 
-function* take(count: number) {
+/** The next rows of a batch: one at least. */
+function* take() {
+  let rows = 0
+  let points = 0
   for (const [key, computation] of bulk) {
-    if (count-- === 0) return
+    points += pointsOf(computation.inputs)
+    if (rows > 0 && (rows === batchSize || points > batchPoints)) return
+    rows++
     bulk.delete(key)
     yield computation
   }
+}
+
+function pointsOf({ constellation }: CanonicalInputs): number {
+  const { order, rings, points } = constellation?.parameters ?? {}
+  return points?.length ?? order ?? rings?.reduce((sum, n) => sum + n, 0) ?? 0
 }

@@ -22,7 +22,7 @@ const coordinate = numberBetween(-1e9, 1e9, 'A coordinate is a number from −1e
  */
 export const candidateInputs = z.strictObject({
   name: name('the candidate\'s name'),
-  family: z.enum(familyIds as [CandidateFamily, ...CandidateFamily[]], { error: 'Choose a family of the list.' }),
+  family: z.enum(familyIds, { error: 'Choose a family of the list.' }),
   /** number of points M */
   order: wholeBetween(2, 4096, 'Order M is a whole number from 2 to 4096.').nullable(),
   /** APSK: points on each ring, the innermost first */

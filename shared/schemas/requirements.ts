@@ -56,8 +56,8 @@ export const available = z.discriminatedUnion('from', [
     from: z.literal('link'),
     lines: z.array(linkLine).max(60, 'A link budget has at most 60 common lines.'),
     cases: z.array(linkCase).min(1, 'A link budget has at least one case.').max(12, 'A link budget has at most 12 cases.')
-      .refine(unique(c => c.name.toLowerCase()), 'Every case has a name of its own.')
-      .refine(unique(c => c.id), 'Every case has an identifier of its own.'),
+      .refine(unique<{ name: string }>(c => c.name.toLowerCase()), 'Every case has a name of its own.')
+      .refine(unique<{ id: string }>(c => c.id), 'Every case has an identifier of its own.'),
   }),
   z.strictObject({ from: z.literal('noiseDensity'), n0: positive(1e12, 'Enter N0 above 0, in signal units squared.') }),
 ], { error: 'Available Es/N0 is entered, from the link budget, or from N0.' })
@@ -77,8 +77,8 @@ export const requirements = z.strictObject({
     value: numberBetween(1e-15, 0.5, 'Enter a target SER from 1e-15 to 0.5.'),
   }),
   mustHaves: z.array(mustHave).max(20, 'A study has at most 20 must-haves.')
-    .refine(unique(m => m.id.toLowerCase()), 'Every must-have has an ID of its own.')
-    .refine(unique(m => m.kind), 'Each kind of must-have is stated once.'),
+    .refine(unique<{ id: string }>(m => m.id.toLowerCase()), 'Every must-have has an ID of its own.')
+    .refine(unique<{ kind: string }>(m => m.kind), 'Each kind of must-have is stated once.'),
   heldConstant: z.strictObject({
     kind: z.enum(Object.keys(heldConstantKinds) as HeldConstant[], { error: 'Hold the symbol rate, the occupied bandwidth or the net bit rate constant.' }),
     /** Msymbol/s, MHz or Mbit/s by kind */

@@ -211,7 +211,7 @@ describe('pages of rows', () => {
     await owner.post(`/api/studies/${own}/candidates`, { items: Array.from({ length: 25 }, (_, i) => ({ name: `row ${i + 1}` })) })
     const names: string[] = []
     for (let next: string | null = ''; next !== null;) {
-      const { body } = await owner.get<Rows>(`/api/studies/${own}/candidates?limit=10${next ? `&cursor=${next}` : ''}`)
+      const { body }: { body: Rows } = await owner.get<Rows>(`/api/studies/${own}/candidates?limit=10${next ? `&cursor=${next}` : ''}`)
       names.push(...body.items.map(row => row.inputs.name))
       next = body.next
     }

@@ -5,7 +5,9 @@ import { signIn } from '../support/client'
 import type { Client } from '../support/client'
 
 let observer: Client
-beforeAll(async () => { observer = await signIn('observer') })
+beforeAll(async () => {
+  observer = await signIn('observer')
+})
 
 const evaluate = <Body = Evaluation>(body: object) => observer.post<Body>('/api/evaluate', body)
 const points = { family: 'custom', points: [[1, 0], [-0.2, 1.1], [-1, -0.5], [0.1, -1]] }

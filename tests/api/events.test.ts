@@ -7,7 +7,9 @@ import { change, ownRow, ownStudy, Stream } from './own-study'
 import type { Rows } from './own-study'
 
 let owner: Client
-beforeAll(async () => { owner = await signIn('owner') })
+beforeAll(async () => {
+  owner = await signIn('owner')
+})
 
 describe('events of a study', () => {
   it('begin with the number that a page has to come back with', async () => {

@@ -25,7 +25,7 @@ export async function ownRow(client: Client, study: string, inputs: object = {})
 export async function allRows(client: Client, study: string): Promise<Candidate[]> {
   const rows: Candidate[] = []
   for (let next: string | null = ''; next !== null;) {
-    const { body } = await client.get<Rows>(`/api/studies/${study}/candidates?limit=2000${next ? `&cursor=${next}` : ''}`)
+    const { body }: { body: Rows } = await client.get<Rows>(`/api/studies/${study}/candidates?limit=2000${next ? `&cursor=${next}` : ''}`)
     rows.push(...body.items)
     next = body.next
   }
@@ -54,7 +54,7 @@ export class Stream {
   /** Opens it; it is joined to the study's events when this resolves. */
   static async open(client: Client, study: string, lastEventId?: number): Promise<Stream> {
     const caller = new AbortController()
-    const headers = lastEventId === undefined ? {} : { 'last-event-id': String(lastEventId) }
+    const headers = new Headers(lastEventId === undefined ? [] : [['last-event-id', String(lastEventId)]])
     const response = await client.fetch(`/api/studies/${study}/events`, { signal: caller.signal, headers })
     if (response.status !== 200) throw new Error(`The stream was refused: ${response.status} ${await response.text()}`)
     const stream = new Stream(response.body!, caller)
@@ -64,7 +64,11 @@ export class Stream {
 
   /** Waits until what has been received satisfies a condition. */
   async until(condition: () => boolean): Promise<void> {
-    while (!condition()) await new Promise<void>((resolve) => { this.wake = resolve })
+    while (!condition()) {
+      await new Promise<void>((resolve) => {
+        this.wake = resolve
+      })
+    }
   }
 
   /** The last state of each row that has been received. */
@@ -78,10 +82,12 @@ export class Stream {
   }
 
   private async read(body: ReadableStream<Uint8Array>) {
+    const decoder = new TextDecoder()
+    const reader = body.getReader()
     let text = ''
     try {
-      for await (const chunk of body.pipeThrough(new TextDecoderStream())) {
-        const messages = (text + chunk).split('\n\n')
+      for (let part = await reader.read(); !part.done; part = await reader.read()) {
+        const messages = (text + decoder.decode(part.value, { stream: true })).split('\n\n')
         text = messages.pop()!
         this.received.push(...messages.flatMap(parse))
         this.wake()

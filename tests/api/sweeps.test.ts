@@ -7,7 +7,9 @@ import { allRows, ownStudy, Stream } from './own-study'
 import type { Refused } from './own-study'
 
 let owner: Client
-beforeAll(async () => { owner = await signIn('owner') })
+beforeAll(async () => {
+  owner = await signIn('owner')
+})
 
 const rings = { family: 'apsk', rings: [4, 12] }
 const ratios = (step: number) => ({ field: 'ratios.0', start: 2, stop: 3, step })
