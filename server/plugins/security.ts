@@ -33,6 +33,11 @@ export default defineNitroPlugin((nitro) => {
     if (api && event.node.req.method === 'HEAD') event.node.req.method = 'GET'
   })
 
+  // Which framework answers is nobody's business.
+  nitro.hooks.hook('render:response', (response) => {
+    delete response.headers?.['x-powered-by']
+  })
+
   // The body is left alone: whatever it came from, only tags of the frame are ours.
   nitro.hooks.hook('render:html', (html, { event }) => {
     const nonce = event.context.nonce

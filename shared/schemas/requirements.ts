@@ -1,4 +1,6 @@
 import { z } from 'zod'
+import { ModulationError } from '../modulation/errors'
+import { linkCase as sumUp } from '../modulation/link'
 import { decibels, name, numberBetween, text } from './common'
 
 /** Must-haves of a study; each kind has one unit. */
@@ -49,6 +51,22 @@ export type LinkCase = z.infer<typeof linkCase>
 
 const unique = <T>(key: (item: T) => string) => (items: T[]) => new Set(items.map(key)).size === items.length
 
+/** Refuses lines that contradict each other within a case, at their own place: the common lines come first in every case. */
+function refuseContradictions({ lines, cases }: { lines: LinkLine[], cases: LinkCase[] }, refine: z.RefinementCtx) {
+  cases.forEach((item, i) => {
+    try {
+      sumUp([...lines, ...item.lines])
+    } catch (error) {
+      if (!(error instanceof ModulationError)) throw error
+      const [, index, ...field] = error.path
+      const path = typeof index !== 'number'
+        ? ['cases', i, 'lines']
+        : index < lines.length ? ['lines', index, ...field] : ['cases', i, 'lines', index - lines.length, ...field]
+      refine.addIssue({ code: 'custom', path, message: error.message })
+    }
+  })
+}
+
 /** Where a row's available Es/N0 comes from. */
 export const available = z.discriminatedUnion('from', [
   z.strictObject({ from: z.literal('entered'), esN0Db: decibels }),
@@ -58,7 +76,7 @@ export const available = z.discriminatedUnion('from', [
     cases: z.array(linkCase).min(1, 'A link budget has at least one case.').max(12, 'A link budget has at most 12 cases.')
       .refine(unique<{ name: string }>(c => c.name.toLowerCase()), 'Every case has a name of its own.')
       .refine(unique<{ id: string }>(c => c.id), 'Every case has an identifier of its own.'),
-  }),
+  }).superRefine(refuseContradictions),
   z.strictObject({ from: z.literal('noiseDensity'), n0: positive(1e12, 'Enter N0 above 0, in signal units squared.') }),
 ], { error: 'Available Es/N0 is entered, from the link budget, or from N0.' })
 export type Available = z.infer<typeof available>
