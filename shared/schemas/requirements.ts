@@ -53,6 +53,7 @@ const unique = <T>(key: (item: T) => string) => (items: T[]) => new Set(items.ma
 
 /** Refuses lines that contradict each other within a case, at their own place: the common lines come first in every case. */
 function refuseContradictions({ lines, cases }: { lines: LinkLine[], cases: LinkCase[] }, refine: z.RefinementCtx) {
+  if (refine.issues.length > 0) return
   cases.forEach((item, i) => {
     try {
       sumUp([...lines, ...item.lines])

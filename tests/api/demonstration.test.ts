@@ -25,8 +25,9 @@ async function computedRows(study: string): Promise<Candidate[]> {
 }
 
 describe('the demonstration', () => {
-  it('has three studies', () => expect(studies.map(study => study.name).toSorted()).toEqual(
-    ['Buoy to shore', 'Ridge station to valley gateway', 'Ring ratios of sixteen points']))
+  // Other tests make studies of their own beside them.
+  it('has three studies', () => expect(studies.map(study => study.name)).toEqual(expect.arrayContaining(
+    ['Buoy to shore', 'Ridge station to valley gateway', 'Ring ratios of sixteen points'])))
   it('passes 5+11, hexagonal 16, 1+5+10, the usual 4+12 at small ratios and 6+10', async () => {
     const rows = await computedRows(named('Ridge station to valley gateway').id)
     expect(rows.filter(row => row.values!.passes).map(row => row.inputs.name)).toEqual([
