@@ -1,5 +1,0 @@
-/** A worker's entry: the function gives its file URL (see thread-plugin.ts). */
-declare module '*?thread' {
-  const url: () => string
-  export default url
-}
