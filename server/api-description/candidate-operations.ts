@@ -6,7 +6,7 @@ import { sweep, sweepCancellation, sweepCreation } from '#shared/schemas/sweeps'
 import { candidateConstellation, candidateCurves } from '#shared/schemas/values'
 import { tagged } from './operation'
 
-const stale = 'The row has another version now; `current` is the row as it is.'
+const stale = 'The row has another version now; `current` is the row as it is, `sent` the change.'
 const rows = listOf(candidate)
 
 export const candidateOperations = tagged('Candidates', {

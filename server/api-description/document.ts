@@ -10,7 +10,7 @@ import type { Operation } from './operation'
 
 const about = `JSON in, JSON out. Errors are application/problem+json (RFC 9457); bad input is 422 with the path of each mistake and a sentence that says what is allowed.
 Unknown fields are refused. A session cookie or \`Authorization: Bearer <API token>\` tells who calls; a token with the scope \`read\` may read and evaluate.
-Rows carry a version: a change names it by If-Match (missing: 428; stale: 409 with \`current\`). Lists answer \`items\` and \`next\`, the cursor of the next page or null.
+Rows carry a version: a change names it by If-Match (missing: 428; stale: 409 with \`current\` and \`sent\`, both values). Lists answer \`items\` and \`next\`, the cursor of the next page or null.
 Limits: 8 MB a body; order M up to 4096; 8 dimensions; 1,001 SNR values a row or call; 2,000 rows a request; 10,000 rows a sweep; 20,000 rows a study;
 2,000 items a page. An evaluation above a cost limit is 422 and says what to reduce.`
 

@@ -1,10 +1,11 @@
 import { activityEntry, activityQuery } from '#shared/schemas/activity'
+import { eventsQuery } from '#shared/schemas/events'
 import { listOf } from '#shared/schemas/common'
 import { member, memberChange } from '#shared/schemas/members'
 import { studiesQuery, study, studyChange, studyCreation, studySummary } from '#shared/schemas/studies'
 import { tagged } from './operation'
 
-const stale = 'The study has another version now; `current` is the study as it is.'
+const stale = 'The study has another version now; `current` is the study as it is, `sent` the change.'
 
 export const studyOperations = tagged('Studies', {
   'GET /api/studies': { summary: 'The caller\'s studies, what changed last first; administrators see all.', query: studiesQuery, answer: listOf(studySummary) },
@@ -21,8 +22,8 @@ export const studyOperations = tagged('Studies', {
   'DELETE /api/studies/:id/members/:user': { summary: 'Removes a person, who loses access at once. A study always keeps an owner.', status: 204 },
   'GET /api/studies/:id/activity': { summary: 'Who did what in the study, the latest first.', query: activityQuery, answer: listOf(activityEntry) },
   'GET /api/studies/:id/events': {
-    summary: 'What changes in the study, as server-sent events. Each carries the number of the last change in it; Last-Event-ID brings what was missed.',
-    media: 'text/event-stream',
+    summary: 'What changes in the study, as server-sent events. Each carries the number of the last change in it; Last-Event-ID, or `after` where a page cannot send that, brings what was missed.',
+    query: eventsQuery, media: 'text/event-stream',
   },
 })
 

@@ -13,8 +13,8 @@ export default async function handleError(thrown: H3Error, event: H3Event): Prom
   const refusal = toRefusal(thrown)
   if (!refusal) console.error(`${event.method} ${path} failed.`, thrown.cause ?? thrown)
   if (path !== '/api' && !path.startsWith('/api/')) return
-  const { statusCode: status, message: detail, parts: { errors, current, headers } } = refusal ?? unknown()
-  const body: Problem = { type: 'about:blank', title: STATUS_CODES[status] ?? 'Error', status, detail, errors, current }
+  const { statusCode: status, message: detail, parts: { errors, current, sent, headers } } = refusal ?? unknown()
+  const body: Problem = { type: 'about:blank', title: STATUS_CODES[status] ?? 'Error', status, detail, errors, current, sent }
   if (event.node.res.headersSent) {
     event.node.res.destroy()
     return

@@ -7,6 +7,7 @@ import type { Account } from '#shared/schemas/session'
 import { describeCandidate } from '#shared/study/describe-candidate'
 import { inputIssues } from '#shared/study/input-issues'
 import { useDatabase } from '../database/client'
+import type { Database, Transaction } from '../database/client'
 import { candidates } from '../database/schema'
 import { problem } from '../utils/problem'
 import { recordActivity } from './activity'
@@ -39,8 +40,8 @@ function readCursor(cursor: string) {
 }
 
 /** One row; 404 when it is deleted. */
-export async function getCandidate(id: string): Promise<Candidate> {
-  const [row] = await rowsOf(useDatabase(), [id])
+export async function getCandidate(id: string, db: Database | Transaction = useDatabase()): Promise<Candidate> {
+  const [row] = await rowsOf(db, [id])
   return row ?? problem(404, 'This row does not exist, or has been deleted.')
 }
 
@@ -93,20 +94,20 @@ function refuse(errors: Issue[]): void {
  * @param version the row's version that the change is based on
  */
 export async function changeCandidate(studyId: string, id: string, change: CandidateChange, version: number, by: Account): Promise<Candidate> {
-  const written = await transact(async (tx) => {
+  const { written, candidate } = await transact(async (tx) => {
     const study = await lockedStudy(tx, studyId)
     const [row] = await tx.select().from(candidates)
       .where(and(eq(candidates.id, id), eq(candidates.studyId, studyId), isNull(candidates.deletedAt))).for('update')
     if (!row) return problem(404, 'This row does not exist, or has been deleted.')
     if (row.version !== version) {
       const [current] = await rowsOf(tx, [id])
-      return problem(409, 'Somebody has changed this row since you read it. Its present values are sent with this answer.', { current })
+      return problem(409, 'Somebody has changed this row since you read it. Its present values are sent with this answer.', { current, sent: change })
     }
     const inputs = merged(row.inputs, change)
     const errors = inputIssues(inputs).filter(({ path }) => path.split('.')[0]! in change)
     refuse(errors)
     const fields = changedFields(row.inputs, inputs)
-    if (fields.length === 0) return []
+    if (fields.length === 0) return { written: [], candidate: await getCandidate(id, tx) }
     const cleared = inputs.role === 'reference' && row.inputs.role !== 'reference' ? await clearReference(tx, studyId, id) : []
     const key = rowKey(inputs, study.requirements)
     await tx.update(candidates)
@@ -116,10 +117,11 @@ export async function changeCandidate(studyId: string, id: string, change: Candi
     await recordActivity(tx, {
       study, by, action: 'changed candidate', subject: inputs.name, from: part(row.inputs, fields), to: part(inputs, fields),
     })
-    return [{ id, studyId, sweepId: row.sweepId, key }]
+    // Read before the lock goes: the answer holds this change and nobody else's, so that the next may be based on it.
+    return { written: [{ id, studyId, sweepId: row.sweepId, key }], candidate: await getCandidate(id, tx) }
   })
   await enqueueWritten(written)
-  return getCandidate(id)
+  return candidate
 }
 
 /** Changed inputs; a row that is still called after its parameters is called after the new ones. */

@@ -36,11 +36,11 @@ async function rowOf(db: Database | Transaction, id: string): Promise<Row> {
 export const getStudy = async ({ id, role }: StudyAccess): Promise<Study> => shownStudy(await rowOf(useDatabase(), id), role)
 
 /** Takes a study's lock and holds a change's version against it. */
-export async function lockedStudy(tx: Transaction, { id, role }: StudyAccess, version: number): Promise<Row> {
+export async function lockedStudy(tx: Transaction, { id, role }: StudyAccess, version: number, sent?: StudyChange): Promise<Row> {
   const [row] = await tx.select().from(studies).where(eq(studies.id, id)).for('update')
   if (!row) problem(404, 'This study does not exist.')
   if (row.version !== version) {
-    problem(409, 'Somebody else has changed this study in the meantime.', { current: shownStudy(row, role), headers: { etag: `"${row.version}"` } })
+    problem(409, 'Somebody else has changed this study in the meantime.', { current: shownStudy(row, role), sent, headers: { etag: `"${row.version}"` } })
   }
   return row
 }
@@ -89,7 +89,7 @@ function difference(row: Row, { requirements, archived, name, description }: Stu
  */
 export async function changeStudy(access: StudyAccess, change: StudyChange, version: number, by: Account): Promise<Study> {
   return transact(async (tx) => {
-    const row = await lockedStudy(tx, access, version)
+    const row = await lockedStudy(tx, access, version, change)
     const { keys, from, to } = difference(row, change)
     if (keys.length === 0) return shownStudy(row, access.role)
     const { name, description, requirements, archived } = change

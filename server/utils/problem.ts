@@ -6,6 +6,8 @@ export interface ProblemParts {
   errors?: Issue[]
   /** what the server has now, after a change that was based on an older version */
   current?: unknown
+  /** the change that was refused for that, so that both values stand in one answer */
+  sent?: unknown
   headers?: Record<string, string>
 }
 

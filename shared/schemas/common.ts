@@ -36,6 +36,7 @@ export const problem = z.object({
   detail: z.string().optional(),
   errors: z.array(issue).optional(),
   current: z.unknown().optional(),
+  sent: z.unknown().optional(),
 })
 export type Problem = z.infer<typeof problem>
 

@@ -89,11 +89,11 @@ describe('changing a row', () => {
     const row = await ownRow(owner, study)
     expect((await owner.patch(`/api/candidates/${row.id}`, { note: 'x' })).status).toBe(428)
   })
-  it('refuses a stale change and sends the row as it is', async () => {
+  it('refuses a stale change and sends both values', async () => {
     const row = await ownRow(owner, study)
     await change(owner, row, { note: 'theirs' })
     const { status, body } = await change<Refused>(owner, row, { note: 'mine' })
-    expect([status, body.current!.inputs.note, body.current!.version]).toEqual([409, 'theirs', row.version + 1])
+    expect([status, body.current!.inputs.note, body.current!.version, body.sent]).toEqual([409, 'theirs', row.version + 1, { note: 'mine' }])
   })
   it('lets one of two changes at once win', async () => {
     const row = await ownRow(owner, study)

@@ -10,7 +10,7 @@ import { ownPerson } from './people-of-test'
 import { ownServer } from './server-of-test'
 
 interface List<T> { items: T[], next: string | null }
-interface Conflict { detail: string, current: Study }
+interface Conflict { detail: string, current: Study, sent: unknown }
 
 const database = databaseConnection()
 let owner: Client
@@ -61,11 +61,11 @@ describe('a changed study', () => {
   it('needs a version that is one', async () => {
     expect((await owner.patch(`/api/studies/${(await make('Odd')).id}`, { name: 'x' }, { 'if-match': 'latest' })).status).toBe(400)
   })
-  it('is refused on an older version, with the study as it is', async () => {
+  it('is refused on an older version, with both values', async () => {
     const study = await make('Contested')
     await patch(study, { name: 'First' })
     const { status, body } = await patch<Conflict>(study, { name: 'Second' })
-    expect([status, body.current.name, body.current.version]).toEqual([409, 'First', 2])
+    expect([status, body.current.name, body.current.version, body.sent]).toEqual([409, 'First', 2, { name: 'Second' }])
   })
   it('takes one of two changes made at once', async () => {
     const study = await make('Raced')
