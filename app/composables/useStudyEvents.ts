@@ -2,73 +2,75 @@ import type { StudyEvent } from '#shared/schemas/events'
 
 /** connecting: the first try; open: events arrive; lost: trying again. */
 export type EventsState = 'connecting' | 'open' | 'lost'
-type Shared = { kind: 'message', data: string } | { kind: 'state', state: EventsState } | { kind: 'askState' }
+/** `last`: id of the last event that the page which holds the stream has received */
+type Shared = { kind: 'message', data: string, last: string } | { kind: 'state', state: EventsState, last: string } | { kind: 'askState' }
 type Handlers = {
   onEvent: (event: StudyEvent) => void
-  /** read everything: first when events have begun to arrive, and again when some may have been missed */
+  /** read everything: at once, and again when something may have changed that no event will tell */
   onReload: () => void
 }
 
 const firstWaitMs = 1000
 const longestWaitMs = 15_000
-/** How long the page waits for events to begin before it reads the rows without them. */
+/** How long a page waits for the one that holds the stream to answer before it connects itself. */
 const patienceMs = 1500
+/** How often a page asks whether the one that holds the stream still does: the browser may have put it to sleep. */
+const askEveryMs = 10_000
 
 /**
  * Events of one study. One page of a browser holds the stream and passes its messages on to the others
- * (HTTP/1.1 allows six connections to a server); when that page goes, the next one in the line of the lock takes over.
+ * (HTTP/1.1 allows six connections to a server); when that page goes, the next one in the line of the lock takes over
+ * from the last event that it was passed.
  */
 export function useStudyEvents(studyId: string, { onEvent, onReload }: Handlers) {
   const state = ref<EventsState>('connecting')
-  const channelName = `halfplane-study-${studyId}`
+  const name = `halfplane-study-${studyId}`
   let channel: BroadcastChannel | null = null
   let source: EventSource | null = null
   let leading = false
-  let begun = false
-  /** events may have passed that neither this page nor its last connection has seen */
-  let gap = false
+  /** what was read may be older than the first event to come */
+  let gap = true
+  let last = ''
   let waitMs = firstWaitMs
   let retry: ReturnType<typeof setTimeout> | undefined
   let patience: ReturnType<typeof setTimeout> | undefined
+  let asking: ReturnType<typeof setInterval> | undefined
   const ending = new AbortController()
 
   const share = (message: Shared) => channel?.postMessage(message)
 
-  const read = () => {
-    begun = true
-    clearTimeout(patience)
-    onReload()
-  }
-
   const setState = (next: EventsState) => {
     state.value = next
-    if (leading) share({ kind: 'state', state: next })
+    if (leading) share({ kind: 'state', state: next, last })
   }
 
-  const take = (data: string) => {
+  const take = (data: string, id: string) => {
     const event = JSON.parse(data) as StudyEvent
-    if (event.reload || gap || !begun) read()
+    last = id
+    if (event.reload || gap) onReload()
     gap = false
     onEvent(event)
   }
 
   const connect = () => {
+    clearTimeout(retry)
     source?.close()
-    source = new EventSource(`/api/studies/${studyId}/events`)
+    const after = last && !gap ? `?after=${last}` : ''
+    source = new EventSource(`/api/studies/${studyId}/events${after}`)
     source.onopen = () => {
       waitMs = firstWaitMs
-      setState('open')
+      if (!gap) setState('open')
     }
-    // A stream's first message says that it has joined: what is read from then on misses nothing.
-    source.onmessage = ({ data }: MessageEvent<string>) => {
-      share({ kind: 'message', data })
-      take(data)
+    // The first message of a stream that names no event says that it has joined: what is read from then on misses nothing.
+    source.onmessage = ({ data, lastEventId }: MessageEvent<string>) => {
+      if (leading) share({ kind: 'message', data, last: lastEventId || last })
+      take(data, lastEventId || last)
+      if (state.value !== 'open') setState('open')
     }
     source.onerror = () => {
       setState('lost')
-      // The browser tries again by itself after a dropped connection and names the last event it has, but not after an answer such as 503.
+      // The browser tries again by itself after a dropped connection, but not after an answer such as 503.
       if (source?.readyState !== EventSource.CLOSED) return
-      gap = true
       retry = setTimeout(connect, waitMs)
       waitMs = Math.min(2 * waitMs, longestWaitMs)
     }
@@ -76,42 +78,54 @@ export function useStudyEvents(studyId: string, { onEvent, onReload }: Handlers)
 
   const lead = () => new Promise<void>((resolve) => {
     leading = true
-    gap = begun
-    connect()
+    clearTimeout(patience)
+    clearInterval(asking)
+    if (source) share({ kind: 'state', state: state.value, last })
+    else connect()
     ending.signal.addEventListener('abort', () => resolve(), { once: true })
   })
 
   const listen = ({ data }: MessageEvent<Shared>) => {
-    if (data.kind === 'askState' && leading) share({ kind: 'state', state: state.value })
-    if (leading) return
-    if (data.kind === 'message') take(data.data)
-    if (data.kind === 'state') {
-      setState(data.state)
-      if (!begun) read()
+    if (data.kind === 'askState' && leading) share({ kind: 'state', state: state.value, last })
+    if (leading || source || data.kind === 'askState') return
+    clearTimeout(patience)
+    if (data.kind === 'message') {
+      take(data.data, data.last)
+      return
     }
+    // This page has listened since before it read: nothing was missed where the stream was open all the while.
+    if (data.state === 'open') gap = false
+    last = data.last
+    state.value = data.state
+  }
+
+  const ask = () => {
+    if (leading || source || document.hidden) return
+    clearTimeout(patience)
+    patience = setTimeout(connect, patienceMs)
+    share({ kind: 'askState' })
   }
 
   const start = () => {
-    patience = setTimeout(() => {
-      read()
-      gap = true
-    }, patienceMs)
-    if (!('locks' in navigator)) {
+    if ('locks' in navigator) {
+      channel = new BroadcastChannel(name)
+      channel.onmessage = listen
+      ask()
+      asking = setInterval(ask, askEveryMs)
+      navigator.locks.request(name, { signal: ending.signal }, lead).catch((reason: unknown) => {
+        if (!ending.signal.aborted) throw reason
+      })
+    } else {
       void lead()
-      return
     }
-    channel = new BroadcastChannel(channelName)
-    channel.onmessage = listen
-    share({ kind: 'askState' })
-    navigator.locks.request(channelName, { signal: ending.signal }, lead).catch((reason: unknown) => {
-      if (!ending.signal.aborted) throw reason
-    })
+    onReload()
   }
 
   const stop = () => {
     ending.abort()
     clearTimeout(retry)
     clearTimeout(patience)
+    clearInterval(asking)
     source?.close()
     channel?.close()
   }

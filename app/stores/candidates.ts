@@ -7,6 +7,8 @@ import type { RowsChange } from '~/utils/candidates/row-list'
 import { freeSlot } from '~/utils/candidates/pins'
 
 type Page<T> = { items: T[], next: string | null }
+/** The first page fills the screen, the others come in few requests. */
+const firstPageSize = 200
 const pageSize = 2000
 
 /** Rows of the study whose Candidates page is open, kept in step with the server by its events. */
@@ -18,6 +20,8 @@ export const useCandidatesStore = defineStore('candidates', () => {
 
   const studyId = ref('')
   const rows = shallowRef<readonly Candidate[]>([])
+  /** rows that are pinned or the reference, which an edit of another row leaves alone */
+  const marked = shallowRef<readonly Candidate[]>([])
   const loading = ref<{ rows: number } | null>(null)
   const loadError = ref<string | null>(null)
   const loaded = ref(false)
@@ -32,6 +36,7 @@ export const useCandidatesStore = defineStore('candidates', () => {
   const tell = (change: RowsChange) => {
     if (!change.structure && change.ids.length === 0) return
     rows.value = list.rows
+    marked.value = list.marked
     for (const listener of listeners) listener(change)
   }
   /** Calls back after every change of the rows, at once; @returns how to stop */
@@ -41,15 +46,20 @@ export const useCandidatesStore = defineStore('candidates', () => {
   }
 
   const byId = (id: string) => list.get(id)
+  const placeOf = (id: string) => list.placeOf(id)
+  /** The same for what is drawn from a row and follows its changes. */
+  const rowNow = (id: string) => rows.value.length > 0 ? list.get(id) : undefined
   const pinOf = (row: Candidate) => row.pin ?? ownPins.value.get(row.id) ?? null
-  const pinned = computed(() => rows.value
-    .flatMap((row) => {
-      const pin = pinOf(row)
-      return pin === null ? [] : [row.pin === pin ? row : { ...row, pin }]
-    })
-    .sort((a, b) => (a.pin ?? 0) - (b.pin ?? 0)))
-  const selected = computed(() => rows.value.find(row => row.id === selectedId.value) ?? null)
-  const reference = computed(() => rows.value.find(row => row.inputs.role === 'reference') ?? null)
+  /** pinned by this page alone; their rows may change at any time */
+  const pinnedHere = computed(() => ownPins.value.size === 0 || rows.value.length === 0
+    ? []
+    : [...ownPins.value].flatMap(([id, pin]): Candidate[] => {
+        const row = list.get(id)
+        return row && row.pin === null ? [{ ...row, pin }] : []
+      }))
+  const pinned = computed(() => [...marked.value.filter(row => row.pin !== null), ...pinnedHere.value].sort((a, b) => (a.pin ?? 0) - (b.pin ?? 0)))
+  const selected = computed(() => (selectedId.value === null ? null : rowNow(selectedId.value) ?? null))
+  const reference = computed(() => marked.value.find(row => row.inputs.role === 'reference') ?? null)
   const context = computed<ColumnContext>(() => ({ reference: reference.value, requirements: study.requirements }))
   const runningSweeps = computed(() => sweeps.value.filter(sweep => sweep.state === 'running'))
 
@@ -64,17 +74,23 @@ export const useCandidatesStore = defineStore('candidates', () => {
     const seen = new Set<string>()
     loading.value = { rows: 0 }
     loadError.value = null
+    const pageBehind = (cursor?: string) =>
+      api.get<Page<Candidate>>(`/api/studies/${id}/candidates`, { query: { limit: cursor ? pageSize : firstPageSize, cursor } })
     try {
-      sweeps.value = (await api.get<Page<Sweep>>(`/api/studies/${id}/sweeps`)).items
-      let cursor: string | undefined
-      do {
-        const page: Page<Candidate> = await api.get<Page<Candidate>>(`/api/studies/${id}/candidates`, { query: { limit: pageSize, cursor } })
+      let coming: Promise<Page<Candidate>> | null = pageBehind()
+      const sweepsComing = readSweeps(id, () => own === reading)
+      while (coming) {
+        const page: Page<Candidate> = await coming
         if (own !== reading) return
+        // The server gathers the next page while this one is taken in.
+        coming = page.next ? pageBehind(page.next) : null
+        coming?.catch(() => undefined)
         for (const row of page.items) seen.add(row.id)
         tell(list.put(page.items.filter(row => !during.has(row.id))))
         loading.value = { rows: seen.size }
-        cursor = page.next ?? undefined
-      } while (cursor)
+      }
+      await sweepsComing
+      if (own !== reading) return
       tell(list.remove(list.rows.filter(row => !seen.has(row.id) && !during.has(row.id)).map(row => row.id)))
       loaded.value = true
     } catch (thrown) {
@@ -85,6 +101,11 @@ export const useCandidatesStore = defineStore('candidates', () => {
         overtaken = null
       }
     }
+  }
+
+  const readSweeps = async (id: string, wanted: () => boolean) => {
+    const { items } = await api.get<Page<Sweep>>(`/api/studies/${id}/sweeps`)
+    if (wanted()) sweeps.value = items
   }
 
   const forget = (id: string) => {
@@ -112,9 +133,11 @@ export const useCandidatesStore = defineStore('candidates', () => {
 
   const url = (tail = '') => `/api/studies/${studyId.value}/candidates${tail}`
 
-  /** Changes a row that is at `version`. @throws ApiProblem 409 when it no longer is, 422 with the fields' errors */
+  /** Changes a row that is at `version`. @returns the version made of it @throws ApiProblem 409 when it no longer is, 422 with the fields' errors */
   const change = async (id: string, patch: CandidateChange, version: number) => {
-    adopt([await api.patch<Candidate>(`/api/candidates/${id}`, patch, { version })])
+    const changed = await api.patch<Candidate>(`/api/candidates/${id}`, patch, { version })
+    adopt([changed])
+    return changed.version
   }
 
   /** Makes rows behind another one (null: behind the last). @returns the new rows */
@@ -165,6 +188,6 @@ export const useCandidatesStore = defineStore('candidates', () => {
 
   return {
     studyId, rows, loading, loadError, loaded, sweeps, runningSweeps, selectedId, selected, pinned, reference, context,
-    byId, pinOf, onRows, load, applyEvent, adopt, change, create, duplicate, remove, restore, move, setPinned, startSweep, cancelSweep,
+    byId, rowNow, placeOf, pinOf, onRows, load, applyEvent, adopt, change, create, duplicate, remove, restore, move, setPinned, startSweep, cancelSweep,
   }
 })

@@ -4,6 +4,7 @@ import { inputIssues } from '#shared/study'
 import type { InputColumn } from '#shared/columns'
 import { columnOf } from '#shared/columns'
 import { EditQueue } from '~/utils/candidates/edit-queue'
+import { RowVersions } from '~/utils/candidates/row-versions'
 import { cellKey, isCandidate, partsOf, touchesNumbers } from '~/utils/candidates/cell-saves'
 import type { CellKey, CellSave } from '~/utils/candidates/cell-saves'
 
@@ -24,6 +25,7 @@ function sentenceAgainst(row: Candidate, change: CandidateChange): string | null
 export const useCellEditsStore = defineStore('cell-edits', () => {
   const candidates = useCandidatesStore()
   const queue = new EditQueue()
+  const versions = new RowVersions()
   const saves = new Map<CellKey, CellSave>()
   /** edits under way a row that its numbers depend on */
   const stale = new Map<string, number>()
@@ -70,16 +72,17 @@ export const useCellEditsStore = defineStore('cell-edits', () => {
     }
   }
 
-  const send = async (row: string, column: InputColumn, text: string, change: CandidateChange) => {
+  /** @param seen version of the row that was shown when the value was entered */
+  const send = async (row: string, column: InputColumn, text: string, change: CandidateChange, seen: number) => {
     const key = cellKey(row, column.id)
     const own: CellSave = { state: 'saving', text }
     const numbers = touchesNumbers(change) ? 1 : 0
     stale.set(row, (stale.get(row) ?? 0) + numbers)
     set(key, own)
     await queue.run(row, async () => {
-      const version = candidates.byId(row)?.version
       try {
-        if (version !== undefined) await candidates.change(row, change, version)
+        const base = versions.baseOf(row, seen)
+        versions.saved(row, base, await candidates.change(row, change, base))
         stale.set(row, (stale.get(row) ?? 0) - numbers)
         if (saves.get(key) === own) set(key, null)
       } catch (thrown) {
@@ -112,7 +115,7 @@ export const useCellEditsStore = defineStore('cell-edits', () => {
     } else if (before && column.text(before.inputs) !== shown && !saves.has(key)) {
       set(key, { state: 'conflict', text, change: entry.change, theirs: shown, sentence: staleSentence })
     } else {
-      await send(row, column, text, entry.change)
+      await send(row, column, text, entry.change, now.version)
     }
   }
 
@@ -122,8 +125,8 @@ export const useCellEditsStore = defineStore('cell-edits', () => {
   }
   /** Sends a typed value once more: after a conflict over the other's value, after a failure as it was. */
   const keepMine = async (row: string, columnId: string) => {
-    const [save, column] = [saveOf(row, columnId), inputColumn(columnId)]
-    if (column && (save?.state === 'conflict' || save?.state === 'failed')) await send(row, column, save.text, save.change)
+    const [save, column, now] = [saveOf(row, columnId), inputColumn(columnId), candidates.byId(row)]
+    if (column && now && (save?.state === 'conflict' || save?.state === 'failed')) await send(row, column, save.text, save.change, now.version)
   }
   /** Gives a typed value up: the cell shows what the server holds. */
   const takeTheirs = (row: string, columnId: string) => set(cellKey(row, columnId), null)

@@ -21,7 +21,7 @@ export function useArrangement() {
   const arrangeNow = () => {
     order.value = arrange(store.rows, sort.value, filters.value, store.context).map(row => row.id)
     const shown = new Set(order.value)
-    hidden = new Set(store.rows.filter(row => !shown.has(row.id)).map(row => row.id))
+    hidden = shown.size === store.rows.length ? new Set() : new Set(store.rows.filter(row => !shown.has(row.id)).map(row => row.id))
   }
 
   const follow = () => {

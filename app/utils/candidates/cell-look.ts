@@ -52,6 +52,12 @@ export function cellSentence(view: CellView): string | null {
   return errorAt(row, column) ?? (column.kind === 'input' ? column.unused?.(row.inputs) ?? null : null)
 }
 
+/** A text that its cell may cut off is worth repeating in full. */
+const longText = (text: string) => text.length > 24 ? text : null
+
+/** What a cell says when the pointer rests on it. */
+export const cellHint = (view: CellView): string | null => cellSentence(view) ?? longText(cellText(view))
+
 /** Whether a judged cell stands on the right side: the row by its must-haves, a surplus by its own sign. */
 const judged: Record<string, (values: CandidateValues) => boolean | null> = {
   verdict: values => values.passes,

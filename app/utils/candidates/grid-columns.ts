@@ -2,8 +2,9 @@ import type { ColDef } from 'ag-grid-community'
 import type { Candidate } from '#shared/schemas/candidates'
 import { columns } from '#shared/columns'
 import type { Column } from '#shared/columns'
-import { cellClasses, cellSentence, cellText, isEditable } from './cell-look'
+import { isEditable } from './cell-look'
 import type { CellView } from './cell-look'
+import type { CellLook } from './cell-looks'
 import type { ColumnSet } from './column-set'
 import { GridEditor } from './grid-editor'
 import { GridHeader } from './grid-header'
@@ -13,6 +14,7 @@ import { NameCell } from './name-cell'
 /** What the columns of the grid ask of the page. */
 export type GridSeams = Pick<HeaderParams, 'sort' | 'onSort'> & {
   view: (row: Candidate, column: Column) => CellView
+  look: (row: Candidate, column: Column) => CellLook
   pin: (row: Candidate) => number | null
   /** place of the row in the study, counted from 1 */
   place: (row: Candidate) => number
@@ -25,11 +27,10 @@ const characterPx = 7.3
 const paddingPx = 18
 /** a number with its sign, or its row's state in a word */
 const shortestNumber = 9
-const wholeWords = 'Click to select the row, with Shift to select up to it.'
 
 const placeDef = (seams: GridSeams): ColDef<Candidate> => ({
   colId: placeColumn, headerName: 'Row', width: 52, minWidth: 40, pinned: 'left', lockPinned: true, lockPosition: 'left', resizable: false,
-  suppressMovable: true, cellClass: 'cell-place', headerClass: 'cell-place', headerTooltip: wholeWords,
+  suppressMovable: true, cellClass: 'cell-place', headerClass: 'cell-place',
   valueGetter: ({ data }) => data ? seams.place(data) : null,
 })
 
@@ -55,26 +56,21 @@ const columnDef = (column: Column, seams: GridSeams, shown: ReadonlySet<string>)
   headerComponent: GridHeader,
   headerComponentParams: { heading: { column, sort: seams.sort, onSort: seams.onSort } satisfies HeaderParams },
   headerName: column.title,
-  headerTooltip: column.meaning,
   headerClass: column.type === 'number' ? 'head-number' : undefined,
   width: widthOf(column),
   minWidth: 48,
   hide: !shown.has(column.id),
   pinned: column.id === 'name' ? 'left' : undefined,
   lockPinned: true,
-  valueGetter: ({ data }) => data ? cellText(seams.view(data, column)) : '',
+  valueGetter: ({ data }) => data ? seams.look(data, column).text : '',
   // States of a cell change without its text: always draw it again.
   equals: () => false,
-  cellClass: ({ data }) => data ? cellClasses(seams.view(data, column)) : [],
-  tooltipValueGetter: ({ data }) => data ? cellSentence(seams.view(data, column)) ?? longText(cellText(seams.view(data, column))) : null,
+  cellClass: ({ data }) => data ? seams.look(data, column).classes : [],
   ...editorOf(column, seams),
   ...column.id === 'name'
-    ? { cellRenderer: NameCell, cellRendererParams: { cell: { text: (row: Candidate) => cellText(seams.view(row, column)), pin: seams.pin } } }
+    ? { cellRenderer: NameCell, cellRendererParams: { cell: { text: (row: Candidate) => seams.look(row, column).text, pin: seams.pin } } }
     : {},
 })
-
-/** A text that its cell may cut off is worth repeating in full. */
-const longText = (text: string) => text.length > 24 ? text : null
 
 /** Column definitions of the grid out of the study's columns, those of the set shown, in its order. */
 export function gridColumns(seams: GridSeams, set: ColumnSet): ColDef<Candidate>[] {

@@ -14,6 +14,7 @@ export class GridHeader implements IHeaderComp {
     this.params = params
     const { column, onSort } = params.heading
     this.gui.className = 'grid-head'
+    this.gui.title = column.meaning
     const title = document.createElement('span')
     title.className = 'grid-head-title'
     title.textContent = column.title
