@@ -65,8 +65,11 @@ async function write(tx: Transaction, some: Finished[]) {
   }
   for (const [studyId, rows] of studiesOf(some)) {
     await lockStudy(tx, studyId)
-    const [first, ...others] = new Set(rows.flatMap(row => row.sweepId ?? []))
-    for (const sweepId of first ? [first, ...others] : []) await finishSweep(tx, sweepId)
+    const running: string[] = []
+    for (const sweepId of new Set(rows.flatMap(row => row.sweepId ?? []))) {
+      if (await finishSweep(tx, sweepId)) running.push(sweepId)
+    }
+    const [first, ...others] = running
     await appendEvent(tx, studyId, { candidates: [...new Set(rows.map(row => row.id))], ...(first ? { sweep: first } : {}) })
     for (const sweep of others) await appendEvent(tx, studyId, { sweep })
   }

@@ -20,9 +20,12 @@ export function closeStreams(userId: string): void {
   for (const close of open.get(userId) ?? []) close()
 }
 
-/** Number of the last event that a page has, by its Last-Event-ID; null when it has none. */
-function lastEventId(event: H3Event): number | null {
-  const id = event.node.req.headers['last-event-id']
+/**
+ * Number of the last event that a page has; null when it has none. A browser that connects again names it by
+ * Last-Event-ID; a page that takes the stream over from another one can only say it in the address.
+ */
+function lastEventId(event: H3Event, after: string | undefined): number | null {
+  const id = event.node.req.headers['last-event-id'] ?? after
   return typeof id === 'string' && /^\d{1,15}$/.test(id) ? Number(id) : null
 }
 
@@ -35,9 +38,10 @@ async function mayRead(studyId: string, { account, sessionId }: Caller): Promise
 
 /**
  * Answers with a study's events as they come (server-sent events), each with the number of the last event in it.
+ * @param after number of the last event that the page has, unless its Last-Event-ID says so
  * @returns when the stream has ended
  */
-export async function streamEvents(event: H3Event, studyId: string, caller: Caller): Promise<void> {
+export async function streamEvents(event: H3Event, studyId: string, caller: Caller, after?: string): Promise<void> {
   const { res } = event.node
   const userId = caller.account.id
   // The connection ends with its stream: a caller that took it up again would find it closed.
@@ -60,7 +64,7 @@ export async function streamEvents(event: H3Event, studyId: string, caller: Call
   }, heartbeatEvery)
   let leave = () => {}
   try {
-    leave = await join(studyId, lastEventId(event), (message, number) => {
+    leave = await join(studyId, lastEventId(event, after), (message, number) => {
       if (res.writableLength > mostUnsent) return close()
       if (message.study) void check()
       res.write(`${number === null ? '' : `id: ${number}\n`}data: ${JSON.stringify(message)}\n\n`)

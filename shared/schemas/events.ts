@@ -16,3 +16,8 @@ export const studyEvent = z.object({
   reload: z.literal(true).optional(),
 })
 export type StudyEvent = z.infer<typeof studyEvent>
+
+/** GET /api/studies/{id}/events: number of the last event that a page has which takes the stream over from another one. */
+export const eventsQuery = z.object({
+  after: z.string().regex(/^\d{1,15}$/, 'Send the number of the last event that you have.').optional(),
+})

@@ -67,6 +67,21 @@ describe('events of a study', () => {
     expect(after.received.flatMap(({ data }) => data.removed ?? [])).toEqual([gone.id])
     await after.close()
   })
+  it('bring what a page missed that names its last event in the address', async () => {
+    const study = await ownStudy(owner, 'Taken over')
+    const row = await ownRow(owner, study)
+    const before = await Stream.open(owner, study)
+    const { id } = before.received[0]!
+    await before.close()
+    await change(owner, row, { note: 'missed' })
+    const after = await Stream.open(owner, study, undefined, `?after=${id}`)
+    expect(after.received[0]!.data.rows?.map(({ inputs }) => inputs.note)).toEqual(['missed'])
+    await after.close()
+  })
+  it('are refused after what is no number', async () => {
+    const { status } = await owner.get(`/api/studies/${await ownStudy(owner, 'No number')}/events?after=latest`)
+    expect(status).toBe(422)
+  })
   it('ask a page to load the rows again when what it has is no longer known', async () => {
     const stream = await Stream.open(owner, await ownStudy(owner, 'Unknown'), 999_999)
     expect(stream.received[0]!.data.reload).toBe(true)

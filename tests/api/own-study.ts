@@ -52,10 +52,10 @@ export class Stream {
   }
 
   /** Opens it; it is joined to the study's events when this resolves. */
-  static async open(client: Client, study: string, lastEventId?: number): Promise<Stream> {
+  static async open(client: Client, study: string, lastEventId?: number, query = ''): Promise<Stream> {
     const caller = new AbortController()
     const headers = new Headers(lastEventId === undefined ? [] : [['last-event-id', String(lastEventId)]])
-    const response = await client.fetch(`/api/studies/${study}/events`, { signal: caller.signal, headers })
+    const response = await client.fetch(`/api/studies/${study}/events${query}`, { signal: caller.signal, headers })
     if (response.status !== 200) throw new Error(`The stream was refused: ${response.status} ${await response.text()}`)
     const stream = new Stream(response.body!, caller)
     await stream.until(() => stream.received.length > 0)
