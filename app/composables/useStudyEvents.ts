@@ -6,13 +6,15 @@ export type EventsState = 'connecting' | 'open' | 'lost'
 type Shared = { kind: 'message', data: string, last: string } | { kind: 'state', state: EventsState, last: string } | { kind: 'askState' }
 type Handlers = {
   onEvent: (event: StudyEvent) => void
-  /** read everything: at once, and again when something may have changed that no event will tell */
+  /** the page has begun: show something at once */
+  onStart: () => void
+  /** read everything: once events arrive or seem to be late, and again when something may have changed that no event will tell */
   onReload: () => void
 }
 
 const firstWaitMs = 1000
 const longestWaitMs = 15_000
-/** How long a page waits for the one that holds the stream to answer before it connects itself. */
+/** How long a page waits for the one that holds the stream to answer before it connects itself, and for events before it reads all rows without. */
 const patienceMs = 1500
 /** How often a page asks whether the one that holds the stream still does: the browser may have put it to sleep. */
 const askEveryMs = 10_000
@@ -22,7 +24,7 @@ const askEveryMs = 10_000
  * (HTTP/1.1 allows six connections to a server); when that page goes, the next one in the line of the lock takes over
  * from the last event that it was passed.
  */
-export function useStudyEvents(studyId: string, { onEvent, onReload }: Handlers) {
+export function useStudyEvents(studyId: string, { onEvent, onStart, onReload }: Handlers) {
   const state = ref<EventsState>('connecting')
   const name = `halfplane-study-${studyId}`
   let channel: BroadcastChannel | null = null
@@ -30,14 +32,22 @@ export function useStudyEvents(studyId: string, { onEvent, onReload }: Handlers)
   let leading = false
   /** what was read may be older than the first event to come */
   let gap = true
+  let begun = false
   let last = ''
   let waitMs = firstWaitMs
   let retry: ReturnType<typeof setTimeout> | undefined
   let patience: ReturnType<typeof setTimeout> | undefined
+  let late: ReturnType<typeof setTimeout> | undefined
   let asking: ReturnType<typeof setInterval> | undefined
   const ending = new AbortController()
 
   const share = (message: Shared) => channel?.postMessage(message)
+
+  const read = () => {
+    begun = true
+    clearTimeout(late)
+    onReload()
+  }
 
   const setState = (next: EventsState) => {
     state.value = next
@@ -47,7 +57,7 @@ export function useStudyEvents(studyId: string, { onEvent, onReload }: Handlers)
   const take = (data: string, id: string) => {
     const event = JSON.parse(data) as StudyEvent
     last = id
-    if (event.reload || gap) onReload()
+    if (event.reload || gap || !begun) read()
     gap = false
     onEvent(event)
   }
@@ -94,7 +104,10 @@ export function useStudyEvents(studyId: string, { onEvent, onReload }: Handlers)
       return
     }
     // This page has listened since before it read: nothing was missed where the stream was open all the while.
-    if (data.state === 'open') gap = false
+    if (data.state === 'open') {
+      gap = false
+      if (!begun) read()
+    }
     last = data.last
     state.value = data.state
   }
@@ -118,13 +131,15 @@ export function useStudyEvents(studyId: string, { onEvent, onReload }: Handlers)
     } else {
       void lead()
     }
-    onReload()
+    late = setTimeout(read, patienceMs)
+    onStart()
   }
 
   const stop = () => {
     ending.abort()
     clearTimeout(retry)
     clearTimeout(patience)
+    clearTimeout(late)
     clearInterval(asking)
     source?.close()
     channel?.close()

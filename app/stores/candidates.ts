@@ -66,6 +66,24 @@ export const useCandidatesStore = defineStore('candidates', () => {
   /** Takes rows of an answer to a request of this page, unless an event has brought newer ones. */
   const adopt = (answer: readonly Candidate[]) => tell(list.put(answer.filter(row => isNewer(row, list.get(row.id)))))
 
+  const pageOf = (id: string, limit: number, cursor?: string) =>
+    api.get<Page<Candidate>>(`/api/studies/${id}/candidates`, { query: { limit, cursor } })
+
+  /** Shows a study's first rows at once; `load` reads all of them when the study's events have begun to arrive. */
+  const begin = async (id: string) => {
+    if (studyId.value !== id) forget(id)
+    const own = ++reading
+    loading.value = { rows: 0 }
+    loadError.value = null
+    try {
+      const { items } = await pageOf(id, firstPageSize)
+      // Rows of a reading that has begun since are as new, and may be there already.
+      if (studyId.value === id && !loaded.value) tell(list.put(items.filter(row => !list.get(row.id) && !overtaken?.has(row.id))))
+    } catch (thrown) {
+      if (own === reading) loadError.value = sentenceOf(thrown)
+    }
+  }
+
   /** Reads all rows of a study, a page at a time, and its sweeps; rows that are gone leave at the end. */
   const load = async (id: string) => {
     if (studyId.value !== id) forget(id)
@@ -74,16 +92,14 @@ export const useCandidatesStore = defineStore('candidates', () => {
     const seen = new Set<string>()
     loading.value = { rows: 0 }
     loadError.value = null
-    const pageBehind = (cursor?: string) =>
-      api.get<Page<Candidate>>(`/api/studies/${id}/candidates`, { query: { limit: cursor ? pageSize : firstPageSize, cursor } })
     try {
-      let coming: Promise<Page<Candidate>> | null = pageBehind()
+      let coming: Promise<Page<Candidate>> | null = pageOf(id, pageSize)
       const sweepsComing = readSweeps(id, () => own === reading)
       while (coming) {
         const page: Page<Candidate> = await coming
         if (own !== reading) return
         // The server gathers the next page while this one is taken in.
-        coming = page.next ? pageBehind(page.next) : null
+        coming = page.next ? pageOf(id, pageSize, page.next) : null
         coming?.catch(() => undefined)
         for (const row of page.items) seen.add(row.id)
         tell(list.put(page.items.filter(row => !during.has(row.id))))
@@ -188,6 +204,6 @@ export const useCandidatesStore = defineStore('candidates', () => {
 
   return {
     studyId, rows, loading, loadError, loaded, sweeps, runningSweeps, selectedId, selected, pinned, reference, context,
-    byId, rowNow, placeOf, pinOf, onRows, load, applyEvent, adopt, change, create, duplicate, remove, restore, move, setPinned, startSweep, cancelSweep,
+    byId, rowNow, placeOf, pinOf, onRows, begin, load, applyEvent, adopt, change, create, duplicate, remove, restore, move, setPinned, startSweep, cancelSweep,
   }
 })

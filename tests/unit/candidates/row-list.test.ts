@@ -28,6 +28,27 @@ describe('the list of rows', () => {
     list.remove(['a'])
     expect(list.get('a')).toBeUndefined()
   })
+  it('knows the place of a row', () => expect(listed(row('b', 2), row('a', 1)).placeOf('b')).toBe(1))
+  it('counts places anew when a row goes', () => {
+    const list = listed(row('a', 1), row('b', 2))
+    list.remove(['a'])
+    expect(list.placeOf('b')).toBe(0)
+  })
+  it('keeps pinned rows and the reference at hand', () => {
+    const list = listed(row('a', 1), { ...row('b', 2), pin: 3 }, { ...row('c', 3), inputs: { ...row('c', 3).inputs, role: 'reference' } })
+    expect(list.marked.map(r => r.id)).toEqual(['b', 'c'])
+  })
+  it('leaves them as they are when another row changes', () => {
+    const list = listed(row('a', 1), { ...row('b', 2), pin: 3 })
+    const before = list.marked
+    list.put([row('a', 1, 2)])
+    expect(list.marked).toBe(before)
+  })
+  it('lets a row that is unpinned go from them', () => {
+    const list = listed({ ...row('b', 2), pin: 3 })
+    list.put([row('b', 2, 2)])
+    expect(list.marked).toEqual([])
+  })
   it('tells nothing of rows that it never had', () => expect(listed(row('a', 1)).remove(['x'])).toEqual({ structure: false, ids: [] }))
 })
 
