@@ -1,4 +1,4 @@
-import type { StudySummary } from '#shared/schemas/studies'
+import type { Study, StudySummary } from '#shared/schemas/studies'
 
 /**
  * What can be done to a study from the list. Each action tells what it did, offers the way back where there is one,
@@ -24,9 +24,11 @@ export function useStudyActions(refresh: () => Promise<unknown>) {
     await refresh()
   }
 
-  const archive = (study: StudySummary, archived: boolean) => attempt(async () => {
-    await api.patch(`/api/studies/${study.id}`, { archived }, { version: study.version })
-    notices.tell(archived ? `“${study.name}” is archived.` : `“${study.name}” is in work again.`)
+  const archive = (study: StudySummary, archived: boolean): Promise<void> => attempt(async () => {
+    const { version } = await api.patch<Study>(`/api/studies/${study.id}`, { archived }, { version: study.version })
+    notices.tell(archived ? `“${study.name}” is archived.` : `“${study.name}” is in work again.`, {
+      undo: () => archive({ ...study, version }, !archived),
+    })
   })
 
   const remove = (study: StudySummary) => attempt(async () => {
