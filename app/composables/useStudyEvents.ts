@@ -113,7 +113,7 @@ export function useStudyEvents(studyId: string, { onEvent, onStart, onReload }: 
   }
 
   const ask = () => {
-    if (leading || source || document.hidden) return
+    if (leading || source) return
     clearTimeout(patience)
     patience = setTimeout(connect, patienceMs)
     share({ kind: 'askState' })

@@ -1,4 +1,4 @@
-import { and, asc, eq, inArray, isNull, sql } from 'drizzle-orm'
+import { and, asc, eq, gt, gte, inArray, isNull, or } from 'drizzle-orm'
 import type { Candidate } from '#shared/schemas/candidates'
 import type { Database, Transaction } from '../database/client'
 import { candidates, results } from '../database/schema'
@@ -60,7 +60,8 @@ export async function rowsAfter(
     .leftJoin(results, eq(results.key, candidates.resultKey))
     .where(and(
       eq(candidates.studyId, studyId), isNull(candidates.deletedAt),
-      after ? sql`(${candidates.position}, ${candidates.id}) > (${after.position}, ${after.id})` : undefined,
+      // Compared as one tuple the same takes MariaDB half as long again.
+      after ? and(gte(candidates.position, after.position), or(gt(candidates.position, after.position), gt(candidates.id, after.id))) : undefined,
     ))
     .orderBy(asc(candidates.position), asc(candidates.id))
     .limit(limit)
