@@ -1,3 +1,4 @@
+import { familyOf } from '#shared/modulation'
 import type { EvaluationRequest } from '#shared/schemas/evaluate'
 import type { Issue } from '#shared/schemas/common'
 
@@ -14,9 +15,17 @@ const secondsOf: Record<EvaluationRequest['quantities'][number], (points: number
   serAllPairs: points => 2e-8 * points * points,
 }
 
+/** Number of points: by the parameters that the family reads, as others may stand beside them unread. */
+function countOf({ family, order, points, rings }: EvaluationRequest['constellation']): number {
+  const { parameters } = familyOf(family)
+  if (parameters.includes('points')) return points?.length ?? 0
+  if (parameters.includes('rings')) return rings?.reduce((a, b) => a + b, 0) ?? 0
+  return order ?? 0
+}
+
 /** Estimated seconds of an evaluation. */
-export function estimatedSeconds({ constellation: { order, points, rings }, esN0Db, target, quantities }: EvaluationRequest): number {
-  const count = points?.length ?? rings?.reduce((a, b) => a + b, 0) ?? order ?? 2
+export function estimatedSeconds({ constellation, esN0Db, target, quantities }: EvaluationRequest): number {
+  const count = countOf(constellation)
   const rates = esN0Db.length + (target ? searchSteps : 0)
   return 5e-6 * count + quantities.reduce((sum, quantity) => sum + rates * secondsOf[quantity](count), 0)
 }

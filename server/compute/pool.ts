@@ -3,8 +3,8 @@ import { Piscina } from 'piscina'
 import type { Task, TaskKind, Tasks } from './tasks'
 import worker from './worker?thread'
 
-/** Interactive: somebody waits for it. Bulk: sweeps and changes of a whole study. */
-export type Priority = 'interactive' | 'bulk'
+/** Interactive: a row that somebody waits for. Evaluation: one of POST /api/evaluate, seconds at worst. Bulk: sweeps and changes of a whole study. */
+export type Priority = 'interactive' | 'evaluation' | 'bulk'
 
 export interface ComputeOptions {
   priority: Priority
@@ -31,8 +31,8 @@ interface Job {
 }
 
 const threads = Math.min(8, Math.max(2, availableParallelism()))
-const waiting: Record<Priority, Job[]> = { interactive: [], bulk: [] }
-const running: Record<Priority, number> = { interactive: 0, bulk: 0 }
+const waiting: Record<Priority, Job[]> = { interactive: [], evaluation: [], bulk: [] }
+const running: Record<Priority, number> = { interactive: 0, evaluation: 0, bulk: 0 }
 /** While somebody works, and this long after (milliseconds), bulk work leaves one worker free for them. */
 const attention = 5000
 let lastInteractive = -Infinity
@@ -48,9 +48,12 @@ function usePool(): Piscina {
 }
 
 function next(): Job | undefined {
-  if (running.interactive + running.bulk >= threads) return undefined
+  if (running.interactive + running.evaluation + running.bulk >= threads) return undefined
   const bulkThreads = performance.now() - lastInteractive < attention ? threads - 1 : threads
-  return waiting.interactive.shift() ?? (running.bulk < bulkThreads ? waiting.bulk.shift() : undefined)
+  // One worker never evaluates: a row of the grid waits for a batch of bulk work at most, however many evaluations were asked for.
+  return waiting.interactive.shift()
+    ?? (running.evaluation < threads - 1 ? waiting.evaluation.shift() : undefined)
+    ?? (running.bulk < bulkThreads ? waiting.bulk.shift() : undefined)
 }
 
 function pump() {
@@ -74,7 +77,7 @@ async function run(job: Job) {
 }
 
 /**
- * Computes a task in a worker thread; interactive tasks go before bulk ones. The only way to the workers: a queue
+ * Computes a task in a worker thread; interactive tasks go before evaluations, those before bulk ones. The only way to the workers: a queue
  * shared with other machines can take its place here.
  * @throws the signal's reason when the caller goes away
  * @throws ComputationFailed when the worker breaks down at every attempt (a new worker takes its place)

@@ -11,7 +11,7 @@ import { problem } from '../utils/problem'
 export async function evaluateRequest(request: EvaluationRequest, signal: AbortSignal): Promise<Evaluation> {
   const tooCostly = costIssues(request)
   if (tooCostly.length > 0) return problem(422, tooCostly[0]!.message, { errors: tooCostly })
-  const answer = await compute({ kind: 'evaluation', asked: request }, { priority: 'interactive', signal })
+  const answer = await compute({ kind: 'evaluation', asked: request }, { priority: 'evaluation', signal })
   if ('issues' in answer) return problem(422, answer.issues[0]!.message, { errors: answer.issues })
   return answer.evaluation
 }

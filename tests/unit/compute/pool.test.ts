@@ -44,4 +44,11 @@ describe('the worker pool', () => {
     caller.abort()
     expect(await Promise.all(going)).toEqual(['stopped', 'stopped', 'stopped'])
   })
+  it('computes rows while evaluations wait for one another', async () => {
+    const caller = new AbortController()
+    const going = Array.from({ length: 5 }, () => compute(long, { priority: 'evaluation', signal: caller.signal }).catch(() => 'stopped'))
+    expect(await compute({ kind: 'rows', asked: [row] }, { priority: 'interactive' })).toHaveLength(1)
+    caller.abort()
+    expect(new Set(await Promise.all(going))).toEqual(new Set(['stopped']))
+  })
 })

@@ -1,0 +1,16 @@
+import { describe, expect, it } from 'vitest'
+import { evaluation } from '#shared/schemas/evaluate'
+import { costIssues } from '../../../server/compute/cost'
+
+const esN0Db = Array.from({ length: 1001 }, (_, i) => i / 50)
+const paths = (constellation: object) =>
+  costIssues(evaluation.parse({ constellation, esN0Db, quantities: ['serAllPairs'] })).map(issue => issue.path)
+
+describe('the cost limit of an evaluation', () => {
+  it('lets 256 points have their all-pairs sum', () => expect(paths({ family: 'qam', order: 256 })).toEqual([]))
+  it('refuses it for 4096 points', () => expect(paths({ family: 'qam', order: 4096 })).toEqual(['quantities']))
+  it('does not count points that the family does not read', () =>
+    expect(paths({ family: 'qam', order: 4096, points: [[0, 0], [1, 1]] })).toEqual(['quantities']))
+  it('does not count rings that the family does not read', () => expect(paths({ family: 'psk', order: 4096, rings: [2] })).toEqual(['quantities']))
+  it('counts the rings of APSK', () => expect(paths({ family: 'apsk', rings: [2048, 2048], ratios: [2], order: 2 })).toEqual(['quantities']))
+})
