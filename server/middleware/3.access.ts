@@ -14,7 +14,7 @@ async function identify(event: Parameters<typeof sessionIdOf>[0]): Promise<Calle
   }
   const sessionId = await sessionIdOf(event)
   const account = sessionId === null ? null : await sessionAccount(sessionId)
-  return account && { account, scope: 'session', sessionId }
+  return account && { account, scope: 'session', sessionId, tokenId: null }
 }
 
 /** The one place that lets requests to the API through, by the table of rules: what is not in it exists for nobody. */

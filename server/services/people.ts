@@ -49,7 +49,7 @@ async function personOf(tx: Transaction, id: string): Promise<Person> {
 }
 
 /**
- * Changes an account. Disabling it or giving it a password ends its sessions at once.
+ * Changes an account. Disabling it or giving it a password ends its sessions at once; with another role its streams start anew.
  * @throws 404 without such an account, 422 when no administrator would remain
  */
 export async function changePerson(id: string, change: z.infer<typeof personChange>, by: Account): Promise<Person> {
@@ -72,7 +72,7 @@ export async function changePerson(id: string, change: z.infer<typeof personChan
     await note(tx, before, after, passwordHash !== undefined, by)
     return after
   })
-  if (ends) closeStreams(id)
+  if (ends || plain.role !== undefined) closeStreams(id)
   return after
 }
 

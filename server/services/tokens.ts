@@ -5,6 +5,7 @@ import type { Account, CreatedToken, Token, tokenCreation } from '#shared/schema
 import { useDatabase } from '../database/client'
 import { tokens, users } from '../database/schema'
 import type { Caller } from '../utils/caller'
+import { closeStreams } from '../utils/event-stream'
 import { newId } from '../utils/ids'
 import { problem } from '../utils/problem'
 import { recordActivity } from './activity'
@@ -16,18 +17,28 @@ const mostTokens = 50
 const prefix = 'hp_'
 const hashOf = (token: string) => createHash('sha256').update(token).digest('hex')
 
+/** What holds of a token that still works. */
+const works = () => and(gt(tokens.expiresAt, new Date()), isNull(users.disabledAt))
+
 /** Who calls by an API token; null when it is unknown, expired, or its account disabled. */
 export async function tokenCaller(token: string): Promise<Caller | null> {
   if (!token.startsWith(prefix)) return null
   const db = useDatabase()
   const [row] = await db.select({ account: accountColumns, id: tokens.id, scope: tokens.scope }).from(tokens)
     .innerJoin(users, eq(users.id, tokens.userId))
-    .where(and(eq(tokens.hash, hashOf(token)), gt(tokens.expiresAt, new Date()), isNull(users.disabledAt)))
+    .where(and(eq(tokens.hash, hashOf(token)), works()))
   if (!row) return null
   // Once a minute is enough to see whether a token is in use.
   await db.update(tokens).set({ lastUsedAt: sql`current_timestamp(3)` })
     .where(and(eq(tokens.id, row.id), or(isNull(tokens.lastUsedAt), lt(tokens.lastUsedAt, sql`current_timestamp(3) - interval 1 minute`))))
-  return { account: row.account, scope: row.scope, sessionId: null }
+  return { account: row.account, scope: row.scope, sessionId: null, tokenId: row.id }
+}
+
+/** The account of a token that has neither been revoked nor expired and whose account is not disabled. */
+export async function tokenAccount(id: string): Promise<Account | null> {
+  const [row] = await useDatabase().select({ account: accountColumns }).from(tokens)
+    .innerJoin(users, eq(users.id, tokens.userId)).where(and(eq(tokens.id, id), works()))
+  return row?.account ?? null
 }
 
 const shown = (row: typeof tokens.$inferSelect): Token => ({
@@ -60,7 +71,7 @@ export async function createToken(account: Account, { name, scope, days }: z.inf
 }
 
 /**
- * Revokes a token at once.
+ * Revokes a token at once, and ends its account's open streams; pages of its sessions connect again.
  * @throws 404 when the account has no such token
  */
 export async function revokeToken(account: Account, id: string): Promise<void> {
@@ -70,4 +81,5 @@ export async function revokeToken(account: Account, id: string): Promise<void> {
     await tx.delete(tokens).where(eq(tokens.id, id))
     await recordActivity(tx, { by: account, action: 'revoked token', subject: row.name })
   })
+  closeStreams(account.id)
 }

@@ -8,6 +8,8 @@ export interface Caller {
   scope: 'session' | 'read' | 'write'
   /** the session's row; null for a token */
   sessionId: string | null
+  /** the token's row; null for a session */
+  tokenId: string | null
 }
 
 /** The study that a request is about, and the caller's role in it; null: an administrator who only reads. */

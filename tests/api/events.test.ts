@@ -1,10 +1,12 @@
 import { beforeAll, describe, expect, it } from 'vitest'
 import type { Candidate } from '#shared/schemas/candidates'
-import { accountOf, signIn } from '../support/client'
+import type { CreatedToken } from '#shared/schemas/session'
+import { accountOf, signIn, withToken } from '../support/client'
 import type { Client } from '../support/client'
 import { otherServer } from './other-server'
 import { change, ownRow, ownStudy, Stream } from './own-study'
 import type { Rows } from './own-study'
+import { ownPerson } from './people-of-test'
 
 let owner: Client
 beforeAll(async () => {
@@ -116,6 +118,26 @@ describe('a stream', () => {
     await editor.delete('/api/session')
     await stream.ended
     expect((await editor.get('/api/studies')).status).toBe(401)
+  })
+  it('ends at once when its token is revoked', async () => {
+    const { body: token } = await owner.post<CreatedToken>('/api/account/tokens', { name: 'of a stream', scope: 'read', days: 1 })
+    const stream = await Stream.open(withToken(token.secret), await ownStudy(owner, 'Revoked'))
+    await owner.delete(`/api/account/tokens/${token.id}`)
+    await stream.ended
+  })
+  it('ends at once when its reader is no administrator any more', async () => {
+    const person = await ownPerson('Second admin', 'admin')
+    const stream = await Stream.open(await person.signIn(), await ownStudy(owner, 'Demoted'))
+    await (await signIn('admin')).patch(`/api/people/${person.id}`, { role: 'member' })
+    await stream.ended
+  })
+  it('is one of at most fifty of its account', async () => {
+    const person = await ownPerson('Many Streams')
+    const client = await person.signIn()
+    const study = await ownStudy(client, 'Fifty')
+    const streams = await Promise.all(Array.from({ length: 50 }, () => Stream.open(client, study)))
+    expect((await client.fetch(`/api/studies/${study}/events`)).status).toBe(429)
+    await Promise.all(streams.map(stream => stream.close()))
   })
   it('is refused to somebody outside the study', async () => {
     const observer = await signIn('observer')
