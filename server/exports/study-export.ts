@@ -19,7 +19,7 @@ export interface StudyExport {
   /** rows on the overlay, by slot, with their curves */
   pinned: { row: Candidate, curves: CandidateCurves }[]
   /** points of the pinned rows and of those with a role, after the row's normalisation */
-  constellations: { row: Candidate, points: number[][] }[]
+  constellations: () => Iterable<{ row: Candidate, points: number[][] }>
   /** all rows in the grid's order, a page at a time */
   rows: () => AsyncIterable<Candidate[]>
 }

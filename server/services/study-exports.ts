@@ -71,6 +71,14 @@ function pointsOf(row: Candidate, requirements: Requirements): number[][] | null
   return Array.from({ length: order }, (_, i) => [...points.subarray(i * dimensions, (i + 1) * dimensions)])
 }
 
+/** Made one at a time, when they are written: a study may give thousands of rows a role. */
+function* constellationsOf(rows: readonly Candidate[], requirements: Requirements): Generator<{ row: Candidate, points: number[][] }> {
+  for (const row of rows) {
+    const points = pointsOf(row, requirements)
+    if (points) yield { row, points }
+  }
+}
+
 async function* pagesOf(studyId: string): AsyncGenerator<Candidate[]> {
   let after: { position: number, id: string } | null = null
   for (;;) {
@@ -94,10 +102,7 @@ export async function gatherStudy(studyId: string, by: string): Promise<StudyExp
     study, members, by, at: new Date(), version, coreVersion, counts, leading,
     reference: noted.find(row => row.inputs.role === 'reference') ?? null,
     pinned: await curvesOfRows(pinned),
-    constellations: noted.flatMap((row) => {
-      const points = pointsOf(row, study.requirements)
-      return points ? [{ row, points }] : []
-    }),
+    constellations: () => constellationsOf(noted, study.requirements),
     rows: () => pagesOf(studyId),
   }
 }

@@ -24,7 +24,7 @@ export async function writeWorkbook(data: StudyExport, stream: Writable): Promis
   const link = writeLinkSheet(workbook, data.study.requirements.available, studyMarginDb)
   await writeCandidatesSheet(workbook, data, link)
   writeCurvesSheet(workbook, data)
-  writePointsSheet(workbook, data)
+  await writePointsSheet(workbook, data)
   writeMethodsSheet(workbook)
   writeCautionsSheet(workbook)
   await workbook.commit()
