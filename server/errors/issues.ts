@@ -3,10 +3,13 @@ import type { Issue } from '#shared/schemas/common'
 
 type ZodIssue = z.core.$ZodIssue
 
+/** Most mistakes told in one answer. */
+const mostIssues = 100
+
 /** One issue of zod as mistakes of ours: unknown fields are named one by one, and a union tells what its nearest member says. */
 function flatten(issue: ZodIssue): ZodIssue[] {
   if (issue.code === 'unrecognized_keys') {
-    return issue.keys.map(key => ({ ...issue, path: [...issue.path, key], message: 'This field does not exist.' }))
+    return issue.keys.slice(0, mostIssues).map(key => ({ ...issue, path: [...issue.path, key], message: 'This field does not exist.' }))
   }
   if (issue.code === 'invalid_union' && issue.errors.length > 0 && issue.errors.every(errors => errors.length > 0)) {
     const depth = (errors: ZodIssue[]) => Math.max(...errors.map(e => e.path.length))
@@ -26,6 +29,6 @@ function sentence(issue: ZodIssue): string {
   return issue.message.endsWith('received undefined') ? 'This field is missing.' : `Send ${/^[aeio]/.test(issue.expected) ? 'an' : 'a'} ${issue.expected} here.`
 }
 
-/** Mistakes found by a schema, each with its path and a sentence that says what is allowed. */
+/** Mistakes found by a schema, the first hundred, each with its path and a sentence that says what is allowed. */
 export const issuesOf = (error: z.core.$ZodError): Issue[] =>
-  error.issues.flatMap(flatten).map(issue => ({ path: pathText(issue.path), message: sentence(issue) }))
+  error.issues.slice(0, mostIssues).flatMap(flatten).slice(0, mostIssues).map(issue => ({ path: pathText(issue.path), message: sentence(issue) }))

@@ -3,6 +3,7 @@ import type { H3Event } from 'h3'
 import { getQuery, getRouterParam, readRawBody } from 'h3'
 import { z } from 'zod'
 import { issuesOf } from '../errors/issues'
+import { fromJson } from './json'
 import { problem } from './problem'
 
 /** Most bytes of a body, where a route does not set less. */
@@ -46,15 +47,6 @@ async function readChunks(request: IncomingMessage, limit: number): Promise<Buff
   // Left unread, the rest would block the connection, which still has to carry the answer.
   request.resume()
   return undefined
-}
-
-function fromJson(text: string): unknown {
-  if (text.trim() === '') problem(400, 'Send a JSON body.')
-  try {
-    return JSON.parse(text)
-  } catch {
-    problem(400, 'The body is not well-formed JSON.')
-  }
 }
 
 /**
