@@ -2,7 +2,7 @@ import { and, count, eq, inArray, isNull, ne, sql } from 'drizzle-orm'
 import type { CandidateInputs } from '#shared/schemas/candidates'
 import type { Requirements } from '#shared/schemas/requirements'
 import type { Transaction } from '../database/client'
-import { candidates, studies } from '../database/schema'
+import { candidates, studies, sweeps } from '../database/schema'
 import { newId } from '../utils/ids'
 import { problem } from '../utils/problem'
 import { enqueue } from './queue'
@@ -25,11 +25,14 @@ export async function lockedStudy(tx: Transaction, id: string): Promise<LockedSt
   return study ?? problem(404, 'This study does not exist.')
 }
 
-/** Refuses more rows than a study may have. */
+/** Refuses more rows than a study may have; those that its running sweeps are about to make count as made. */
 export async function requireRoom(tx: Transaction, studyId: string, more: number): Promise<void> {
   const [row] = await tx.select({ n: count() }).from(candidates).where(and(eq(candidates.studyId, studyId), isNull(candidates.deletedAt)))
-  if ((row?.n ?? 0) + more > mostRows) {
-    problem(422, `A study has at most 20,000 rows; this one has ${(row?.n ?? 0).toLocaleString('en')}, and these are ${more.toLocaleString('en')} more.`)
+  const [sweeping] = await tx.select({ n: sql<number>`coalesce(sum(${sweeps.total} - ${sweeps.made}), 0)`.mapWith(Number) }).from(sweeps)
+    .where(and(eq(sweeps.studyId, studyId), eq(sweeps.state, 'running')))
+  const there = (row?.n ?? 0) + (sweeping?.n ?? 0)
+  if (there + more > mostRows) {
+    problem(422, `A study has at most 20,000 rows; this one has ${there.toLocaleString('en')}, and these are ${more.toLocaleString('en')} more.`)
   }
 }
 

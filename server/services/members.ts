@@ -1,4 +1,4 @@
-import { and, asc, eq, isNull } from 'drizzle-orm'
+import { and, asc, count, eq, isNull, ne } from 'drizzle-orm'
 import type { Member, StudyRole } from '#shared/schemas/members'
 import type { Account } from '#shared/schemas/session'
 import { useDatabase } from '../database/client'
@@ -30,10 +30,11 @@ async function memberOf(tx: Transaction, studyId: string, userId: string): Promi
   return row
 }
 
-/** Refuses to take the role from a study's last owner. */
-async function requireAnotherOwner(tx: Transaction, studyId: string): Promise<void> {
-  const owners = await tx.$count(members, and(eq(members.studyId, studyId), eq(members.role, 'owner')))
-  if (owners > 1) return
+/** Refuses to take the role from a study's last owner; one whose account is disabled owns nothing any more. */
+async function requireAnotherOwner(tx: Transaction, studyId: string, leaving: string): Promise<void> {
+  const [others] = await tx.select({ n: count() }).from(members).innerJoin(users, eq(users.id, members.userId))
+    .where(and(eq(members.studyId, studyId), eq(members.role, 'owner'), ne(members.userId, leaving), isNull(users.disabledAt)))
+  if (others!.n > 0) return
   const message = 'A study always keeps an owner: make somebody else one first.'
   problem(422, message, { errors: [{ path: 'role', message }] })
 }
@@ -52,7 +53,7 @@ export async function putMember(studyId: string, { email, role }: { email: strin
     }
     const before = await memberOf(tx, studyId, user.id)
     if (before?.role === role) return before
-    if (before?.role === 'owner') await requireAnotherOwner(tx, studyId)
+    if (before?.role === 'owner') await requireAnotherOwner(tx, studyId, user.id)
     await tx.insert(members).values({ studyId, userId: user.id, role }).onDuplicateKeyUpdate({ set: { role } })
     await recordActivity(tx, before
       ? { study, by, action: 'changed role of', subject: user.name, from: { role: before.role }, to: { role } }
@@ -70,7 +71,7 @@ export async function removeMember(studyId: string, userId: string, by: Account)
   await transact(async (tx) => {
     const study = { id: studyId, name: await lockedName(tx, studyId) }
     const member = await memberOf(tx, studyId, userId) ?? problem(404, 'This person has no part in the study.')
-    if (member.role === 'owner') await requireAnotherOwner(tx, studyId)
+    if (member.role === 'owner') await requireAnotherOwner(tx, studyId, userId)
     await tx.delete(members).where(and(eq(members.studyId, studyId), eq(members.userId, userId)))
     await recordActivity(tx, { study, by, action: 'removed member', subject: member.name, from: { role: member.role } })
     await appendEvent(tx, studyId, { study: true })

@@ -196,6 +196,14 @@ describe('the people of a study', () => {
     const { body } = await admin.get<List<{ role: string }>>(`/api/studies/${study.id}/members`)
     expect([answers.filter(({ status }) => status === 204).length, body.items.map(({ role }) => role)]).toEqual([1, ['owner']])
   })
+  it('keep an owner whose account is not disabled', async () => {
+    const study = await make('Orphaned')
+    const second = await ownPerson('Disabled Owner')
+    await put(study, second.email, 'owner')
+    await admin.patch(`/api/people/${second.id}`, { disabled: true })
+    const { body: self } = await owner.get<{ id: string }>('/api/session')
+    expect((await owner.delete(`/api/studies/${study.id}/members/${self.id}`)).status).toBe(422)
+  })
   it('lose access and their open event stream at once when they are removed', async () => {
     const study = await make('Parted')
     const person = await ownPerson('Parting Person')

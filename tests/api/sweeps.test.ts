@@ -58,6 +58,13 @@ describe('a sweep', () => {
     expect([status, body.detail]).toEqual([422, 'This sweep makes 10,201 rows; at most 10,000 are possible. Shorten a list or a range.'])
     expect((await owner.get<{ items: Sweep[] }>(`/api/studies/${study}/sweeps`)).body.items).toEqual([])
   })
+  it('is refused while others are about to fill the study', async () => {
+    const study = await ownStudy(owner, 'Three at once')
+    const axes = [{ field: 'rollOff', start: 0, stop: 1, step: 0.001 }, { field: 'implementationLossDb', start: 0, stop: 8, step: 1 }]
+    const answers = await Promise.all([1, 2, 3].map(() => begin(owner, study, { base: { family: 'psk', order: 4, backOff: 'papr' }, axes })))
+    for (const sweep of (await owner.get<{ items: Sweep[] }>(`/api/studies/${study}/sweeps`)).body.items) await owner.delete(`/api/sweeps/${sweep.id}`)
+    expect(answers.map(answer => answer.status).sort()).toEqual([202, 202, 422])
+  })
 
   const bad: [string, object, string][] = [
     ['a range that runs backwards', { base: rings, axes: [{ ...ratios(0.1), stop: 1 }] }, 'axes.0.stop'],
