@@ -44,6 +44,12 @@ export async function openCandidates(page: Page, { id, rows }: OwnStudy): Promis
   for (const row of rows) await cellAt(page, row.id, 'requiredEsN0').filter({ hasNotText: 'computing' }).waitFor()
 }
 
+/** Opens a page and waits until it can be used: what is clicked before that is lost. */
+export async function openReady(page: Page, path: string): Promise<void> {
+  await page.goto(path)
+  await page.waitForFunction(() => (window as { useNuxtApp?: () => { isHydrating?: boolean } }).useNuxtApp?.().isHydrating === false)
+}
+
 /** Complaints other than those that the browser itself makes about answers of these statuses, which the test has asked for. */
 export const unexpected = (complaints: string[], ...statuses: (number | string)[]) =>
   complaints.filter(line => !statuses.some(status => line.includes('Failed to load resource') && line.includes(String(status))))

@@ -15,6 +15,8 @@ export interface LinkCells {
 
 const columns = { name: 1, kind: 2, frequency: 3, distance: 4, noiseFigure: 5, value: 6, unit: 7, level: 8, source: 9 }
 const kinds = { power: 'power', gain: 'gain', loss: 'loss', freeSpaceLoss: 'free-space loss', noiseFigure: 'noise density' }
+/** In formulas the exponent's letter is a capital. */
+const boltzmannText = String(boltzmann).toUpperCase()
 const lossConstant = `20*LOG10(4*PI()*1E12/${speedOfLight})`
 
 /** Value of a line: typed lines are formulas over their own inputs, so that the sheet goes on computing. */
@@ -23,7 +25,7 @@ function valueCell({ line, valueDb }: LinkStep, row: number, unit: string): Exce
     case 'freeSpaceLoss':
       return { formula: `${lossConstant}+20*LOG10(C${row})+20*LOG10(D${row})`, result: valueDb }
     case 'noiseFigure':
-      return { formula: `10*LOG10(${boltzmann}*${referenceTemperature}${unit === 'dBm' ? '*1000' : ''})+E${row}`, result: valueDb }
+      return { formula: `10*LOG10(${boltzmannText}*${referenceTemperature}${unit === 'dBm' ? '*1000' : ''})+E${row}`, result: valueDb }
     default: return valueDb
   }
 }
