@@ -1,23 +1,8 @@
 import type { Candidate } from '#shared/schemas/candidates'
 import type { StudyEvent } from '#shared/schemas/events'
-import type { Context, Measure, Row } from './measure'
-
-/** A caller who is signed in as the demonstration's owner. */
-async function signedIn({ baseUrl, accounts }: Context) {
-  const { email, password } = accounts.find(account => account.role === 'owner')!
-  const json = { 'content-type': 'application/json', 'origin': baseUrl }
-  const answer = await fetch(`${baseUrl}/api/session`, { method: 'POST', headers: json, body: JSON.stringify({ email, password }) })
-  if (!answer.ok) throw new Error(`The owner could not sign in: ${answer.status}`)
-  const cookie = answer.headers.getSetCookie().map(line => line.split(';')[0]).join('; ')
-  return async <T>(method: string, path: string, body?: unknown, headers: Record<string, string> = {}): Promise<T> => {
-    const response = await fetch(baseUrl + path, {
-      method, headers: { ...json, cookie, ...headers }, body: body === undefined ? undefined : JSON.stringify(body),
-    })
-    if (!response.ok) throw new Error(`${method} ${path}: ${response.status} ${await response.text()}`)
-    return (path.endsWith('/events') ? response.body : await response.json()) as T
-  }
-}
-type Call = Awaited<ReturnType<typeof signedIn>>
+import type { Measure, Row } from './measure'
+import { newStudy, signedIn } from './support/signed-in'
+import type { Call } from './support/signed-in'
 
 /** Calls back for each message of a study's events. */
 async function listen(call: Call, study: string, receive: (event: StudyEvent) => void): Promise<() => Promise<void>> {
@@ -38,7 +23,6 @@ async function listen(call: Call, study: string, receive: (event: StudyEvent) =>
   return () => reader.cancel()
 }
 
-const newStudy = async (call: Call, name: string) => (await call<{ id: string }>('POST', '/api/studies', { name })).id
 const seconds = (since: number) => (performance.now() - since) / 1000
 
 /** 772 rows of PAM, PSK, QAM and hexagonal sets, M from 2 to 256, and 228 of APSK: no two with the same points. */
