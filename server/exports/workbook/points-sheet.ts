@@ -12,7 +12,7 @@ export async function writePointsSheet(workbook: ExcelJS.stream.xlsx.WorkbookWri
   sheet.columns = [28, 10, 16, 16].map(width => ({ width }))
   for (const index of [3, 4]) sheet.getColumn(index).numFmt = '0.000000'
   styleRow(sheet.addRow(['Candidate', 'Point', 'I', 'Q']), headerStyle).commit()
-  styleRow(sheet.addRow(['—', 'counted from 1', 'signal units', 'signal units']), unitStyle).commit()
+  styleRow(sheet.addRow(['—', 'counted from 0', 'signal units', 'signal units']), unitStyle).commit()
   sheet.autoFilter = 'A2:D2'
   let written = 0
   for (const { row, points } of constellations()) {
@@ -20,7 +20,7 @@ export async function writePointsSheet(workbook: ExcelJS.stream.xlsx.WorkbookWri
       sheet.addRow(['A sheet holds no more points: pin fewer rows, or give fewer of them a role.']).commit()
       break
     }
-    points.forEach((point, i) => sheet.addRow([row.inputs.name, i + 1, ...point]).commit())
+    points.forEach((point, i) => sheet.addRow([row.inputs.name, i, ...point]).commit())
     written += points.length
     // Other requests go in between.
     await setImmediate()
