@@ -4,7 +4,7 @@ const many = (count: number) => count === 1 ? '1 row' : `${count.toLocaleString(
 
 /** What the page's commands act on, and how it shows what came of them. */
 type Page = {
-  /** selected rows in the order shown, else the row with the focus */
+  /** the rows to act on, in the order shown */
   targets: () => string[]
   focusCell: (row: string) => void
   selectOnly: (ids: string[]) => void
@@ -70,10 +70,11 @@ export function useRowCommands({ targets, focusCell, selectOnly }: Page) {
     return row ? store.pinOf(row) !== null : false
   }
   /** Pins the rows, or unpins them when all of them are pinned. */
-  const pin = (ids: string[] = targets()) => attempt(async () => {
+  const pin = () => attempt(async () => {
+    const ids = targets()
     const on = !ids.every(isPinned)
     for (const id of ids.filter(id => isPinned(id) !== on)) await store.setPinned(id, on)
   })
 
-  return { busy, add, duplicate, remove, move, pin, isPinned }
+  return { busy, add, duplicate, remove, move, pin }
 }

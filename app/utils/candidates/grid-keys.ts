@@ -12,8 +12,8 @@ export type GridKeys = {
   copy: (row: Candidate, column: string) => void
   /** Alt+W: why this number */
   why: (row: Candidate, column: string) => void
-  /** Alt+P: pins the row, or unpins it */
-  pin: (row: Candidate) => void
+  /** Alt+P: pins the rows that commands act on, or unpins them */
+  pin: () => void
   /** Enter on a cell that opens a dialog; @returns whether it did */
   open: (row: Candidate, column: string) => boolean
 }
@@ -31,7 +31,7 @@ export function handleKey({ event, editing, data, column }: SuppressKeyboardEven
     return true
   }
   if (event.altKey && event.code === 'KeyW') return run(() => keys.why(data, id))
-  if (event.altKey && event.code === 'KeyP') return run(() => keys.pin(data))
+  if (event.altKey && event.code === 'KeyP') return run(keys.pin)
   if (ctrl && event.code === 'KeyA') return run(keys.selectAll)
   if (ctrl && event.code === 'KeyC') return run(() => keys.copy(data, id))
   if (event.key === ' ') return run(() => keys.select(data, event.shiftKey))
