@@ -1,7 +1,11 @@
 import type { CandidateInputs } from '../schemas/candidates'
 import type { Entry } from './column'
-import { numberText, parseNumber } from './entry'
+import { numberText, parseNumber, refusedComma } from './entry'
 import { plain } from './format'
+
+/** The sentence against the first number with a decimal comma, where spaces or semicolons part the numbers. */
+const commaAmong = (text: string): string | null =>
+  text.split(/[\s;]+/).map(piece => refusedComma(piece.replace(/,$/, ''))).find(sentence => sentence !== null) ?? null
 
 const pieces = (text: string) => text.split(/[\s;,]+/).filter(piece => piece !== '')
 
@@ -71,13 +75,16 @@ export const pointsText = (points: readonly (readonly number[])[] | null) =>
 
 /**
  * Reads custom points, one a line, coordinates separated by spaces, commas or semicolons; blank lines are skipped.
+ * Where spaces or semicolons separate them, a comma within a number is a decimal comma.
  * @returns the change, or a sentence that names the line
  */
 export function parsePoints(text: string): Entry {
-  const lines = text.split(/\r?\n/).map((line, index) => ({ number: index + 1, coordinates: pieces(line) })).filter(line => line.coordinates.length > 0)
+  const lines = text.split(/\r?\n/).map((line, index) => ({ number: index + 1, line: line.trim(), coordinates: pieces(line) })).filter(line => line.coordinates.length > 0)
   if (lines.length === 0) return { change: { points: null } }
   const points: number[][] = []
-  for (const { number, coordinates } of lines) {
+  for (const { number, line, coordinates } of lines) {
+    const comma = /[\s;]/.test(line) ? commaAmong(line) : null
+    if (comma) return { refused: `Line ${number}: ${comma}` }
     const values = coordinates.map(parseNumber)
     const bad = values.indexOf(null)
     if (bad >= 0) return { refused: `Line ${number}: “${coordinates[bad]}” is not a number.` }

@@ -16,6 +16,15 @@ export function parseNumber(text: string): number | null {
   return decimalForm.test(plainText) ? Number(plainText) : null
 }
 
+const commaForm = /^[+−–-]?\d+,\d+$/
+
+/**
+ * What to type instead of a number with a decimal comma, which would read as two.
+ * @returns null when the text is no such number
+ */
+export const refusedComma = (text: string): string | null =>
+  commaForm.test(text.trim()) ? `“${text.trim()}” has a comma: enter ${text.trim().replace(',', '.')}, with a point.` : null
+
 /** A number or a fraction such as 3/4. */
 export function parseFraction(text: string): number | null {
   const [above = '', below, ...rest] = text.split('/')
@@ -28,7 +37,7 @@ export function parseFraction(text: string): number | null {
 export const numberEntry = (field: CandidateField, parse = parseNumber) => (text: string): Entry => {
   if (text.trim() === '') return { change: { [field]: null } }
   const value = parse(text)
-  return value === null ? { refused: `“${text.trim()}” is not a number.` } : { change: { [field]: value } }
+  return value === null ? { refused: refusedComma(text) ?? `“${text.trim()}” is not a number.` } : { change: { [field]: value } }
 }
 
 export const textEntry = (field: CandidateField) => (text: string): Entry => ({ change: { [field]: text.trim() } })

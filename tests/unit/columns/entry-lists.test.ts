@@ -29,6 +29,9 @@ describe('the SNR range in one text', () => {
 describe('points, one a line', () => {
   it('reads coordinates', () => expect(parsePoints('1 0\n−0.2, 1.1\n')).toEqual({ change: { points: [[1, 0], [-0.2, 1.1]] } }))
   it('names the line of a mistake', () => expect(parsePoints('1 0\n\n0 i')).toEqual({ refused: 'Line 3: “i” is not a number.' }))
+  it('says what to type instead of a decimal comma', () => expect(parsePoints('1 0\n0,5 −1,5'))
+    .toEqual({ refused: 'Line 2: “0,5” has a comma: enter 0.5, with a point.' }))
+  it('reads coordinates with a comma alone between them', () => expect(parsePoints('1,0\n0,1')).toEqual({ change: { points: [[1, 0], [0, 1]] } }))
   it('names a line of other length', () => expect(parsePoints('1 0\n1'))
     .toEqual({ refused: 'Line 2 has 1 coordinates and the first point 2: give every point the same number.' }))
   it('writes a point a line', () => expect(pointsText([[1, 0], [-1, 0.5]])).toBe('1 0\n−1 0.5'))

@@ -12,6 +12,8 @@ describe('typed numbers', () => {
   it('reads a fraction', () => expect(parseFraction('3/4')).toBe(0.75))
   it('refuses a fraction of nothing', () => expect(parseFraction('3/0')).toBeNull())
   it('clears a number with an empty text', () => expect(numberEntry('rollOff')('')).toEqual({ change: { rollOff: null } }))
+  it('says what to type instead of a decimal comma', () => expect(numberEntry('rollOff')('−2,57'))
+    .toEqual({ refused: '“−2,57” has a comma: enter −2.57, with a point.' }))
   it('names what is no number', () => expect(numberEntry('order')('many')).toEqual({ refused: '“many” is not a number.' }))
 })
 
