@@ -6,7 +6,8 @@ export type EditorParams = { column: InputColumn, textOf: (row: Candidate) => st
 
 /**
  * Editor of an input cell. A printable key replaces the text, anything else opens it as it stands,
- * a refused text included, so that it can be put right.
+ * a refused text included, so that it can be put right. What it hands back is always text as the cell shows it: of a list
+ * the title, never the value behind it. The list stays closed until the reader opens it, for Escape would close that first.
  */
 export class GridEditor implements ICellEditorComp<Candidate, string> {
   private gui!: HTMLInputElement | HTMLSelectElement
@@ -34,28 +35,24 @@ export class GridEditor implements ICellEditorComp<Candidate, string> {
 
   private list(choices: NonNullable<InputColumn['choices']>, text: string, key: string) {
     const select = document.createElement('select')
-    for (const { value, title } of choices) select.append(new Option(title || '(none)', value))
-    const chosen = choices.find(choice => choice.title === text)
+    for (const { title } of choices) select.append(new Option(title || '(none)', title))
     const begun = key.length === 1 ? choices.find(choice => choice.title.toLowerCase().startsWith(key.toLowerCase())) : undefined
-    select.value = (begun ?? chosen ?? choices[0])?.value ?? ''
+    select.value = begun?.title ?? text
+    this.endByMouse(select)
     return select
   }
 
   afterGuiAttached() {
     this.gui.focus()
     if (this.gui instanceof HTMLInputElement && !this.typed) this.gui.select()
-    if (this.gui instanceof HTMLSelectElement) this.open(this.gui)
   }
 
-  /** Shows the list at once; a choice made there ends the editing. */
-  private open(select: HTMLSelectElement) {
-    try {
-      select.showPicker()
-    } catch {
-      // Without a key press or click of the reader the browser keeps the list closed: arrow keys choose.
-      return
-    }
-    select.addEventListener('change', () => this.params.stopEditing(true))
+  /** A choice by mouse ends the editing; arrow keys change the closed list at every step and leave the end to Enter. */
+  private endByMouse(select: HTMLSelectElement) {
+    let byMouse = false
+    select.addEventListener('pointerdown', () => { byMouse = true })
+    select.addEventListener('keydown', () => { byMouse = false })
+    select.addEventListener('change', () => { if (byMouse) this.params.stopEditing() })
   }
 
   getGui() {
