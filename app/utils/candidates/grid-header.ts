@@ -44,6 +44,7 @@ export class GridHeader implements IHeaderComp {
     const now = sort()
     const own = now?.column === column.id ? now : null
     this.mark.textContent = own ? own.descending ? '↓ falling' : '↑ rising' : ''
-    this.params.eGridHeader.setAttribute('aria-sort', own ? own.descending ? 'descending' : 'ascending' : 'none')
+    // The grid takes the attribute off columns that it does not sort itself, right after it has drawn their heads.
+    queueMicrotask(() => this.params.eGridHeader.setAttribute('aria-sort', own ? own.descending ? 'descending' : 'ascending' : 'none'))
   }
 }
