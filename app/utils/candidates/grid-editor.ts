@@ -50,9 +50,15 @@ export class GridEditor implements ICellEditorComp<Candidate, string> {
   /** A choice by mouse ends the editing; arrow keys change the closed list at every step and leave the end to Enter. */
   private endByMouse(select: HTMLSelectElement) {
     let byMouse = false
-    select.addEventListener('pointerdown', () => { byMouse = true })
-    select.addEventListener('keydown', () => { byMouse = false })
-    select.addEventListener('change', () => { if (byMouse) this.params.stopEditing() })
+    select.addEventListener('pointerdown', () => {
+      byMouse = true
+    })
+    select.addEventListener('keydown', () => {
+      byMouse = false
+    })
+    select.addEventListener('change', () => {
+      if (byMouse) this.params.stopEditing(true)
+    })
   }
 
   getGui() {
