@@ -14,6 +14,8 @@ export type GridKeys = {
   why: (row: Candidate, column: string) => void
   /** Alt+P: pins the rows that commands act on, or unpins them */
   pin: () => void
+  /** Home: beside the grid's own move, which stays in the frozen columns, the others go back to their start */
+  home: () => void
   /** Enter on a cell that opens a dialog; @returns whether it did */
   open: (row: Candidate, column: string) => boolean
 }
@@ -36,6 +38,7 @@ export function handleKey({ event, editing, data, column }: SuppressKeyboardEven
   if (ctrl && event.code === 'KeyC') return run(() => keys.copy(data, id))
   if (event.key === ' ') return run(() => keys.select(data, event.shiftKey))
   if (event.key === 'Delete' || event.key === 'Backspace') return run(() => keys.clear(data, id))
+  if (event.key === 'Home') keys.home()
   if (event.key === 'Enter' && keys.open(data, id)) return run(() => undefined)
   return false
 }
