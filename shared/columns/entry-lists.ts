@@ -1,11 +1,7 @@
 import type { CandidateInputs } from '../schemas/candidates'
 import type { Entry } from './column'
-import { numberText, parseNumber, refusedComma } from './entry'
+import { commaAmong, numberText, parseNumber } from './entry'
 import { plain } from './format'
-
-/** The sentence against the first number with a decimal comma, where spaces or semicolons part the numbers. */
-const commaAmong = (text: string): string | null =>
-  text.split(/[\s;]+/).map(piece => refusedComma(piece.replace(/,$/, ''))).find(sentence => sentence !== null) ?? null
 
 const pieces = (text: string) => text.split(/[\s;,]+/).filter(piece => piece !== '')
 
@@ -16,9 +12,12 @@ export function ringsText({ rings, ratios }: Pick<CandidateInputs, 'rings' | 'ra
   return rings.join('+') + at
 }
 
+/** How many ratios the rings have: one for each outside the first of more than one point; none that is known without rings. */
+const ratiosOf = (rings: readonly string[] | null): number | null => rings && rings.length - (rings[0] === '1' ? 2 : 1)
+
 /**
  * Reads rings and ratios: "4+12 at 2.57" sets both, "5+11" the rings alone, "at 2.2" or "2.2" the ratios alone.
- * Whether they fit together is for the family's rules to say.
+ * Whether they fit together is for the family's rules to say, but two ratios where there is room for one are a decimal comma.
  */
 export function parseRings(text: string): Entry {
   const typed = text.trim()
@@ -28,6 +27,8 @@ export function parseRings(text: string): Entry {
   const ratiosOnly = after === undefined && !before.includes('+') && (before.includes('.') || before.includes(','))
   const ringTexts = ratiosOnly || before === '' ? null : before.split('+').map(piece => piece.trim())
   const ratioTexts = ratiosOnly ? pieces(before) : after === undefined ? null : pieces(after)
+  const comma = ratioTexts && commaAmong(ratiosOnly ? before : after ?? '')
+  if (comma && ratioTexts.length !== ratiosOf(ringTexts)) return { refused: comma }
   const rings = ringTexts?.map(parseNumber)
   const ratios = ratioTexts?.map(parseNumber)
   if (rings?.some(n => n === null) || ratios?.some(n => n === null) || ratios?.length === 0) {

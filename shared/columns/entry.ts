@@ -25,6 +25,10 @@ const commaForm = /^[+−–-]?\d+,\d+$/
 export const refusedComma = (text: string): string | null =>
   commaForm.test(text.trim()) ? `“${text.trim()}” has a comma: enter ${text.trim().replace(',', '.')}, with a point.` : null
 
+/** The sentence against the first number with a decimal comma, where spaces or semicolons part the numbers. */
+export const commaAmong = (text: string): string | null =>
+  text.split(/[\s;]+/).map(piece => refusedComma(piece.replace(/,$/, ''))).find(sentence => sentence !== null) ?? null
+
 /** A number or a fraction such as 3/4. */
 export function parseFraction(text: string): number | null {
   const [above = '', below, ...rest] = text.split('/')

@@ -1,5 +1,5 @@
 import type { SweepAxis, SweepField } from '#shared/schemas/sweeps'
-import { parseNumber } from '#shared/columns/entry'
+import { commaAmong, parseNumber } from '#shared/columns/entry'
 import { backOffChoices, familyChoices, normalisationChoices } from '#shared/columns/words'
 import type { Choice } from '#shared/columns/words'
 
@@ -22,6 +22,9 @@ export const sweepParameters: readonly { value: SweepField, title: string, examp
 export type AxisEntry = { field: SweepField, text: string }
 
 const range = /^(.+?)\s+to\s+(.+?)\s+step\s+(.+)$/i
+
+/** Orders are whole numbers, which a comma may part; "2,57" of anything else is one number with a decimal comma. */
+const commaIn = (field: SweepField, text: string): string | null => field === 'order' ? null : commaAmong(text)
 
 const listOf = (field: SweepField, text: string): SweepAxis | { refused: string } => {
   const pieces = text.split(/[;,\s]+/).filter(piece => piece !== '')
@@ -53,6 +56,8 @@ export function parseAxis({ field, text }: AxisEntry): SweepAxis | { refused: st
   const choices = sweepParameters.find(parameter => parameter.value === field)?.choices
   if (choices) return wordsOf(field, typed, choices)
   if (field === 'rings') return ringsOf(field, typed)
+  const comma = commaIn(field, typed)
+  if (comma) return { refused: comma }
   const parts = range.exec(typed)
   if (!parts) return listOf(field, typed)
   const [start, stop, step] = parts.slice(1).map(part => parseNumber(part))
