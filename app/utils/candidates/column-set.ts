@@ -1,4 +1,5 @@
 import { z } from 'zod'
+import { name } from '#shared/schemas/common'
 import { columnOf, columns } from '#shared/columns'
 
 const stored = z.array(z.object({ id: z.string(), width: z.number().min(20).max(2000).optional() }))
@@ -6,6 +7,9 @@ const named = z.record(z.string(), stored)
 
 /** The columns shown, in their order, with the widths that the reader gave. */
 export type ColumnSet = { id: string, width?: number }[]
+
+/** What a reader may call a set of columns. */
+export const setName = name('a name for the set of columns', 40)
 
 const setKey = 'halfplane.candidates.columns'
 const namedKey = 'halfplane.candidates.column-sets'
