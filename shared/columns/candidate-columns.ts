@@ -29,7 +29,7 @@ const countsItsPoints = (id: string) => id === 'apsk' || id === 'custom'
 
 export const rings: InputColumn = {
   id: 'rings', title: 'Rings/ratios', group, kind: 'input', type: 'list', fields: ['rings', 'ratios'],
-  format: 'plain', round: 'nearest', firstOpening: true, width: 20,
+  format: 'plain', round: 'nearest', firstOpening: true, width: 22,
   meaning: 'APSK: points on each ring, the innermost first, and the radius of each further ring over that of the first ring of more than one point.',
   text: ringsText,
   parse: parseRings,

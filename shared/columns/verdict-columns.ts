@@ -4,7 +4,7 @@ const group = 'Verdict' as const
 const source = 'Methods §7'
 
 export const verdict = computed({
-  id: 'verdict', title: 'Verdict', group, type: 'text', format: 'plain', firstOpening: true, width: 30,
+  id: 'verdict', title: 'Verdict', group, type: 'text', format: 'plain', firstOpening: true, width: 32,
   meaning: 'Whether every must-have of the study holds, and if not, which fails and by how much.',
   formula: 'passes when every must-have holds, on unrounded numbers', source, tolerance: 'none: a comparison of unrounded numbers',
   value: row => row.values?.verdict ?? null,
