@@ -2,7 +2,7 @@ import type { Page } from 'playwright-core'
 import { expect } from 'vitest'
 
 /** Wide enough for every column on first opening to be drawn beside the overlay. */
-export const wide = { width: 4600, height: 1000 }
+export const wide = { width: 7000, height: 1000 }
 
 /** Texts of the drawn cells of one column, from the first row down. */
 export async function columnTexts(page: Page, column: string): Promise<string[]> {
