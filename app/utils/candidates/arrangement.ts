@@ -57,10 +57,11 @@ export function useArrangement() {
     filters.value = next
     arrangeNow()
   }
-  const shownRows = computed(() => order.value.flatMap((id): Candidate[] => {
+  /** The rows shown, as they are now: their content changes without their order, so nothing of it is kept. */
+  const shownRows = () => order.value.flatMap((id): Candidate[] => {
     const row = store.byId(id)
     return row ? [row] : []
-  }))
+  })
 
   arrangeNow()
   return { sort, filters, order, shownRows, sortBy, setSort, setFilters, arrangeNow }
