@@ -34,8 +34,9 @@ async function tenThousand(call: Call): Promise<string> {
 
 /** Reads an answer to its end without keeping it. @returns its length in bytes */
 async function lengthOf(stream: ReadableStream<Uint8Array>): Promise<number> {
+  const reader = stream.getReader()
   let length = 0
-  for await (const part of stream) length += part.length
+  for (let part = await reader.read(); !part.done; part = await reader.read()) length += part.value.length
   return length
 }
 

@@ -43,7 +43,7 @@ function valueOf(workbook: ExcelJS.Workbook, sheet: string, address: string, ove
   if (replaced !== undefined) return replaced
   const { value } = workbook.getWorksheet(sheet)!.getCell(address)
   if (typeof value === 'number') return value
-  if (typeof value === 'object' && value !== null && 'formula' in value) {
+  if (typeof value === 'object' && value !== null && 'formula' in value && value.formula) {
     return computeFormula(value.formula, (other, column, row) => valueOf(workbook, other ?? sheet, `${column}${row}`, overrides))
   }
   throw new Error(`${sheet}!${address} holds no number: ${JSON.stringify(value)}`)
