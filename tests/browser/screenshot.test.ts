@@ -5,7 +5,7 @@ import type { StudySummary } from '#shared/schemas/studies'
 import { launchBrowser, openPage } from '../support/browser'
 import { signIn } from '../support/client'
 
-/** The README's picture; written only where HALFPLANE_SCREENSHOT=1 asks for it, so that a test run changes no file. */
+/** The README's picture; written only where README_PICTURE=1 asks for it, so that a test run changes no file. */
 const picture = fileURLToPath(new URL('../../public/screenshot.png', import.meta.url))
 
 it('draws the demonstration study', async () => {
@@ -21,6 +21,6 @@ it('draws the demonstration study', async () => {
   // A blank sheet of this size compresses to a few kilobytes.
   expect(image.length).toBeGreaterThan(60_000)
   expect(complaints).toEqual([])
-  if (process.env.HALFPLANE_SCREENSHOT === '1') await writeFile(picture, image)
+  if (process.env.README_PICTURE === '1') await writeFile(picture, image)
   await browser.close()
 })
