@@ -43,7 +43,7 @@ async function write(tx: Transaction, people: DemonstrationPeople) {
 
 /**
  * Writes the demonstration's three studies: the ridge link with its 24 rows, a sweep over ring ratios, an empty one.
- * All of them or none; nothing where there are studies already. The rows are computed as any others are.
+ * All of them or none; nothing where there are studies already. The rows are computed like all others.
  */
 export async function seedDemonstration(db: Database, { owner, editor, reviewer, observer }: DemonstrationPeople): Promise<void> {
   const [existing] = await db.select({ n: count() }).from(studies)

@@ -69,7 +69,7 @@ export const defaultInputs: CandidateInputs = {
   implementationLossDb: null, role: null, roleReason: '', note: '',
 }
 
-/** One new row: any of the inputs; what is left out takes its default, the name is made from the family. */
+/** One new row: some or all of the inputs; what is left out takes its default, the name is made from the family. */
 export const candidateCreation = candidateInputs.partial()
 
 /** POST /api/studies/{id}/candidates: one row, or many in `items`; `after` places them behind that row. */
