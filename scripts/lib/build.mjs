@@ -10,6 +10,8 @@ import { buildPlaces, inRoot, lockPlace, root } from './places.mjs'
 const sourceFolders = ['app', 'server', 'shared', 'drizzle', 'public']
 const sourceFiles = /^(package(-lock)?\.json|(nuxt|tailwind|postcss|app)\.config\.\w+|tsconfig\.json)$/
 
+const nuxt = inRoot('node_modules', '.bin', 'nuxt')
+
 /**
  * Builds the application when its sources are newer than the last whole build, or there is none.
  * @param {import('./lifetime.mjs').Lifetime | undefined} lifetime
@@ -23,17 +25,33 @@ export async function ensureBuild(lifetime, env) {
   const fresh = () => existsSync(entry) && newestSource() <= builtFrom(note)
   if (fresh()) return entry
 
-  await underLock(lockPlace(`build ${output}`), 'builds the application', async () => {
+  // One build at a time: each reads the types' configuration that another, into another place, may just be writing anew.
+  await underLock(lockPlace('build'), 'builds the application', async () => {
     if (fresh()) return
+    await ensureTypes(lifetime)
     const begun = Date.now()
-    await run(lifetime, 'building the application (a minute or so)', inRoot('node_modules', '.bin', 'nuxt'), ['build'], {
+    await run(lifetime, 'building the application (a minute or so)', nuxt, ['build'], {
       cwd: root,
-      env: { ...withoutOurs(process.env), ...(buildDir ? { HALFPLANE_BUILD_DIR: buildDir } : {}), NODE_ENV: 'production', NUXT_TELEMETRY_DISABLED: '1', CI: '1' },
+      env: { ...quietly(), ...(buildDir ? { HALFPLANE_BUILD_DIR: buildDir } : {}), NODE_ENV: 'production' },
     })
     // What changes during a build is newer than it. Nitro empties the place first, so a broken build has no note.
     writeFileSync(note, JSON.stringify({ begun }))
   })
   return entry
+}
+
+/**
+ * Writes Nuxt's types when they are missing: tsconfig.json refers to them at their usual place, wherever the build goes.
+ * @param {import('./lifetime.mjs').Lifetime | undefined} lifetime
+ */
+async function ensureTypes(lifetime) {
+  if (existsSync(inRoot('.nuxt', 'tsconfig.app.json'))) return
+  await run(lifetime, "writing the framework's types", nuxt, ['prepare'], { cwd: root, env: quietly() })
+}
+
+/** @returns {NodeJS.ProcessEnv} of a program of the framework that neither asks nor reports */
+function quietly() {
+  return { ...withoutOurs(process.env), NUXT_TELEMETRY_DISABLED: '1', CI: '1' }
 }
 
 /**
