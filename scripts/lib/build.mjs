@@ -46,7 +46,7 @@ export async function ensureBuild(lifetime, env) {
  */
 async function ensureTypes(lifetime) {
   if (existsSync(inRoot('.nuxt', 'tsconfig.app.json'))) return
-  await run(lifetime, "writing the framework's types", nuxt, ['prepare'], { cwd: root, env: quietly() })
+  await run(lifetime, 'writing the types of the framework', nuxt, ['prepare'], { cwd: root, env: quietly() })
 }
 
 /** @returns {NodeJS.ProcessEnv} of a program of the framework that neither asks nor reports */
