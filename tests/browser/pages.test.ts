@@ -175,6 +175,17 @@ describe('account', () => {
     expect(complaints).toEqual([])
   })
 
+  it('a name that is too long is kept as typed and told what is allowed', async () => {
+    await openAs('owner')
+    await openReady(page, '/account')
+    const name = page.getByLabel('Name of a new token')
+    await name.fill('n'.repeat(81))
+    await page.getByRole('button', { name: 'Make a token' }).click()
+    await page.getByText('A token\'s name has at most 80 characters.').waitFor()
+    expect(await name.inputValue()).toBe('n'.repeat(81))
+    expect(unexpected(complaints, 422)).toEqual([])
+  })
+
   it('the sheet is chosen and kept', async () => {
     await openAs('owner')
     await openReady(page, '/account')

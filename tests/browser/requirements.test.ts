@@ -131,6 +131,16 @@ describe('values', () => {
     expect(complaints).toEqual([])
   })
 
+  it('a text that is too long is kept as typed, says what is allowed and is not saved', async () => {
+    await page.getByLabel('ID', { exact: true }).first().fill('R'.repeat(25))
+    await page.getByText('An ID has at most 24 characters.').waitFor()
+    expect(await page.getByLabel('ID', { exact: true }).first().inputValue()).toBe('R'.repeat(25))
+    expect((await saved()).mustHaves[0]?.id).toBe('R1')
+    await page.getByLabel('ID', { exact: true }).first().fill('R1')
+    await allSaved()
+    expect(complaints).toEqual([])
+  })
+
   it('a must-have is added with an ID of its own, valued and removed', async () => {
     await page.getByRole('button', { name: 'Add a must-have' }).click()
     await page.getByLabel('Kind of R4').selectOption({ label: 'Maximum PAPR' })
