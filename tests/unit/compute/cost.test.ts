@@ -8,7 +8,9 @@ const paths = (constellation: object) =>
 
 describe('the cost limit of an evaluation', () => {
   it('lets 256 points have their all-pairs sum', () => expect(paths({ family: 'qam', order: 256 })).toEqual([]))
-  it('refuses it for 4096 points', () => expect(paths({ family: 'qam', order: 4096 })).toEqual(['quantities']))
+  it('refuses it for 4096 points at 1,001 values', () => expect(paths({ family: 'qam', order: 4096 })).toEqual(['quantities']))
+  it('lets 4096 points have it at 41 values', () =>
+    expect(costIssues(evaluation.parse({ constellation: { family: 'qam', order: 4096 }, esN0Db: esN0Db.slice(0, 41), quantities: ['serAllPairs'] }))).toEqual([]))
   it('does not count points that the family does not read', () =>
     expect(paths({ family: 'qam', order: 4096, points: [[0, 0], [1, 1]] })).toEqual(['quantities']))
   it('does not count rings that the family does not read', () => expect(paths({ family: 'psk', order: 4096, rings: [2] })).toEqual(['quantities']))

@@ -3,13 +3,18 @@ import { defaultInputs } from '#shared/schemas/candidates'
 import { defaultRequirements } from '#shared/schemas/requirements'
 import { canonicalInputs } from '#shared/study'
 import { closePool, compute, ComputationFailed } from '../../../server/compute/pool'
+import { randomFrom } from '../modulation/seeded'
 
 const row = canonicalInputs(defaultInputs, defaultRequirements)
 const broken = { ...row, study: null as unknown as typeof row.study }
-/** Takes minutes: 4,096 points on a circle, all pairs. */
+const random = randomFrom(1)
+/** Takes ten seconds and more: 4,096 scattered points, all pairs at 1,001 values. */
 const long = {
   kind: 'evaluation' as const,
-  asked: { constellation: { family: 'psk', order: 4096 }, esN0Db: Array.from({ length: 1001 }, (_, i) => i / 50), quantities: ['serAllPairs'] },
+  asked: {
+    constellation: { family: 'custom', points: Array.from({ length: 4096 }, () => [random(), random()]) },
+    esN0Db: Array.from({ length: 1001 }, (_, i) => i / 50), quantities: ['serAllPairs'],
+  },
 }
 
 afterAll(closePool)
