@@ -9,14 +9,14 @@ const overhead = ({ requirements }: ColumnContext) => shown(requirements?.overhe
 const interval = ({ requirements }: ColumnContext) => shown(requirements?.dimensionsPerInterval, 'integer')
 
 export const spectralEfficiency = valueColumn('spectralEfficiency', '0.00', {
-  id: 'spectralEfficiency', title: 'η', unit: 'bit/s/Hz', group, round: 'down', firstOpening: true, width: 13,
+  id: 'spectralEfficiency', title: 'η', unit: 'bit/s/Hz', group, firstOpening: true, width: 13,
   meaning: 'Spectral efficiency: net bit rate over occupied bandwidth.',
   formula: 'η = net rate / B', source, tolerance,
   lines: v => [`${shown(v.netBitRate / 1e6, '0.000')} Mbit/s / ${shown(v.occupiedBandwidthHz / 1e6, '0.000')} MHz = ${shown(v.spectralEfficiency, '0.000')} bit/s/Hz`],
 })
 
 export const netRate = valueColumn('netBitRate', '0.0', {
-  id: 'netRate', title: 'Net rate', unit: 'Mbit/s', group, round: 'down', firstOpening: true, width: 17,
+  id: 'netRate', title: 'Net rate', unit: 'Mbit/s', group, firstOpening: true, width: 17,
   meaning: 'Net bit rate after the study\'s overhead.',
   formula: 'net rate = R·Rs·(1 − overhead)', source, tolerance,
   lines: (v, _row, context) => [`${shown(v.netBits, '0.000')} · ${shown(v.symbolRateHz / 1e6, '0.000')} Msymbol/s · (1 − ${overhead(context)}) = ${shown(v.netBitRate / 1e6, '0.000')} Mbit/s`],
@@ -30,7 +30,7 @@ export const symbolRate = valueColumn('symbolRateHz', '0.000', {
 }, 1e6)
 
 export const occupiedBandwidth = valueColumn('occupiedBandwidthHz', '0.00', {
-  id: 'occupiedBandwidth', title: 'Occupied bandwidth B', unit: 'MHz', group, width: 26, round: 'up',
+  id: 'occupiedBandwidth', title: 'Occupied bandwidth B', unit: 'MHz', group, width: 26,
   meaning: 'Bandwidth that the shaped signal occupies.',
   formula: 'B = Rs·N·(1+α)/D', source, tolerance,
   lines: (v, _row, context) => [`${shown(v.symbolRateHz / 1e6, '0.000')} Msymbol/s · ${shown(v.dimensions, 'integer')} · (1 + ${shown(v.rollOff, 'plain')}) / ${interval(context)} = ${shown(v.occupiedBandwidthHz / 1e6, '0.000')} MHz`],

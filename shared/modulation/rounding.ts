@@ -27,3 +27,12 @@ export function floorToDigits(x: number, digits: number): number {
 export function ceilToDigits(x: number, digits: number): number {
   return withoutNegativeZero(-floorToDigits(-x, digits))
 }
+
+/**
+ * Nearest decimal of so many digits: how everything but margins is shown.
+ * @param x any number; infinities and NaN come back as they are
+ * @param digits after the point, 0 to 100
+ */
+export function nearestOfDigits(x: number, digits: number): number {
+  return withoutNegativeZero(Number(x.toFixed(digits)))
+}

@@ -1,15 +1,16 @@
-import { ceilToDigits, floorToDigits, roundingSlack } from './rounding'
+import { ceilToDigits, floorToDigits, nearestOfDigits, roundingSlack } from './rounding'
 
 /**
- * Kinds of must-have: the words and the unit that a verdict uses, digits shown, and on which side the limit lies.
+ * Kinds of must-have: the words and the unit that a verdict uses, digits shown and how they round (in the grid's columns alike), and on
+ * which side the limit lies.
  * PAPR is the constellation's own, not the shaped waveform's.
  */
 export const verdictKinds = {
-  margin: { words: 'margin', unit: 'dB', digits: 2, sense: 'atLeast', signed: true },
-  netBitRate: { words: 'net bit rate', unit: 'Mbit/s', digits: 1, sense: 'atLeast', signed: false },
-  occupiedBandwidth: { words: 'occupied bandwidth', unit: 'MHz', digits: 2, sense: 'atMost', signed: false },
-  spectralEfficiency: { words: 'spectral efficiency', unit: 'bit/s/Hz', digits: 2, sense: 'atLeast', signed: false },
-  papr: { words: 'PAPR', unit: 'dB', digits: 2, sense: 'atMost', signed: false },
+  margin: { words: 'margin', unit: 'dB', digits: 2, round: 'down', sense: 'atLeast', signed: true },
+  netBitRate: { words: 'net bit rate', unit: 'Mbit/s', digits: 1, round: 'nearest', sense: 'atLeast', signed: false },
+  occupiedBandwidth: { words: 'occupied bandwidth', unit: 'MHz', digits: 2, round: 'nearest', sense: 'atMost', signed: false },
+  spectralEfficiency: { words: 'spectral efficiency', unit: 'bit/s/Hz', digits: 2, round: 'nearest', sense: 'atLeast', signed: false },
+  papr: { words: 'PAPR', unit: 'dB', digits: 2, round: 'nearest', sense: 'atMost', signed: false },
 } as const
 export type VerdictKind = keyof typeof verdictKinds
 
@@ -37,44 +38,42 @@ const decimal = (x: number, digits: number, signed: boolean) => {
 const limitOf = (mustHave: VerdictLimit, values: VerdictValues) =>
   mustHave.kind === 'margin' ? values.requiredMargin ?? mustHave.value : mustHave.value
 
-type Showing = {
-  passes: boolean
-  sense: 'atLeast' | 'atMost'
-  digits: number
-  /** whether the value always rounds down */
-  down: boolean
-  limit: number
-}
+/** Most digits that a value is shown with, where fewer would hide that it misses its limit: beyond are rounding errors. */
+const mostDigits = 12
+
+interface Shown { value: number, by: number, digits: number }
 
 /**
- * A value and its distance from the limit as they are shown. Margins round down. Other values round to the nearest, as in the
- * grid, unless that would hide that it fails: then it rounds towards failing, and so its distance is never nothing.
+ * A value and its distance from the limit as they are shown: rounded as the grid does, margins down and other values to the nearest.
+ * A margin's shortfall rounds up. Where the nearest would hide that a value misses its limit, it has more digits.
  */
-const shownNumbers = (value: number, distance: number, { passes, sense, digits, down, limit }: Showing): [number, number] => {
-  const scale = 10 ** digits
-  const [nearest, apart] = [Math.round(value * scale) / scale, Math.round(distance * scale) / scale]
-  const hidden = !passes && (apart === 0 || (sense === 'atLeast' ? nearest >= limit : nearest <= limit))
-  if (!down && !hidden) return [nearest, apart]
-  return [
-    (sense === 'atLeast' ? floorToDigits : ceilToDigits)(value, digits),
-    (passes ? floorToDigits : ceilToDigits)(distance, digits),
-  ]
+function shownNumbers(value: number, distance: number, misses: (value: number) => boolean, kind: VerdictKind): Shown {
+  const { digits, round } = verdictKinds[kind]
+  if (round === 'down') return { value: floorToDigits(value, digits), by: (misses(value) ? ceilToDigits : floorToDigits)(distance, digits), digits }
+  let shown = { value: nearestOfDigits(value, digits), by: nearestOfDigits(distance, digits), digits: digits as number }
+  while (misses(value) && (shown.by === 0 || !misses(shown.value)) && shown.digits < mostDigits) {
+    const more = shown.digits + 1
+    shown = { value: nearestOfDigits(value, more), by: nearestOfDigits(distance, more), digits: more }
+  }
+  return shown
 }
 
 const judge = (mustHave: VerdictLimit, values: VerdictValues): VerdictCheck => {
   const { id, kind } = mustHave
-  const { words, unit, digits, sense, signed } = verdictKinds[kind]
+  const { words, unit, sense, signed } = verdictKinds[kind]
   const value = values[kind]
   if (value === null || Number.isNaN(value)) {
     return { id, kind, passes: false, by: null, sentence: `${words} is not known for this row` }
   }
   const limit = limitOf(mustHave, values)
-  const by = sense === 'atLeast' ? value - limit : limit - value
-  const passes = by >= -roundingSlack(limit)
-  const [shown, distance] = shownNumbers(value, Math.abs(by), { passes, sense, digits, down: signed, limit })
+  const over = (x: number) => sense === 'atLeast' ? x - limit : limit - x
+  const misses = (x: number) => over(x) < -roundingSlack(limit)
+  const by = over(value)
+  const passes = !misses(value)
+  const shown = shownNumbers(value, Math.abs(by), misses, kind)
   const where = kind === 'margin' && values.decidingCase ? ` (${values.decidingCase})` : ''
   const side = passes ? 'to spare' : sense === 'atLeast' ? 'short' : 'over'
-  return { id, kind, passes, by: by === 0 ? 0 : by, sentence: `${words} ${decimal(distance, digits, false)} ${unit} ${side} at ${decimal(shown, digits, signed)} ${unit}${where}` }
+  return { id, kind, passes, by: by === 0 ? 0 : by, sentence: `${words} ${decimal(shown.by, shown.digits, false)} ${unit} ${side} at ${decimal(shown.value, shown.digits, signed)} ${unit}${where}` }
 }
 
 /**

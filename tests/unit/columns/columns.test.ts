@@ -1,5 +1,6 @@
 import { describe, expect, it } from 'vitest'
 import { columnOf, columns, headerOf, whyOf } from '../../../shared/columns'
+import { verdictKinds } from '../../../shared/modulation/verdict'
 import { candidateChange, candidateInputs } from '../../../shared/schemas/candidates'
 import { sampleRow } from './sample-row'
 
@@ -24,6 +25,9 @@ describe('the columns', () => {
     const changed = candidateChange.parse(entry.change)
     for (const field of column.fields) if (field in changed) expect(changed[field]).toEqual(row.inputs[field])
   })
+  it.each([['margin', 'margin'], ['netRate', 'netBitRate'], ['occupiedBandwidth', 'occupiedBandwidth'], ['spectralEfficiency', 'spectralEfficiency'], ['papr', 'papr']] as const)(
+    'round %s as the verdict\'s words do', (id, kind) => expect(columnOf(id)?.round).toBe(verdictKinds[kind].round),
+  )
   it.each(columns.filter(c => c.kind === 'computed'))('explains $id', (column) => {
     expect(whyOf(column, row, context)?.lines.join(' ')).toMatch(/\S/)
   })

@@ -1,6 +1,6 @@
 import fc from 'fast-check'
 import { describe, expect, it } from 'vitest'
-import { ceilToDigits, floorToDigits } from '../../../shared/modulation/rounding'
+import { ceilToDigits, floorToDigits, nearestOfDigits } from '../../../shared/modulation/rounding'
 
 describe('numbers rounded down for show', () => {
   it('1.1 stays 1.1', () => expect(floorToDigits(1.1, 2)).toBe(1.1))
@@ -27,4 +27,10 @@ describe('numbers rounded up for show', () => {
   it('0.001 shows as 0.01', () => expect(ceilToDigits(0.001, 2)).toBe(0.01))
   it('0.3 + 1e-16 shows as 0.3', () => expect(ceilToDigits(0.1 + 0.2, 2)).toBe(0.3))
   it('−0.009 shows as plain 0', () => expect(Object.is(ceilToDigits(-0.009, 2), 0)).toBe(true))
+})
+
+describe('numbers rounded to the nearest for show', () => {
+  it('15.96 shows as 16', () => expect(nearestOfDigits(15.96, 1)).toBe(16))
+  it('−0.04 shows as plain 0', () => expect(Object.is(nearestOfDigits(-0.04, 1), 0)).toBe(true))
+  it('∞ comes back as it is', () => expect(nearestOfDigits(Infinity, 1)).toBe(Infinity))
 })

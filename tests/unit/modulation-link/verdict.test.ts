@@ -12,11 +12,11 @@ describe('verdict in words', () => {
   it('says which must-have fails and by how much', () => {
     expect(text({ netBitRate: 15.96 }, must('R2', 'netBitRate', 20))).toBe('fails R2: net bit rate 4.0 Mbit/s short at 16.0 Mbit/s')
   })
-  it('rounds a rate towards failing where the nearest decimal would meet the limit', () => {
-    expect(text({ netBitRate: 19.98 }, must('R2', 'netBitRate', 20))).toBe('fails R2: net bit rate 0.1 Mbit/s short at 19.9 Mbit/s')
+  it('shows a rate with more digits where the nearest decimal would meet the limit', () => {
+    expect(text({ netBitRate: 19.98 }, must('R2', 'netBitRate', 20))).toBe('fails R2: net bit rate 0.02 Mbit/s short at 19.98 Mbit/s')
   })
   it('does so for a limit between two decimals', () => {
-    expect(text({ netBitRate: 19.93 }, must('R2', 'netBitRate', 19.96))).toBe('fails R2: net bit rate 0.1 Mbit/s short at 19.9 Mbit/s')
+    expect(text({ netBitRate: 19.93 }, must('R2', 'netBitRate', 19.96))).toBe('fails R2: net bit rate 0.03 Mbit/s short at 19.93 Mbit/s')
   })
   it('shows 16-QAM of the demonstration short by 0.14 dB', () => {
     expect(text({ margin: 0.8612 }, must('R1', 'margin', 1))).toBe('fails R1: margin 0.14 dB short at +0.86 dB')
@@ -32,7 +32,7 @@ describe('verdict in words', () => {
     expect(text({ margin: 0.9999999 }, must('R1', 'margin', 1))).toBe('fails R1: margin 0.01 dB short at +0.99 dB')
   })
   it('never shows an excess as nothing', () => {
-    expect(text({ papr: 3.0000001 }, must('R5', 'papr', 3))).toBe('fails R5: PAPR 0.01 dB over at 3.01 dB')
+    expect(text({ papr: 3.0000001 }, must('R5', 'papr', 3))).toBe('fails R5: PAPR 0.0000001 dB over at 3.0000001 dB')
   })
   it('says when the row has no such number', () => expect(text({ papr: null }, must('R5', 'papr', 3))).toBe('fails R5: PAPR is not known for this row'))
   it('names the deciding case beside the margin', () => {
