@@ -104,7 +104,7 @@ export const useCellEditsStore = defineStore('cell-edits', () => {
     if (!now) return
     const shown = column.text(now.inputs)
     if (text.trim() === shown.trim() && !saves.has(key)) return
-    const entry = column.parse(text)
+    const entry = column.parse(text, now.inputs)
     if ('refused' in entry) {
       set(key, { state: 'refused', text, sentence: entry.refused })
       return

@@ -1,8 +1,9 @@
 import { parseFraction, numberEntry } from './entry'
-import { parseNumberList, numberListText, parseRings, ringsText } from './entry-lists'
+import { parseNumberList, numberListText, ringsText } from './entry-lists'
 import type { InputColumn } from './column'
 import { choiceInput, numberInput, textInput, unusedParameter } from './make'
 import { formatNumber } from './format'
+import { parseRingsOrPreset, ringPresets, ringsSource } from './rings-entry'
 import { basisChoices, familyChoices, roleChoices } from './words'
 
 const group = 'Candidate' as const
@@ -30,10 +31,12 @@ const countsItsPoints = (id: string) => id === 'apsk' || id === 'custom'
 export const rings: InputColumn = {
   id: 'rings', title: 'Rings/ratios', group, kind: 'input', type: 'list', fields: ['rings', 'ratios'],
   format: 'plain', round: 'nearest', firstOpening: true, width: 22,
-  meaning: 'APSK: points on each ring, the innermost first, and the radius of each further ring over that of the first ring of more than one point.',
-  text: ringsText,
-  parse: parseRings,
-  unused: unusedParameter('rings', 'rings and ratios'),
+  meaning: 'APSK: points on each ring, the innermost first, and the radius of each further ring over that of the first ring of more than one point. The ring sets of ETSI EN 302 307-1 are offered.',
+  presets: ringPresets,
+  text: inputs => inputs.family === 'apsk' ? ringsText(inputs) : '',
+  parse: parseRingsOrPreset,
+  source: ringsSource,
+  unused: unusedParameter('rings', 'rings and ratios; entering them makes it APSK'),
   value: ({ inputs }) => inputs.family === 'apsk' ? ringsText(inputs) || null : null,
 }
 

@@ -23,6 +23,9 @@ export type Entry = { change: CandidateChange } | { refused: string }
 /** The answer to "why this number": a formula, the same with the row's values put in, and what it rests on. */
 export type Why = { formula: string, lines: string[], source: string, tolerance: string }
 
+/** A published value that an input cell offers beside free entry: its text there, its title in the list, and all that it sets. */
+export type Preset = { text: string, title: string, change: CandidateChange }
+
 interface Base {
   id: string
   title: string
@@ -46,11 +49,16 @@ export interface InputColumn extends Base {
   /** the inputs that the cell shows and changes */
   fields: readonly [CandidateField, ...CandidateField[]]
   choices?: readonly { value: string, title: string }[]
+  /** offered beside free entry; one brings its family with it, so that such a cell takes entries in rows of every family */
+  presets?: readonly Preset[]
   /** what the cell's editor opens with */
   text: (inputs: CandidateInputs) => string
-  parse: (text: string) => Entry
+  /** @param inputs of the row, where what is typed means something for its other inputs */
+  parse: (text: string, inputs?: CandidateInputs) => Entry
   /** null: the row's family uses this input; else the sentence that says why not */
   unused?: (inputs: CandidateInputs) => string | null
+  /** where the entered value was published, if the product knows */
+  source?: (inputs: CandidateInputs) => string | null
 }
 
 export interface ComputedColumn extends Base {

@@ -9,7 +9,7 @@ import * as verdict from './verdict-columns'
 import type { Column } from './column'
 
 export { columnGroups, headerOf, whyOf } from './column'
-export type { CellValue, Column, ColumnContext, ColumnGroup, ComputedColumn, Entry, InputColumn, Why } from './column'
+export type { CellValue, Column, ColumnContext, ColumnGroup, ComputedColumn, Entry, InputColumn, Preset, Why } from './column'
 export { formatNumber, plain } from './format'
 export type { NumberFormat, Rounding } from './format'
 

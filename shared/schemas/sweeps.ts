@@ -2,11 +2,16 @@ import { z } from 'zod'
 import { candidateChange } from './candidates'
 import { id, numberBetween } from './common'
 
-/** Fields that a sweep can vary; `ratios.n` is the n-th ring ratio, counted from 0. */
+/**
+ * Fields that a sweep can vary; `ratios.n` is the n-th ring ratio, counted from 0. `preset` is a published APSK ring set
+ * by its title, such as "16-APSK 9/10", and sets all of presetFields.
+ */
 export const sweepFields = [
-  'family', 'order', 'rings', 'ratios.0', 'ratios.1', 'ratios.2', 'normalisation', 'spacing', 'rollOff', 'backOff', 'backOffDb', 'implementationLossDb',
+  'family', 'order', 'preset', 'rings', 'ratios.0', 'ratios.1', 'ratios.2', 'normalisation', 'spacing', 'rollOff', 'backOff', 'backOffDb', 'implementationLossDb',
 ] as const
 export type SweepField = (typeof sweepFields)[number]
+/** What a preset sets, so that it is not varied beside one. */
+export const presetFields: readonly SweepField[] = ['family', 'order', 'rings', 'ratios.0', 'ratios.1', 'ratios.2']
 
 const value = z.union([
   z.number(), z.string().max(40),
@@ -32,7 +37,8 @@ export type SweepAxis = z.infer<typeof sweepAxis>
 export const sweepCreation = z.strictObject({
   base: candidateChange,
   axes: z.array(sweepAxis).min(1, 'Vary at least one parameter.').max(6, 'Vary at most 6 parameters.')
-    .refine(axes => new Set(axes.map(a => a.field)).size === axes.length, 'Each parameter is varied once.'),
+    .refine(axes => new Set(axes.map(a => a.field)).size === axes.length, 'Each parameter is varied once.')
+    .refine(axes => !axes.some(a => a.field === 'preset') || !axes.some(a => presetFields.includes(a.field)), 'A preset sets family, order, rings and ratios: do not vary these beside it.'),
 })
 export type SweepCreation = z.infer<typeof sweepCreation>
 

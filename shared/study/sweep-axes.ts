@@ -1,8 +1,11 @@
+import { apskPresets } from '../modulation'
 import type { FamilyParameter } from '../modulation'
 import { candidateInputs } from '../schemas/candidates'
 import type { CandidateInputs } from '../schemas/candidates'
 import type { Issue } from '../schemas/common'
+import { presetFields } from '../schemas/sweeps'
 import type { SweepAxis, SweepField } from '../schemas/sweeps'
+import { presetInputs, presetOf } from './apsk-presets'
 import { familyOfRow } from './family-parameters'
 import { mostValues, snrGrid, valuesOfRange } from './snr-grid'
 
@@ -28,13 +31,15 @@ export function axisValues(axis: SweepAxis, n: number): { values: Value[], issue
 }
 
 function sentenceAgainst(field: SweepField, value: Value): string | null {
+  if (field === 'preset') return presetOf(value) ? null : `A preset is one of ${apskPresets.map(preset => preset.title).join(', ')}.`
   const [name] = field.split('.') as [keyof typeof candidateInputs.shape]
   const parsed = candidateInputs.shape[name].safeParse(name === 'ratios' ? [value] : value)
   return parsed.success ? null : parsed.error.issues[0]!.message
 }
 
-/** Inputs with one parameter set. */
+/** Inputs with one parameter set, or with all that a preset sets. */
 export function withValue(inputs: CandidateInputs, field: SweepField, value: Value): CandidateInputs {
+  if (field === 'preset') return { ...inputs, ...presetInputs(presetOf(value)!) }
   const [name, index] = field.split('.')
   if (index === undefined) return { ...inputs, [name!]: value }
   // A gap before this ratio is no number; the family's validation then says how many ratios there are.
@@ -44,7 +49,7 @@ export function withValue(inputs: CandidateInputs, field: SweepField, value: Val
 }
 
 /** Axes on which the points depend. */
-export const constellationFields: readonly SweepField[] = ['family', 'order', 'rings', 'ratios.0', 'ratios.1', 'ratios.2']
+export const constellationFields: readonly SweepField[] = ['preset', ...presetFields]
 
 /**
  * Whether a row's numbers depend on a parameter. Those that do not are not multiplied out:

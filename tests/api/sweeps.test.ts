@@ -51,6 +51,14 @@ describe('a sweep', () => {
     const axes = [{ field: 'family', values: ['psk', 'cross-qam'] }, { field: 'order', values: [16, 32] }]
     expect((await begin(owner, await ownStudy(owner, 'Left out'), { base: {}, axes })).body.total).toBe(3)
   })
+  it('makes the published ring sets, each with its own pair of ratios and its phases', async () => {
+    const study = await ownStudy(owner, 'Presets')
+    await begin(owner, study, { base: {}, axes: [{ field: 'preset', values: ['16-APSK 9/10', '32-APSK 3/4', '32-APSK 4/5'] }] })
+    await ended(owner, study)
+    expect((await allRows(owner, study)).map(({ inputs }) => [inputs.name, inputs.phasesDeg])).toEqual([
+      ['4+12 at 2.57', [45, 15]], ['4+12+16 at 2.84, 5.27', [45, 15, 0]], ['4+12+16 at 2.72, 4.87', [45, 15, 0]],
+    ])
+  })
   it('is refused above 10,000 rows', async () => {
     const study = await ownStudy(owner, 'Too many')
     const axes = [ratios(0.01), { field: 'rollOff', start: 0, stop: 1, step: 0.01 }]
@@ -72,6 +80,8 @@ describe('a sweep', () => {
     ['a value that the field cannot have', { base: {}, axes: [{ field: 'order', values: [4, 'many'] }] }, 'axes.0.values.1'],
     ['a parameter that does not exist', { base: {}, axes: [{ field: 'colour', values: [1] }] }, 'axes.0.field'],
     ['a parameter that is varied twice', { base: rings, axes: [ratios(0.1), ratios(0.2)] }, 'axes'],
+    ['a preset that the standard does not have', { base: {}, axes: [{ field: 'preset', values: ['64-APSK 2/3'] }] }, 'axes.0.values.0'],
+    ['a preset beside what it sets', { base: {}, axes: [{ field: 'preset', values: ['16-APSK 2/3'] }, ratios(0.1)] }, 'axes'],
     ['an unknown field of the base', { base: { colour: 'red' }, axes: [ratios(0.1)] }, 'base.colour'],
   ]
   for (const [what, definition, path] of bad) {

@@ -79,6 +79,6 @@ export function cellClasses(view: CellView): string[] {
   return classes
 }
 
-/** Whether the reader may type into a cell. */
+/** Whether the reader may type into a cell: one that its row's family does not use only for a preset, which brings its family. */
 export const isEditable = (row: Candidate, column: Column, canEdit: boolean) =>
-  canEdit && column.kind === 'input' && !column.unused?.(row.inputs)
+  canEdit && column.kind === 'input' && (column.presets !== undefined || !column.unused?.(row.inputs))

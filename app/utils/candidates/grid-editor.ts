@@ -1,6 +1,7 @@
 import type { ICellEditorComp, ICellEditorParams } from 'ag-grid-community'
 import type { Candidate } from '#shared/schemas/candidates'
 import type { InputColumn } from '#shared/columns'
+import { PresetList } from './preset-list'
 
 export type EditorParams = { column: InputColumn, textOf: (row: Candidate) => string }
 
@@ -8,9 +9,12 @@ export type EditorParams = { column: InputColumn, textOf: (row: Candidate) => st
  * Editor of an input cell. A printable key replaces the text, anything else opens it as it stands,
  * a refused text included, so that it can be put right. What it hands back is always text as the cell shows it: of a list
  * the title, never the value behind it. The list stays closed until the reader opens it, for Escape would close that first.
+ * Presets stand under the line, in a box over the cell.
  */
 export class GridEditor implements ICellEditorComp<Candidate, string> {
   private gui!: HTMLInputElement | HTMLSelectElement
+  private presets: PresetList | null = null
+  private box: HTMLElement | null = null
   private params!: ICellEditorParams<Candidate, string> & { entry: EditorParams }
   private typed = false
 
@@ -22,6 +26,20 @@ export class GridEditor implements ICellEditorComp<Candidate, string> {
     this.gui = column.choices ? this.list(column.choices, text, key) : this.line(text, key)
     this.gui.className = `grid-editor${column.type === 'number' ? ' grid-editor-number' : ''}`
     this.gui.setAttribute('aria-label', column.title)
+    if (column.presets && this.gui instanceof HTMLInputElement) this.box = this.boxOf(this.gui, column.presets, column.title)
+  }
+
+  private boxOf(input: HTMLInputElement, presets: NonNullable<InputColumn['presets']>, title: string) {
+    this.presets = new PresetList(input, presets, title, () => this.params.stopEditing(true))
+    const box = document.createElement('div')
+    box.className = 'preset-box'
+    box.style.minWidth = `${this.params.eGridCell.offsetWidth}px`
+    box.append(input, this.presets.element)
+    return box
+  }
+
+  isPopup() {
+    return this.box !== null
   }
 
   private line(text: string, key: string) {
@@ -62,10 +80,10 @@ export class GridEditor implements ICellEditorComp<Candidate, string> {
   }
 
   getGui() {
-    return this.gui
+    return this.box ?? this.gui
   }
 
   getValue() {
-    return this.gui.value
+    return this.presets?.title ?? this.gui.value
   }
 }

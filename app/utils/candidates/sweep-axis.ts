@@ -1,11 +1,30 @@
+import { apskPresets } from '#shared/modulation/families'
+import { presetFields } from '#shared/schemas/sweeps'
 import type { SweepAxis, SweepField } from '#shared/schemas/sweeps'
+import { presetSource } from '#shared/study/apsk-presets'
 import { commaAmong, parseNumber } from '#shared/columns/entry'
 import { backOffChoices, familyChoices, normalisationChoices } from '#shared/columns/words'
 import type { Choice } from '#shared/columns/words'
 
-/** Parameters that a sweep can vary, in the reader's words; `choices` where its values are words of a list. */
-export const sweepParameters: readonly { value: SweepField, title: string, example: string, choices?: readonly Choice[] }[] = [
+/** Ring sets of the standard: "16-APSK 9/10, at 2.57". */
+const presetChoices: readonly Choice[] = apskPresets.map(({ title, ratios }) =>
+  ({ value: title, title: `${title} at ${ratios.map(ratio => ratio.toFixed(2)).join(', ')}` }))
+const presetsOf = (order: string) => ({ title: `all of ${order}`, values: presetChoices.map(({ value }) => value).filter(value => value.startsWith(order)) })
+
+/** One parameter that a sweep can vary, in the reader's words. */
+export interface SweepParameter {
+  value: SweepField
+  title: string
+  example: string
+  /** where its values are words of a list */
+  choices?: readonly Choice[]
+  /** several of the list that are ticked together */
+  sets?: readonly { title: string, values: readonly string[] }[]
+}
+
+export const sweepParameters: readonly SweepParameter[] = [
   { value: 'order', title: 'Order M', example: '4, 8, 16, 32' },
+  { value: 'preset', title: `Rings of ${presetSource}`, example: '', choices: presetChoices, sets: [presetsOf('16-APSK'), presetsOf('32-APSK')] },
   { value: 'rings', title: 'Rings', example: '4+12; 5+11; 1+5+10' },
   { value: 'ratios.0', title: 'First ring ratio', example: '2.0 to 3.2 step 0.05' },
   { value: 'ratios.1', title: 'Second ring ratio', example: '4.0 to 5.4 step 0.1' },
@@ -20,6 +39,13 @@ export const sweepParameters: readonly { value: SweepField, title: string, examp
 ]
 
 export type AxisEntry = { field: SweepField, text: string }
+
+/** Parameters that cannot be varied beside these: themselves, and what a preset sets beside the preset. */
+export const takenBy = (fields: readonly SweepField[]): SweepField[] => [
+  ...fields,
+  ...fields.includes('preset') ? presetFields : [],
+  ...fields.some(field => presetFields.includes(field)) ? ['preset' as const] : [],
+]
 
 const range = /^(.+?)\s+to\s+(.+?)\s+step\s+(.+)$/i
 

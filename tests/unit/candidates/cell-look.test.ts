@@ -30,7 +30,7 @@ describe('marks of a cell', () => {
 
 describe('the sentence of a cell', () => {
   it('is the mistake at its input', () => expect(cellSentence(view('order', { row: failed }))).toBe('QAM has a power of two of points from 4 to 4096.'))
-  it('is why a cell is not used', () => expect(cellSentence(view('rings'))).toBe('QAM does not use rings and ratios.'))
+  it('is why a cell is not used', () => expect(cellSentence(view('rings'))).toBe('QAM does not use rings and ratios; entering them makes it APSK.'))
   it('is the server\'s after a refusal', () => expect(cellSentence(view('order', { save: { state: 'refused', text: 'x', sentence: 'No.' } }))).toBe('No.'))
 })
 
@@ -38,5 +38,6 @@ describe('editing', () => {
   it('is for inputs', () => expect(isEditable(sampleRow({}), columnOf('name')!, true)).toBe(true))
   it('is not for computed cells', () => expect(isEditable(sampleRow({}), columnOf('papr')!, true)).toBe(false))
   it('is not for readers', () => expect(isEditable(sampleRow({}), columnOf('name')!, false)).toBe(false))
-  it('is not for inputs that the family does not use', () => expect(isEditable(sampleRow({}), columnOf('rings')!, true)).toBe(false))
+  it('is not for inputs that the family does not use', () => expect(isEditable(sampleRow({}), columnOf('phasesDeg')!, true)).toBe(false))
+  it('is for rings in a row of any family, for they bring APSK', () => expect(isEditable(sampleRow({}), columnOf('rings')!, true)).toBe(true))
 })

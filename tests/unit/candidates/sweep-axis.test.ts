@@ -1,6 +1,6 @@
 import { describe, expect, it } from 'vitest'
-import { parseAxis, sweepParameters } from '~/utils/candidates/sweep-axis'
-import { sweepAxis, sweepFields } from '#shared/schemas/sweeps'
+import { parseAxis, sweepParameters, takenBy } from '~/utils/candidates/sweep-axis'
+import { sweepAxis, sweepCreation, sweepFields } from '#shared/schemas/sweeps'
 
 describe('values of a swept parameter', () => {
   it('are a list', () => expect(parseAxis({ field: 'order', text: '4, 8 16' })).toEqual({ field: 'order', values: [4, 8, 16] }))
@@ -18,4 +18,18 @@ describe('values of a swept parameter', () => {
   it('are offered for every field that the server sweeps', () => expect(sweepParameters.map(p => p.value).sort()).toEqual([...sweepFields].sort()))
   it.each(sweepParameters.filter(p => p.example))('follow the example of $title', ({ value, example }) =>
     expect(sweepAxis.safeParse(parseAxis({ field: value, text: example })).success).toBe(true))
+})
+
+describe('published ring sets', () => {
+  const sets = sweepParameters.find(parameter => parameter.value === 'preset')!.sets!
+  it('are ticked six at a time for 16-APSK', () => expect(sets[0]!.values).toEqual(
+    ['16-APSK 2/3', '16-APSK 3/4', '16-APSK 4/5', '16-APSK 5/6', '16-APSK 8/9', '16-APSK 9/10']))
+  it('are ticked five at a time for 32-APSK', () => expect(sets[1]!.values).toHaveLength(5))
+  it('leave nothing of what they set to be varied beside them', () =>
+    expect(takenBy(['preset'])).toEqual(['preset', 'family', 'order', 'rings', 'ratios.0', 'ratios.1', 'ratios.2']))
+  it('are not varied beside a ring ratio', () => expect(takenBy(['ratios.0'])).toContain('preset'))
+  it.each(sweepFields)('agree with the server about what is varied beside $0', (field) => {
+    const axes = [{ field: 'preset', values: ['16-APSK 2/3'] }, { field, values: [1] }]
+    expect(sweepCreation.safeParse({ base: {}, axes }).success).toBe(!takenBy(['preset']).includes(field))
+  })
 })

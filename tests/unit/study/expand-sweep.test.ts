@@ -48,3 +48,19 @@ describe('a sweep multiplied out', () => {
       .toBe('These parameters make 1,002,001 combinations; a sweep makes at most 10,000 rows. Shorten a list or a range.')
   })
 })
+
+describe('a sweep over published ring sets', () => {
+  const sets = { base: {}, axes: [{ field: 'preset' as const, values: ['16-APSK 9/10', '32-APSK 3/4', '32-APSK 9/10'] }] }
+  it('makes a row of each', () => expect(expandSweep(sets).rows).toBe(3))
+  it('pairs the two ratios of 32-APSK as the standard does', () =>
+    expect([1, 2].map(i => expandSweep(sets).make(i).ratios)).toEqual([[2.84, 5.27], [2.53, 4.3]]))
+  it('turns the outer ring of 32-APSK to 0°', () => expect(expandSweep(sets).make(1).phasesDeg).toEqual([45, 15, 0]))
+  it('makes APSK rows whatever the start is', () =>
+    expect(expandSweep({ ...sets, base: { family: 'qam', order: 64 } }).make(0)).toMatchObject({ family: 'apsk', order: 16, rings: [4, 12] }))
+  it('is multiplied out with other parameters', () =>
+    expect(expandSweep({ base: {}, axes: [...sets.axes, { field: 'rollOff', values: [0.1, 0.2] }] }).rows).toBe(6))
+  it('names what is no title of the standard', () => {
+    const [issue] = expandSweep({ base: {}, axes: [{ field: 'preset', values: ['16-APSK 2/3', '64-APSK 2/3'] }] }).issues
+    expect([issue!.path, issue!.message.slice(0, 46)]).toEqual(['axes.0.values.1', 'A preset is one of 16-APSK 2/3, 16-APSK 3/4, 1'])
+  })
+})
