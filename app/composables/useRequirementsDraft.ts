@@ -15,6 +15,9 @@ const pauseMs = 600
 
 const applied = (base: Requirements, edits: readonly Edit[]) => edits.reduce((all, edit) => writeAt(all, edit.path, edit.value), base)
 
+/** An item that is not there takes no change: it is in an edit of its list that is not saved, or somebody has removed it. */
+const reaches = (all: Requirements, { path }: Edit) => readAt(all, path) !== undefined
+
 const issuesOf = (candidate: Requirements): Issue[] =>
   schema.safeParse(candidate).error?.issues.map(issue => ({ path: issue.path.join('.'), message: issue.message })) ?? []
 
@@ -53,7 +56,8 @@ export function useRequirementsDraft() {
     const base = before ? before.base : readAt(saved.value, path)
     // A new value of a whole list already holds what was changed inside it.
     const others = edits.value.filter(entry => !isWithin(entry.path, path))
-    edits.value = sameValue(base, value) && !before ? others : [...others, { path, value, words, base }]
+    const idle = !before && sameValue(readAt(applied(saved.value, others), path), value)
+    edits.value = idle ? others : [...others, { path, value, words, base }]
     refused.value = []
     clearTimeout(timer)
     timer = setTimeout(() => void flush(), pause)
@@ -62,7 +66,8 @@ export function useRequirementsDraft() {
   const sendable = () => {
     const sound: Edit[] = []
     for (const entry of edits.value) {
-      if (issuesOf(applied(saved.value, [...sound, entry])).length === 0) sound.push(entry)
+      const next = applied(saved.value, [...sound, entry])
+      if (reaches(next, entry) && issuesOf(next).length === 0) sound.push(entry)
     }
     return sound
   }
@@ -108,6 +113,7 @@ export function useRequirementsDraft() {
         : keepMine(conflict) ? [{ ...entry, base: conflict.theirs }] : [])
     }
     conflicts.value = []
+    edits.value = edits.value.filter(entry => reaches(draft.value, entry))
     return flush()
   }
 

@@ -1,12 +1,17 @@
 /**
- * Where a value of the requirements stands: names and indices, and "#id" for the item of a list with that id,
- * which stays the same item when others are added, removed or moved.
+ * Where a value of the requirements stands: names and indices, and "#id" or "@kind" for the item of a list with that id or
+ * of that kind, which stays the same item when others are added, removed or moved. Must-haves go by their kind: each is stated
+ * once, while an ID is the reader's own text and may stand twice until it is corrected.
  */
 export type Path = readonly (string | number)[]
 
+const marks: Partial<Record<string, 'id' | 'kind'>> = { '#': 'id', '@': 'kind' }
+
 const keyIn = (node: unknown, segment: string | number): string | number | undefined => {
-  if (typeof segment !== 'string' || !segment.startsWith('#') || !Array.isArray(node)) return segment
-  const index = node.findIndex((item: { id?: string }) => item.id === segment.slice(1))
+  if (typeof segment !== 'string' || !Array.isArray(node)) return segment
+  const field = marks[segment.charAt(0)]
+  if (!field) return segment
+  const index = node.findIndex((item: { id?: string, kind?: string }) => item[field] === segment.slice(1))
   return index < 0 ? undefined : index
 }
 
