@@ -12,11 +12,14 @@ export const useStudyStore = defineStore('study', () => {
   const canEdit = computed(() => canOwn.value || study.value?.role === 'editor')
   let queue: Promise<unknown> = Promise.resolve()
 
-  /** @throws ApiProblem 404 when there is none, or none for this reader */
-  const load = async (id: string) => {
+  /**
+   * Reads a study; the answer is taken over if it is still wanted then.
+   * @throws ApiProblem 404 when there is none, or none for this reader
+   */
+  const load = async (id: string, wanted = () => true) => {
     const read = await api.get<Study>(`/api/studies/${id}`)
     // An answer that was overtaken by a change of our own is older than what is shown.
-    if (study.value?.id !== id || read.version >= study.value.version) study.value = read
+    if (wanted() && (study.value?.id !== id || read.version >= study.value.version)) study.value = read
     return study.value
   }
 

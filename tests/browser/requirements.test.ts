@@ -153,7 +153,38 @@ describe('values', () => {
     expect(complaints).toEqual([])
   })
 
+  it('what somebody else changes appears by itself', async () => {
+    await page.getByText('All changes are saved.').waitFor()
+    const { body: study } = await owner.get<Study>(`/api/studies/${id}`)
+    await owner.patch(`/api/studies/${id}`, { requirements: { ...study.requirements, overhead: 0.1 } }, { 'if-match': `"${study.version}"` })
+    await expect.poll(() => page.getByLabel('Overhead').inputValue()).toBe('10')
+    expect(complaints).toEqual([])
+  })
+
+  it('a value of a must-have stays with it when one above it is removed before it is saved', async () => {
+    await page.getByLabel('Value of R3').fill('6.5')
+    await page.getByRole('button', { name: 'Remove R1' }).click()
+    await allSaved()
+    expect((await saved()).mustHaves.map(({ id, value }) => [id, value])).toEqual([['R2', 20], ['R3', 6.5]])
+    expect(complaints).toEqual([])
+  })
+
+  it('what is typed into a must-have that cannot be saved yet is not lost', async () => {
+    await page.getByLabel('ID', { exact: true }).nth(1).fill('R1')
+    await page.getByText('Every must-have has an ID of its own.').waitFor()
+    await page.getByRole('button', { name: 'Add a must-have' }).click()
+    await page.getByLabel('Value of R4').fill('6')
+    await page.getByText(/not saved: see the marked fields/).waitFor()
+    await page.getByLabel('ID', { exact: true }).nth(1).fill('R2')
+    await allSaved()
+    expect((await saved()).mustHaves.map(({ id, value }) => [id, value])).toEqual([['R1', 1], ['R2', 20], ['R3', 7], ['R4', 6]])
+    expect(complaints).toEqual([])
+  })
+
   it('a value that somebody else has changed meanwhile is not overwritten unseen', async () => {
+    // As long as something typed is not saved, the page does not take over what others change.
+    await page.getByLabel('Roll-off').fill('a quarter')
+    await page.getByText(/It is not saved yet/).waitFor()
     const { body: study } = await owner.get<Study>(`/api/studies/${id}`)
     await owner.patch(`/api/studies/${id}`, { requirements: { ...study.requirements, overhead: 0.1 } }, { 'if-match': `"${study.version}"` })
     await page.getByLabel('Overhead').fill('20')
@@ -161,6 +192,9 @@ describe('values', () => {
     await dialog.getByText('Saved: 10 %').waitFor()
     await dialog.getByText('Yours: 20 %').click()
     await dialog.getByRole('button', { name: 'Keep what is chosen' }).click()
+    await dialog.waitFor({ state: 'hidden' })
+    expect(await page.getByLabel('Roll-off').inputValue()).toBe('a quarter')
+    await page.getByLabel('Roll-off').fill('0.25')
     await allSaved()
     expect((await saved()).overhead).toBe(0.2)
     expect(unexpected(complaints, 409)).toEqual([])
