@@ -2,6 +2,8 @@ import { ticks } from 'd3'
 
 /** A place on an axis; only places with a label carry a grid line. */
 export type Tick = { at: number, label: string | null }
+/** A tick in a drawing: where on its axis and how long it is, in pixels. */
+export type DrawnTick = Tick & { px: number, length: number }
 
 const superscripts: Record<string, string> = {
   '-': '⁻', '0': '⁰', '1': '¹', '2': '²', '3': '³', '4': '⁴', '5': '⁵', '6': '⁶', '7': '⁷', '8': '⁸', '9': '⁹',
