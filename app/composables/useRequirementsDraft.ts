@@ -64,6 +64,8 @@ export function useRequirementsDraft() {
   }
 
   const sendable = () => {
+    // Two IDs that change places are sound together alone.
+    if (issues.value.length === 0) return edits.value
     const sound: Edit[] = []
     for (const entry of edits.value) {
       const next = applied(saved.value, [...sound, entry])
