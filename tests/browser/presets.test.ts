@@ -104,7 +104,7 @@ describe('a ring set of the standard in the grid', () => {
 describe('a sweep of the standard\'s ring sets', () => {
   beforeEach(async () => {
     await page.getByRole('button', { name: 'Sweep…' }).first().click()
-    await page.getByRole('dialog').getByLabel('Parameter').selectOption({ label: 'Rings of ETSI EN 302 307-1' })
+    await page.getByRole('dialog').getByLabel('Parameter').selectOption({ label: 'ETSI APSK rings' })
   })
 
   it('counts its rows before it starts, and makes one of each', async () => {

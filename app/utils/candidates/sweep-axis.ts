@@ -18,13 +18,18 @@ export interface SweepParameter {
   example: string
   /** where its values are words of a list */
   choices?: readonly Choice[]
-  /** several of the list that are ticked together */
+  /** several of the list that are ticked together, each a column of the list */
   sets?: readonly { title: string, values: readonly string[] }[]
+  /** what its words stand for, where they do not say */
+  hint?: string
 }
 
 export const sweepParameters: readonly SweepParameter[] = [
   { value: 'order', title: 'Order M', example: '4, 8, 16, 32' },
-  { value: 'preset', title: `Rings of ${presetSource}`, example: '', choices: presetChoices, sets: [presetsOf('16-APSK'), presetsOf('32-APSK')] },
+  {
+    value: 'preset', title: 'ETSI APSK rings', example: '', choices: presetChoices, sets: [presetsOf('16-APSK'), presetsOf('32-APSK')],
+    hint: `Rings, ratios and phases by code rate, from ${presetSource}.`,
+  },
   { value: 'rings', title: 'Rings', example: '4+12; 5+11; 1+5+10' },
   { value: 'ratios.0', title: 'First ring ratio', example: '2.0 to 3.2 step 0.05' },
   { value: 'ratios.1', title: 'Second ring ratio', example: '4.0 to 5.4 step 0.1' },
