@@ -30,7 +30,10 @@ export default defineNitroPlugin((nitro) => {
     event.context.nonce = nonce
     setResponseHeader(event, 'content-security-policy', api ? 'default-src \'none\'; frame-ancestors \'none\'' : policyOf(nonce))
     // The router knows no HEAD: it is a GET whose body Node leaves out.
-    if (api && event.node.req.method === 'HEAD') event.node.req.method = 'GET'
+    if (api && event.node.req.method === 'HEAD') {
+      event.node.req.method = 'GET'
+      event.context.head = true
+    }
   })
 
   // Which framework answers is nobody's business.

@@ -22,6 +22,8 @@ declare module 'h3' {
   interface H3EventContext {
     caller?: Caller
     study?: StudyAccess
+    /** whether only the headers are asked for, by HEAD */
+    head?: true
     /** of the page's content security policy */
     nonce?: string
   }

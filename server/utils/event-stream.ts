@@ -10,6 +10,7 @@ import { registerStream } from './streams'
 /** Streams of each account, to be closed when its session ends or it leaves a study. */
 const open = new Map<string, Set<() => void>>()
 
+export const eventStreamType = 'text/event-stream; charset=utf-8'
 /** How often a stream says that it is alive, in milliseconds: proxies close silent connections. */
 const heartbeatEvery = 15_000
 /** How long a page waits before it connects again, in milliseconds. */
@@ -59,7 +60,7 @@ export async function streamEvents(event: H3Event, studyId: string, caller: Call
   if ((open.get(userId)?.size ?? 0) >= mostStreams) problem(429, `An account has at most ${mostStreams} open event streams.`, { headers: { 'retry-after': '60' } })
   // The connection ends with its stream: a caller that took it up again would find it closed.
   res.writeHead(200, {
-    'content-type': 'text/event-stream; charset=utf-8', 'cache-control': 'no-store', 'x-accel-buffering': 'no', 'connection': 'close',
+    'content-type': eventStreamType, 'cache-control': 'no-store', 'x-accel-buffering': 'no', 'connection': 'close',
   })
   res.write(`retry: ${retryAfter}\n\n`)
   const ended = new Promise<void>(resolve => res.once('close', resolve))

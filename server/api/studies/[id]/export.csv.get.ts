@@ -1,12 +1,11 @@
 import { Readable } from 'node:stream'
 import { csvOf } from '../../../exports/csv'
-import { announceFile } from '../../../exports/send'
+import { sendFile } from '../../../exports/send'
 import { gatherStudy } from '../../../services/study-exports'
 import { callerOf, studyOf } from '../../../utils/caller'
 
 /** GET /api/studies/:id/export.csv: the grid as CSV, full numbers, streamed. */
 export default defineEventHandler(async (event) => {
   const data = await gatherStudy(studyOf(event).id, callerOf(event).account.name)
-  announceFile(event, data.study.name, data.at, 'csv', 'text/csv; charset=utf-8')
-  return sendStream(event, Readable.from(csvOf(data)))
+  return sendFile(event, { study: data.study.name, at: data.at, extension: 'csv', type: 'text/csv; charset=utf-8' }, () => Readable.from(csvOf(data)))
 })
