@@ -19,7 +19,7 @@ export const sessionOperations = tagged('Session', {
 
 export const accountOperations = tagged('Account', {
   'POST /api/account/password': {
-    summary: 'Changes the caller\'s password and ends their other sessions.', body: passwordChange, status: 204, refusals: { 429: tooMany },
+    summary: 'Changes the caller\'s password and ends their other sessions; API tokens go on working unless endTokens says otherwise.', body: passwordChange, status: 204, refusals: { 429: tooMany },
   },
   'GET /api/account/tokens': { summary: 'The caller\'s API tokens, without their text.', answer: listOf(token) },
   'POST /api/account/tokens': { summary: 'Makes an API token, whose text this answer shows once. At most 50 an account.', body: tokenCreation, status: 201, answer: createdToken },
@@ -30,7 +30,8 @@ export const peopleOperations = tagged('People', {
   'GET /api/people': { summary: 'All accounts.', query: peopleQuery, answer: listOf(person) },
   'POST /api/people': { summary: 'Creates an account with a password.', body: personCreation, status: 201, answer: person },
   'PATCH /api/people/:person': {
-    summary: 'Renames, disables, gives a role or a new password. Disabling and a new password end the sessions at once; an administrator always remains.',
+    summary: 'Renames, disables, gives a role or a new password. Disabling and a new password end the sessions at once; an administrator always remains, and studies that would be left without an owner pass to a successor.',
     body: personChange, answer: person,
+    refusals: { 422: 'An input is not allowed; or no administrator would remain; or `successor` is missing, and the answer names the studies.' },
   },
 })

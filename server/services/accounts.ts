@@ -1,4 +1,6 @@
 import { eq } from 'drizzle-orm'
+import type { z } from 'zod'
+import type { passwordChange } from '#shared/schemas/session'
 import { useDatabase } from '../database/client'
 import { users } from '../database/schema'
 import type { Caller } from '../utils/caller'
@@ -7,14 +9,15 @@ import { problem } from '../utils/problem'
 import { recordActivity } from './activity'
 import { attemptSucceeded, takeAttempt } from './attempts'
 import { endSessions } from './sessions'
+import { revokeTokens } from './tokens'
 import { transact } from './transactions'
 
 /**
- * Changes the caller's own password; their other sessions end. API tokens stay: they are revoked one by one.
+ * Changes the caller's own password; their other sessions end, and their API tokens when that is asked for.
  * @param address where the attempt comes from: guessing the present password is limited as signing in is
  * @throws 422 at `current` when the present password is wrong
  */
-export async function changePassword({ account, sessionId }: Caller, { current, password }: { current: string, password: string }, address: string): Promise<void> {
+export async function changePassword({ account, sessionId }: Caller, { current, password, endTokens }: z.infer<typeof passwordChange>, address: string): Promise<void> {
   const attempt = await takeAttempt(account.email, address)
   const [user] = await useDatabase().select({ hash: users.passwordHash }).from(users).where(eq(users.id, account.id))
   if (!user || !await verifyPassword(user.hash, current)) {
@@ -26,6 +29,7 @@ export async function changePassword({ account, sessionId }: Caller, { current, 
     await tx.update(users).set({ passwordHash }).where(eq(users.id, account.id))
     await endSessions(tx, account.id, sessionId)
     await recordActivity(tx, { by: account, action: 'changed password of', subject: account.name })
+    if (endTokens) await revokeTokens(tx, account)
   })
   closeStreams(account.id)
 }

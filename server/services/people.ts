@@ -11,6 +11,7 @@ import { newId } from '../utils/ids'
 import { problem } from '../utils/problem'
 import { recordActivity } from './activity'
 import { endSessions } from './sessions'
+import { passStudies } from './succession'
 import { transact } from './transactions'
 
 const shown = (row: typeof users.$inferSelect): Person => ({
@@ -50,13 +51,18 @@ async function personOf(tx: Transaction, id: string): Promise<Person> {
 
 /**
  * Changes an account. Disabling it or giving it a password ends its sessions at once; with another role its streams start anew.
- * @throws 404 without such an account, 422 when no administrator would remain
+ * Studies that a disabled account would leave without an owner pass to a successor.
+ * @throws 404 without such an account, 422 when no administrator would remain, or at `successor` when one is needed
  */
 export async function changePerson(id: string, change: z.infer<typeof personChange>, by: Account): Promise<Person> {
-  const { password, disabled, ...plain } = change
+  const { password, disabled, successor, ...plain } = change
+  if (successor !== undefined && disabled !== true) {
+    const message = 'A successor is named when an account is disabled.'
+    problem(422, message, { errors: [{ path: 'successor', message }] })
+  }
   const passwordHash = password === undefined ? undefined : await hashPassword(password)
   const ends = disabled === true || passwordHash !== undefined
-  const after = await transact(async (tx) => {
+  const { after, heir } = await transact(async (tx) => {
     // All administrators' rows are the lock under which the last one is told from the others.
     const admins = await tx.select({ id: users.id }).from(users).where(and(eq(users.role, 'admin'), isNull(users.disabledAt))).for('update')
     const before = await personOf(tx, id)
@@ -65,14 +71,16 @@ export async function changePerson(id: string, change: z.infer<typeof personChan
       problem(422, message, { errors: [{ path: disabled ? 'disabled' : 'role', message }] })
     }
     const disabledAt = disabled === undefined ? undefined : disabled ? sql`coalesce(${users.disabledAt}, current_timestamp(3))` : null
+    const heir = disabled === true ? await passStudies(tx, before, successor, by) : null
     const set = { ...plain, disabledAt, passwordHash }
     if (Object.values(set).some(value => value !== undefined)) await tx.update(users).set(set).where(eq(users.id, id))
     if (ends) await endSessions(tx, id)
     const after = await personOf(tx, id)
     await note(tx, before, after, passwordHash !== undefined, by)
-    return after
+    return { after, heir }
   })
   if (ends || plain.role !== undefined) closeStreams(id)
+  if (heir !== null) closeStreams(heir)
   return after
 }
 

@@ -3,6 +3,7 @@ import { and, desc, eq, gt, isNull, lt, or, sql } from 'drizzle-orm'
 import type { z } from 'zod'
 import type { Account, CreatedToken, Token, tokenCreation } from '#shared/schemas/session'
 import { useDatabase } from '../database/client'
+import type { Transaction } from '../database/client'
 import { tokens, users } from '../database/schema'
 import type { Caller } from '../utils/caller'
 import { closeStreams } from '../utils/event-stream'
@@ -82,4 +83,11 @@ export async function revokeToken(account: Account, id: string): Promise<void> {
     await recordActivity(tx, { by: account, action: 'revoked token', subject: row.name })
   })
   closeStreams(account.id)
+}
+
+/** Revokes all of an account's tokens within a transaction; close its streams after the commit. */
+export async function revokeTokens(tx: Transaction, account: Account): Promise<void> {
+  const rows = await tx.select({ name: tokens.name }).from(tokens).where(eq(tokens.userId, account.id))
+  await tx.delete(tokens).where(eq(tokens.userId, account.id))
+  for (const { name } of rows) await recordActivity(tx, { by: account, action: 'revoked token', subject: name })
 }

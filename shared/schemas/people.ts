@@ -12,12 +12,14 @@ export type Person = z.infer<typeof person>
 /** POST /api/people */
 export const personCreation = z.strictObject({ email, name: name('the person\'s name'), role: accountRole, password: newPassword })
 
-/** PATCH /api/people/{person}; a new password ends the person's sessions. */
+/** PATCH /api/people/{person}; a new password ends the person's sessions. A successor is named with `disabled: true`. */
 export const personChange = z.strictObject({
   name: name('the person\'s name').optional(),
   role: accountRole.optional(),
   disabled: z.boolean({ error: 'Disabled is true or false.' }).optional(),
   password: newPassword.optional(),
+  /** account to which the studies pass that would be left without an owner who may sign in */
+  successor: id.optional(),
 })
 
 /** Query of GET /api/people; the cursor is the last account's id. */

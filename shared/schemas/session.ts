@@ -27,6 +27,8 @@ export type Account = z.infer<typeof account>
 export const passwordChange = z.strictObject({
   current: z.string({ error: 'Enter your present password.' }).min(1, 'Enter your present password.').max(200),
   password: newPassword,
+  /** whether the account's API tokens end as well; sessions always do */
+  endTokens: z.boolean({ error: 'Whether tokens end is true or false.' }).default(false),
 })
 
 /** POST /api/account/tokens */

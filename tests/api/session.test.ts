@@ -1,7 +1,7 @@
 import { afterEach, describe, expect, inject, it } from 'vitest'
-import type { Account } from '#shared/schemas/session'
+import type { Account, CreatedToken } from '#shared/schemas/session'
 import type { Problem } from '#shared/schemas/common'
-import { accountOf, anonymous, signIn } from '../support/client'
+import { accountOf, anonymous, signIn, withToken } from '../support/client'
 import { databaseConnection } from './database-of-test'
 import { ownPerson } from './people-of-test'
 
@@ -134,6 +134,17 @@ describe('a changed password', () => {
     const [here, elsewhere] = [await person.signIn(), await person.signIn()]
     await here.post('/api/account/password', { current: person.password, password: 'another long password' })
     expect([(await here.get('/api/session')).status, (await elsewhere.get('/api/session')).status]).toEqual([200, 401])
+  })
+  it('leaves API tokens working, and ends them all where that is asked for', async () => {
+    const person = await ownPerson('Scripting Person')
+    const client = await person.signIn()
+    const secrets = await Promise.all(['one', 'two'].map(async name =>
+      (await client.post<CreatedToken>('/api/account/tokens', { name, scope: 'read', days: 1 })).body.secret))
+    const answers = () => Promise.all(secrets.map(async secret => (await withToken(secret).get('/api/session')).status))
+    await client.post('/api/account/password', { current: person.password, password: 'another long password' })
+    const before = await answers()
+    await client.post('/api/account/password', { current: 'another long password', password: 'yet another long password', endTokens: true })
+    expect([before, await answers()]).toEqual([[200, 200], [401, 401]])
   })
   it('needs the present one', async () => {
     const person = await ownPerson('Guessing Person')
