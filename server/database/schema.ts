@@ -83,7 +83,10 @@ export const results = mysqlTable('results', {
   passes: int('passes').generatedAlwaysAs(sql`json_value(\`values\`, '$.passes')`, { mode: 'stored' }),
   surplusDb: double('surplus_db').generatedAlwaysAs(sql`json_value(\`values\`, '$.surplusDb')`, { mode: 'stored' }),
   computedAt: instant('computed_at').notNull().default(now),
-})
+}, t => [
+  // Holds all that the list of studies needs, so that it never reads the wide rows themselves.
+  index('results_summary').on(t.key, t.passes, t.surplusDb),
+])
 
 export const sweeps = mysqlTable('sweeps', {
   id: uuid('id').primaryKey(),
@@ -115,6 +118,7 @@ export const candidates = mysqlTable('candidates', {
 }, t => [
   index('candidates_study').on(t.studyId, t.deletedAt, t.position),
   index('candidates_result').on(t.resultKey),
+  index('candidates_summary').on(t.studyId, t.deletedAt, t.resultKey, t.position),
   foreignKey({ name: 'candidates_sweep', columns: [t.sweepId], foreignColumns: [sweeps.id] }).onDelete('set null'),
 ])
 
