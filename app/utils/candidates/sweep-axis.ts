@@ -18,7 +18,7 @@ export interface SweepParameter {
   example: string
   /** where its values are words of a list */
   choices?: readonly Choice[]
-  /** several of the list that are ticked together, each a column of the list */
+  /** several of the list that are ticked together */
   sets?: readonly { title: string, values: readonly string[] }[]
   /** what its words stand for, where they do not say */
   hint?: string
@@ -28,7 +28,7 @@ export const sweepParameters: readonly SweepParameter[] = [
   { value: 'order', title: 'Order M', example: '4, 8, 16, 32' },
   {
     value: 'preset', title: 'ETSI APSK rings', example: '', choices: presetChoices, sets: [presetsOf('16-APSK'), presetsOf('32-APSK')],
-    hint: `Rings, ratios and phases by code rate, from ${presetSource}.`,
+    hint: `Rings, ratios and phases of ${presetSource}.`,
   },
   { value: 'rings', title: 'Rings', example: '4+12; 5+11; 1+5+10' },
   { value: 'ratios.0', title: 'First ring ratio', example: '2.0 to 3.2 step 0.05' },
