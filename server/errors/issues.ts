@@ -23,12 +23,9 @@ function flatten(issue: ZodIssue): ZodIssue[] {
 /** A path as the API writes it: `items.3.order`; empty for the whole body. */
 export const pathText = (path: readonly PropertyKey[]) => path.map(String).join('.')
 
-/** A sentence for what the schema has none for: a field that is missing, or of another kind. */
-function sentence(issue: ZodIssue): string {
-  if (issue.code !== 'invalid_type' || !issue.message.startsWith('Invalid input')) return issue.message
-  return issue.message.endsWith('received undefined') ? 'This field is missing.' : `Send ${/^[aeio]/.test(issue.expected) ? 'an' : 'a'} ${issue.expected} here.`
+/** Mistakes found by a schema, the first hundred, each told once with its path and a sentence that says what is allowed. */
+export function issuesOf(error: z.core.$ZodError): Issue[] {
+  const issues = error.issues.slice(0, mostIssues).flatMap(flatten).map(({ path, message }): Issue => ({ path: pathText(path), message }))
+  // One number can miss its limits in two ways, with one sentence for both.
+  return [...new Map(issues.map(issue => [`${issue.path} ${issue.message}`, issue])).values()].slice(0, mostIssues)
 }
-
-/** Mistakes found by a schema, the first hundred, each with its path and a sentence that says what is allowed. */
-export const issuesOf = (error: z.core.$ZodError): Issue[] =>
-  error.issues.slice(0, mostIssues).flatMap(flatten).slice(0, mostIssues).map(issue => ({ path: pathText(issue.path), message: sentence(issue) }))

@@ -1,7 +1,6 @@
 import { and, eq, isNull, sql } from 'drizzle-orm'
-import type { z } from 'zod'
 import { defaultInputs } from '#shared/schemas/candidates'
-import type { Candidate, CandidateChange, CandidateField, CandidateInputs, candidatesCreation } from '#shared/schemas/candidates'
+import type { Candidate, CandidateChange, CandidateField, CandidateInputs, CandidatesCreation } from '#shared/schemas/candidates'
 import type { Issue } from '#shared/schemas/common'
 import type { Account } from '#shared/schemas/session'
 import { describeCandidate } from '#shared/study/describe-candidate'
@@ -55,7 +54,7 @@ export function newInputs(given: CandidateChange): CandidateInputs {
  * Creates rows; any mistake in one of them refuses all.
  * @returns the rows, in the order given
  */
-export async function createCandidates(studyId: string, creation: z.infer<typeof candidatesCreation>, by: Account): Promise<Candidate[]> {
+export async function createCandidates(studyId: string, creation: CandidatesCreation, by: Account): Promise<Candidate[]> {
   const { items, after, many } = 'items' in creation
     ? { items: creation.items, after: creation.after, many: true }
     : { items: [creation], after: undefined, many: false }

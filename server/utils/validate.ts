@@ -19,19 +19,30 @@ function parsed<T extends z.ZodType>(schema: T, value: unknown): z.infer<T> {
 
 /**
  * The request's JSON body, checked.
+ * @param schema of the body, or what chooses it by the body
  * @param limit most bytes
  * @throws 400 when it is no JSON, 413 when it is too large, 415 when it does not say that it is JSON, 422 with every mistake's path
  */
-export async function validBody<T extends z.ZodType>(event: H3Event, schema: T, limit = mostBytes): Promise<z.infer<T>> {
+export async function validBody<T extends z.ZodType>(event: H3Event, schema: T | ((body: unknown) => T), limit = mostBytes): Promise<z.infer<T>> {
   const { headers } = event.node.req
   const type = headers['content-type']
   if (type && !/^application\/(?:[\w.-]+\+)?json\b/i.test(type)) problem(415, 'Send the body as application/json.')
-  const tooLarge = () => problem(413, `A body has at most ${limit / 1024 / 1024} MB.`)
+  const tooLarge = () => problem(413, `A body has at most ${limit < 1024 * 1024 ? `${limit / 1024} kB` : `${limit / 1024 / 1024} MB`}.`)
   if (Number(headers['content-length'] ?? 0) > limit) tooLarge()
   const raw = headers['content-length'] === undefined && headers['transfer-encoding']
     ? await readChunks(event.node.req, limit) ?? tooLarge()
-    : await readRawBody(event, false) ?? ''
-  return parsed(schema, fromJson(raw.toString()))
+    : await readRawBody(event, false) ?? Buffer.alloc(0)
+  const body = fromJson(textOf(raw))
+  return parsed(typeof schema === 'function' ? schema(body) : schema, body)
+}
+
+/** A body's text; bytes that are none would otherwise be stored as replacement characters. */
+function textOf(raw: Buffer): string {
+  try {
+    return new TextDecoder('utf-8', { fatal: true }).decode(raw)
+  } catch {
+    return problem(400, 'The body is not in UTF-8.')
+  }
 }
 
 /** A body of unstated length; undefined when it is too long. */

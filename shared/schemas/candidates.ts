@@ -73,13 +73,16 @@ export const defaultInputs: CandidateInputs = {
 export const candidateCreation = candidateInputs.partial()
 
 /** POST /api/studies/{id}/candidates: one row, or many in `items`; `after` places them behind that row. */
-export const candidatesCreation = z.union([
-  z.strictObject({
-    items: z.array(candidateCreation).min(1, 'Send at least one row.').max(2000, 'Send at most 2,000 rows at a time.'),
-    after: id.nullable().optional(),
-  }),
-  candidateCreation,
-])
+const manyCreation = z.strictObject({
+  items: z.array(candidateCreation, { error: 'Send a list of rows.' }).min(1, 'Send at least one row.').max(2000, 'Send at most 2,000 rows at a time.'),
+  after: id.nullable().optional(),
+})
+export const candidatesCreation = z.union([manyCreation, candidateCreation])
+export type CandidatesCreation = z.infer<typeof candidatesCreation>
+
+/** Which of the two is meant: a union would tell a mistake in `items` as if the field did not exist. */
+export const candidatesCreationOf = (body: unknown): z.ZodType<CandidatesCreation> =>
+  typeof body === 'object' && body !== null && 'items' in body ? manyCreation : candidateCreation
 
 /** PATCH /api/candidates/{id} */
 export const candidateChange = candidateInputs.partial()

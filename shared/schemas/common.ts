@@ -1,4 +1,5 @@
 import { z } from 'zod'
+import './sentences'
 
 /** Identifier made by the application: a UUID, version 7, so that ids sort by creation. */
 export const id = z.uuid({ error: 'An identifier is a UUID.' })
@@ -9,11 +10,11 @@ export const decibels = z.number({ error: 'Enter a number in dB.' })
   .max(400, 'Enter at most 400 dB.')
 
 /** Version that a change is based on; carried by If-Match. */
-export const version = z.int().min(1)
+export const version = z.int('A version is a whole number from 1.').min(1, 'A version is a whole number from 1.')
 
 /** Query of a list: how many items and after which cursor. */
 export const pageQuery = z.strictObject({
-  cursor: z.string().max(200).optional(),
+  cursor: z.string({ error: 'Send `next` of the page before.' }).max(200, 'Send `next` of the page before.').optional(),
   limit: z.coerce.number({ error: 'The limit is a whole number from 1 to 2,000.' })
     .int('The limit is a whole number from 1 to 2,000.')
     .min(1, 'The limit is a whole number from 1 to 2,000.')

@@ -10,14 +10,14 @@ const coordinate = z.number({ error: 'A coordinate is a finite number.' })
 export const evaluatedConstellation = z.strictObject({
   family: z.enum(families.map(f => f.id) as [string, ...string[]], { error: `The family is one of ${families.map(f => f.id).join(', ')}.` }),
   order: wholeBetween(2, limits.order, 'Order M is a whole number from 2 to 4096.').optional(),
-  rings: z.array(wholeBetween(1, limits.order, 'A ring has 1 to 4096 points.')).min(1).max(64, 'At most 64 rings.').optional(),
+  rings: z.array(wholeBetween(1, limits.order, 'A ring has 1 to 4096 points.')).min(1, 'Send at least one ring.').max(64, 'At most 64 rings.').optional(),
   ratios: z.array(numberBetween(1e-3, 1e3, 'A ring ratio is a number from 0.001 to 1,000.')).max(63, 'At most 63 ring ratios.').optional(),
   /** radians */
   phases: z.array(numberBetween(-10, 10, 'A ring phase is in radians, from −10 to 10.')).max(64, 'At most 64 ring phases.').optional(),
   points: z.array(z.array(coordinate).min(1, 'A point has 1 to 8 coordinates.').max(limits.dimensions, 'A point has 1 to 8 coordinates.'))
     .min(2, 'Send 2 to 4096 points.').max(limits.order, 'Send 2 to 4096 points.').optional(),
-  labels: z.array(z.string().regex(/^[01]{1,12}$/, 'A label is a word of 1 to 12 bits such as 0110.')).max(limits.order).optional(),
-  probabilities: z.array(numberBetween(0, 1, 'A probability is from 0 to 1.')).max(limits.order).optional(),
+  labels: z.array(z.string({ error: 'A label is a word of 1 to 12 bits such as 0110.' }).regex(/^[01]{1,12}$/, 'A label is a word of 1 to 12 bits such as 0110.')).max(limits.order, 'Send a label for each point, at most 4096.').optional(),
+  probabilities: z.array(numberBetween(0, 1, 'A probability is from 0 to 1.')).max(limits.order, 'Send a probability for each point, at most 4096.').optional(),
 })
 
 export const evaluationQuantities = ['serUnion', 'serAllPairs', 'serNearest', 'serExact'] as const
@@ -34,7 +34,7 @@ export const evaluation = z.strictObject({
   }).optional(),
   quantities: z.array(z.enum(evaluationQuantities, {
     error: ({ input }) => `The quantity ${String(input).slice(0, 40)} is not offered: a quantity is one of ${evaluationQuantities.join(', ')}.`,
-  })).min(1).max(8)
+  })).min(1, 'Name at least one quantity, or leave quantities out.').max(8, 'Name at most 8 quantities.')
     .default(['serUnion', 'serNearest', 'serExact']),
 })
 export type EvaluationRequest = z.infer<typeof evaluation>

@@ -3,13 +3,13 @@ import { ModulationError } from '../modulation/errors'
 import { linkCase as sumUp } from '../modulation/link'
 import { decibels, name, numberBetween, text } from './common'
 
-/** Must-haves of a study; each kind has one unit. */
+/** Must-haves of a study; each kind has one unit, and `low` to `high` in that unit as its limits. */
 export const mustHaveKinds = {
-  margin: { title: 'Required margin', unit: 'dB', sense: 'atLeast' },
-  netBitRate: { title: 'Minimum net bit rate', unit: 'Mbit/s', sense: 'atLeast' },
-  occupiedBandwidth: { title: 'Maximum occupied bandwidth', unit: 'MHz', sense: 'atMost' },
-  spectralEfficiency: { title: 'Minimum spectral efficiency', unit: 'bit/s/Hz', sense: 'atLeast' },
-  papr: { title: 'Maximum PAPR', unit: 'dB', sense: 'atMost' },
+  margin: { title: 'Required margin', unit: 'dB', sense: 'atLeast', low: -100, high: 100, allowed: 'Enter a required margin from −100 to 100 dB.' },
+  netBitRate: { title: 'Minimum net bit rate', unit: 'Mbit/s', sense: 'atLeast', low: 0, high: 1e9, allowed: 'Enter a net bit rate from 0 to 1e9 Mbit/s.' },
+  occupiedBandwidth: { title: 'Maximum occupied bandwidth', unit: 'MHz', sense: 'atMost', low: 0, high: 1e9, allowed: 'Enter a bandwidth from 0 to 1e9 MHz.' },
+  spectralEfficiency: { title: 'Minimum spectral efficiency', unit: 'bit/s/Hz', sense: 'atLeast', low: 0, high: 100, allowed: 'Enter a spectral efficiency from 0 to 100 bit/s/Hz.' },
+  papr: { title: 'Maximum PAPR', unit: 'dB', sense: 'atMost', low: 0, high: 100, allowed: 'Enter a PAPR from 0 to 100 dB.' },
 } as const
 export type MustHaveKind = keyof typeof mustHaveKinds
 
@@ -17,13 +17,18 @@ export const mustHave = z.strictObject({
   id: z.string({ error: 'Give the requirement an ID.' }).trim().min(1, 'Give the requirement an ID.').max(24, 'An ID has at most 24 characters.'),
   kind: z.enum(Object.keys(mustHaveKinds) as MustHaveKind[], { error: 'Choose what the requirement limits.' }),
   /** in the kind's unit */
-  value: numberBetween(-1e6, 1e6, 'Enter a number from −1,000,000 to 1,000,000.'),
+  value: z.number({ error: 'Enter a number.' }),
   reason: text(1000),
+}).superRefine(({ kind, value }, refine) => {
+  const { low, high, allowed } = mustHaveKinds[kind]
+  if (value < low || value > high) refine.addIssue({ code: 'custom', path: ['value'], message: allowed })
 })
 export type MustHave = z.infer<typeof mustHave>
 
-const lineBase = { id: z.string().min(1).max(40), name: name('the line\'s name', 80), source: text(300) }
-const positive = (high: number, sentence: string) => z.number({ error: sentence }).positive(sentence).max(high, sentence)
+const partId = z.string({ error: 'Give it an identifier.' }).min(1, 'Give it an identifier.').max(40, 'An identifier has at most 40 characters.')
+const lineBase = { id: partId, name: name('the line\'s name', 80), source: text(300) }
+/** Least frequency, distance or rate: smaller ones are slips of the pen, and what they lead to leaves the range of doubles. */
+const least = 1e-9
 
 /** One line of the link budget. Losses are entered positive and subtracted. */
 export const linkLine = z.discriminatedUnion('kind', [
@@ -32,8 +37,8 @@ export const linkLine = z.discriminatedUnion('kind', [
   z.strictObject({ ...lineBase, kind: z.literal('loss'), valueDb: numberBetween(0, 400, 'Enter a loss as 0 to 400 dB; it is subtracted.') }),
   z.strictObject({
     ...lineBase, kind: z.literal('freeSpaceLoss'),
-    frequencyGhz: positive(1e6, 'Enter a frequency above 0 and up to 1,000,000 GHz.'),
-    distanceKm: positive(1e12, 'Enter a distance above 0 and up to 1e12 km.'),
+    frequencyGhz: numberBetween(least, 1e6, 'Enter a frequency from 1e-9 to 1,000,000 GHz.'),
+    distanceKm: numberBetween(least, 1e12, 'Enter a distance from 1e-9 to 1e12 km.'),
   }),
   z.strictObject({ ...lineBase, kind: z.literal('noiseFigure'), noiseFigureDb: numberBetween(0, 100, 'Enter a noise figure from 0 to 100 dB.') }),
 ], { error: 'A line is a power, a gain, a loss, a free-space loss or a noise figure.' })
@@ -41,7 +46,7 @@ export type LinkLine = z.infer<typeof linkLine>
 
 /** A link case such as clear or faded: what it adds to the common lines. */
 export const linkCase = z.strictObject({
-  id: z.string().min(1).max(40),
+  id: partId,
   name: name('the case\'s name', 60),
   /** null: the study's required margin holds */
   requiredMarginDb: decibels.nullable(),
@@ -78,7 +83,7 @@ export const available = z.discriminatedUnion('from', [
       .refine(unique<{ name: string }>(c => c.name.toLowerCase()), 'Every case has a name of its own.')
       .refine(unique<{ id: string }>(c => c.id), 'Every case has an identifier of its own.'),
   }).superRefine(refuseContradictions),
-  z.strictObject({ from: z.literal('noiseDensity'), n0: positive(1e12, 'Enter N0 above 0, in signal units squared.') }),
+  z.strictObject({ from: z.literal('noiseDensity'), n0: numberBetween(1e-30, 1e12, 'Enter N0 from 1e-30 to 1e12, in signal units squared.') }),
 ], { error: 'Available Es/N0 is entered, from the link budget, or from N0.' })
 export type Available = z.infer<typeof available>
 
@@ -101,7 +106,7 @@ export const requirements = z.strictObject({
   heldConstant: z.strictObject({
     kind: z.enum(Object.keys(heldConstantKinds) as HeldConstant[], { error: 'Hold the symbol rate, the occupied bandwidth or the net bit rate constant.' }),
     /** Msymbol/s, MHz or Mbit/s by kind */
-    value: positive(1e9, 'Enter a value above 0 and up to 1e9.'),
+    value: numberBetween(least, 1e9, 'Enter a value from 1e-9 to 1e9.'),
   }),
   limitedBy: z.enum(['meanPower', 'peakPower'], { error: 'The amplifier is limited by mean or by peak power.' }),
   /** share of the bit rate spent on framing, 0 to below 1 */

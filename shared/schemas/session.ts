@@ -2,7 +2,7 @@ import { z } from 'zod'
 import { id } from './common'
 
 export const accountRoles = ['admin', 'member'] as const
-export const accountRole = z.enum(accountRoles)
+export const accountRole = z.enum(accountRoles, { error: 'A role is admin or member.' })
 export type AccountRole = z.infer<typeof accountRole>
 
 export const email = z.string({ error: 'Enter an e-mail address.' }).trim().toLowerCase()
@@ -25,7 +25,7 @@ export type Account = z.infer<typeof account>
 
 /** POST /api/account/password */
 export const passwordChange = z.strictObject({
-  current: z.string({ error: 'Enter your present password.' }).min(1, 'Enter your present password.').max(200),
+  current: z.string({ error: 'Enter your present password.' }).min(1, 'Enter your present password.').max(200, 'A password has at most 200 characters.'),
   password: newPassword,
   /** whether the account's API tokens end as well; sessions always do */
   endTokens: z.boolean({ error: 'Whether tokens end is true or false.' }).default(false),

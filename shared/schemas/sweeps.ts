@@ -14,7 +14,7 @@ export type SweepField = (typeof sweepFields)[number]
 export const presetFields: readonly SweepField[] = ['family', 'order', 'rings', 'ratios.0', 'ratios.1', 'ratios.2']
 
 const value = z.union([
-  z.number(), z.string().max(40),
+  z.number(), z.string().max(40, 'A word has at most 40 characters.'),
   z.array(z.number()).max(64, 'At most 64 numbers in one value.'),
 ], { error: 'A value is a number, a word or a list of numbers.' })
 

@@ -63,6 +63,14 @@ describe('bad input', () => {
       expect([status, body.errors?.map(error => error.path)]).toEqual([422, [path]])
     })
   }
+  it('names the row and the field of many', async () => {
+    const { status, body } = await owner.post<Refused>(`/api/studies/${study}/candidates`, { items: [{}, { order: 'x' }] })
+    expect([status, body.errors]).toEqual([422, [{ path: 'items.1.order', message: 'Order M is a whole number from 2 to 4096.' }]])
+  })
+  it('tells a number beyond all limits once', async () => {
+    const { body } = await owner.post<Refused>(`/api/studies/${study}/candidates`, { order: 1e308 })
+    expect(body.errors).toEqual([{ path: 'order', message: 'Order M is a whole number from 2 to 4096.' }])
+  })
   it('refuses NaN, which JSON writes as null', async () => {
     const { status } = await owner.post(`/api/studies/${study}/candidates`, { snrStart: NaN })
     expect(status).toBe(422)

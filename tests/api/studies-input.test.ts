@@ -123,7 +123,15 @@ describe('a body', () => {
     const response = await fetch(`${inject('baseUrl')}/api/session`, {
       method: 'POST', headers: { 'content-type': 'application/json' }, body: JSON.stringify({ email: 'a@example.org', password: 'x'.repeat(20_000) }),
     })
-    expect(response.status).toBe(413)
+    expect([response.status, (await response.json() as Problem).detail]).toEqual([413, 'A body has at most 16 kB.'])
+  })
+  it('that is not in UTF-8 is 400', async () => {
+    const response = await send(new Uint8Array([...new TextEncoder().encode('{"name":"'), 0xFF, ...new TextEncoder().encode('"}')]))
+    expect([response.status, (await response.json() as Problem).detail]).toEqual([400, 'The body is not in UTF-8.'])
+  })
+  it('with control characters in a text is refused at its path', async () => {
+    const response = await send('{"name":"a\\u0007"}')
+    expect([response.status, (await response.json() as Problem).errors?.map(({ path }) => path)]).toEqual([422, ['name']])
   })
   it('with a field of JavaScript\'s own is refused by its name', async () => {
     const response = await send('{"name": "x", "__proto__": {"role": "owner"}}')

@@ -13,6 +13,28 @@ function mistakes(common: object[], own: object[]) {
   return error?.issues.map(({ path, message }) => [path.join('.'), message]) ?? []
 }
 
+/** Sentences against requirements that differ from the default ones. */
+const sentences = (change: object) => requirements.safeParse({ ...defaultRequirements, ...change }).error?.issues.map(({ message }) => message)
+const must = (kind: string, value: number) => sentences({ mustHaves: [{ id: 'R1', kind, value, reason: '' }] })
+
+describe('a must-have has the limits of its kind', () => {
+  it.each([
+    ['margin', 101, 'Enter a required margin from −100 to 100 dB.'],
+    ['netBitRate', -1, 'Enter a net bit rate from 0 to 1e9 Mbit/s.'],
+    ['occupiedBandwidth', -5, 'Enter a bandwidth from 0 to 1e9 MHz.'],
+    ['spectralEfficiency', -0.1, 'Enter a spectral efficiency from 0 to 100 bit/s/Hz.'],
+    ['papr', -3, 'Enter a PAPR from 0 to 100 dB.'],
+  ])('%s: not %d', (kind, value, sentence) => expect(must(kind, value)).toEqual([sentence]))
+  it('margin: a negative one', () => expect(must('margin', -3)).toBeUndefined())
+})
+
+describe('a number that no link has is refused', () => {
+  it('as what is held constant', () =>
+    expect(sentences({ heldConstant: { kind: 'symbolRate', value: 1e-300 } })).toEqual(['Enter a value from 1e-9 to 1e9.']))
+  it('as N0', () =>
+    expect(sentences({ available: { from: 'noiseDensity', n0: 1e-320 } })).toEqual(['Enter N0 from 1e-30 to 1e12, in signal units squared.']))
+})
+
 describe('a link budget', () => {
   it('with one power and one noise line is taken', () => expect(mistakes([power('a', 'dBm'), noise], [])).toEqual([]))
   it('that mixes dBm and dBW is refused at the line of the other unit', () => {
