@@ -5,7 +5,7 @@ import { normalise } from '../normalise'
 import { apsk } from './apsk'
 import { crossQam } from './cross-qam'
 import { custom } from './custom'
-import type { Family, FamilyId, FamilyParameters } from './family'
+import type { Family, FamilyId, FamilyParameter, FamilyParameters } from './family'
 import { hexagonal } from './hexagonal'
 import { pam } from './pam'
 import { psk } from './psk'
@@ -40,6 +40,23 @@ export function generate(id: FamilyId, parameters: FamilyParameters, options: Co
   const family = familyOf(id)
   const [issue] = family.validate(parameters)
   if (issue) throw new ModulationError(issue.message, issue.path)
-  const constellation = createConstellation(family.points(parameters), options)
+  const constellation = atSource(family, parameters, () => createConstellation(family.points(parameters), options))
   return id === 'custom' ? constellation : normalise(constellation, { normalisation: 'meanEnergy' })
+}
+
+/** The input that a family's points come from: near ratios make APSK's coincide. */
+function sourceOf({ parameters }: Family, { ratios }: FamilyParameters): FamilyParameter {
+  if (parameters.includes('points')) return 'points'
+  return parameters.includes('ratios') && ratios?.length ? 'ratios' : parameters[0]!
+}
+
+/** Makes a constellation; what is wrong with its points is told at the input that they come from. */
+function atSource(family: Family, parameters: FamilyParameters, make: () => Constellation): Constellation {
+  try {
+    return make()
+  } catch (error) {
+    const source = sourceOf(family, parameters)
+    if (error instanceof ModulationError && error.path[0] === 'points' && source !== 'points') throw new ModulationError(error.message, [source])
+    throw error
+  }
 }
