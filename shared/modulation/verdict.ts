@@ -43,19 +43,23 @@ const mostDigits = 12
 
 interface Shown { value: number, by: number, digits: number }
 
+/** Digits to which a number can be rounded up or down; with more of them, doubles end before the decimals do. */
+const mostDirectedDigits = 9
+
 /**
- * A value and its distance from the limit as they are shown: rounded as the grid does, margins down and other values to the nearest.
- * A margin's shortfall rounds up. Where the nearest would hide that a value misses its limit, it has more digits.
+ * A value and its distance from the limit as they are shown. The value is rounded as the grid does, margins down and others to the
+ * nearest; what is to spare rounds down and what is short or over rounds up, so that neither looks better than it is.
+ * Where the nearest would hide that a value misses its limit, it has more digits.
  */
 function shownNumbers(value: number, distance: number, misses: (value: number) => boolean, kind: VerdictKind): Shown {
   const { digits, round } = verdictKinds[kind]
-  if (round === 'down') return { value: floorToDigits(value, digits), by: (misses(value) ? ceilToDigits : floorToDigits)(distance, digits), digits }
-  let shown = { value: nearestOfDigits(value, digits), by: nearestOfDigits(distance, digits), digits: digits as number }
-  while (misses(value) && (shown.by === 0 || !misses(shown.value)) && shown.digits < mostDigits) {
-    const more = shown.digits + 1
-    shown = { value: nearestOfDigits(value, more), by: nearestOfDigits(distance, more), digits: more }
-  }
-  return shown
+  const missed = misses(value)
+  const by = (digits: number) => (digits > mostDirectedDigits ? nearestOfDigits : missed ? ceilToDigits : floorToDigits)(distance, digits)
+  if (round === 'down') return { value: floorToDigits(value, digits), by: by(digits), digits }
+  const hidden = (digits: number) => nearestOfDigits(distance, digits) === 0 || !misses(nearestOfDigits(value, digits))
+  let needed: number = digits
+  while (missed && hidden(needed) && needed < mostDigits) needed++
+  return { value: nearestOfDigits(value, needed), by: by(needed), digits: needed }
 }
 
 const judge = (mustHave: VerdictLimit, values: VerdictValues): VerdictCheck => {
@@ -78,7 +82,7 @@ const judge = (mustHave: VerdictLimit, values: VerdictValues): VerdictCheck => {
 
 /**
  * Whether a row meets every must-have, on unrounded numbers, in words:
- * "passes", or "fails R2: net bit rate 4.0 Mbit/s short at 16.0 Mbit/s" with one part for each that fails.
+ * "passes", or "fails R2: net bit rate 4.1 Mbit/s short at 16.0 Mbit/s" with one part for each that fails.
  * A number that misses its limit by rounding error alone meets it; one that the row does not have fails.
  * @see methods §7
  */

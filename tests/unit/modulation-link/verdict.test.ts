@@ -10,7 +10,7 @@ describe('verdict in words', () => {
   it('passes without must-haves', () => expect(text({})).toBe('passes'))
   it('passes when every must-have holds', () => expect(text({}, must('R1', 'margin', 1), must('R2', 'netBitRate', 20))).toBe('passes'))
   it('says which must-have fails and by how much', () => {
-    expect(text({ netBitRate: 15.96 }, must('R2', 'netBitRate', 20))).toBe('fails R2: net bit rate 4.0 Mbit/s short at 16.0 Mbit/s')
+    expect(text({ netBitRate: 15.96 }, must('R2', 'netBitRate', 20))).toBe('fails R2: net bit rate 4.1 Mbit/s short at 16.0 Mbit/s')
   })
   it('shows a rate with more digits where the nearest decimal would meet the limit', () => {
     expect(text({ netBitRate: 19.98 }, must('R2', 'netBitRate', 20))).toBe('fails R2: net bit rate 0.02 Mbit/s short at 19.98 Mbit/s')
@@ -49,6 +49,10 @@ describe('checks', () => {
   it('say by how much they fail, negative', () => expect(only({ occupiedBandwidth: 8 }, must('R3', 'occupiedBandwidth', 7)).by).toBe(-1))
   it('use the deciding case\'s own required margin', () => expect(only({ margin: 1.2, requiredMargin: 1.5 }, must('R1', 'margin', 1)).passes).toBe(false))
   it('word what is to spare', () => expect(only({}, must('R1', 'margin', 1)).sentence).toBe('margin 0.52 dB to spare at +1.52 dB'))
+  it('round down what is to spare', () =>
+    expect(only({}, must('R2', 'netBitRate', 20)).sentence).toBe('net bit rate 1.2 Mbit/s to spare at 21.3 Mbit/s'))
+  it('round up what is over', () =>
+    expect(only({ occupiedBandwidth: 7.011 }, must('R3', 'occupiedBandwidth', 7)).sentence).toBe('occupied bandwidth 0.02 MHz over at 7.01 MHz'))
   it('keep the order of the must-haves', () => {
     expect(verdict(row, [must('B', 'papr', 3), must('A', 'margin', 1)]).checks.map(check => check.id)).toEqual(['B', 'A'])
   })
