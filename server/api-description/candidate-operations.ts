@@ -2,7 +2,7 @@ import { z } from 'zod'
 import { candidate, candidateChange, candidateMove, candidateSelection, candidatesCreation, pinChange } from '#shared/schemas/candidates'
 import { listOf, pageQuery } from '#shared/schemas/common'
 import { evaluation, evaluationAnswer } from '#shared/schemas/evaluate'
-import { sweep, sweepCancellation, sweepCreation } from '#shared/schemas/sweeps'
+import { startedSweep, sweep, sweepCancellation, sweepCreation } from '#shared/schemas/sweeps'
 import { candidateConstellation, candidateCurves } from '#shared/schemas/values'
 import { tagged } from './operation'
 
@@ -33,8 +33,8 @@ export const candidateOperations = tagged('Candidates', {
 export const sweepOperations = tagged('Sweeps', {
   'GET /api/studies/:id/sweeps': { summary: 'The study\'s sweeps, the newest first.', answer: listOf(sweep) },
   'POST /api/studies/:id/sweeps': {
-    summary: 'Starts a sweep of at most 10,000 rows: lists and ranges of parameters multiplied out. Rows and progress follow as events.',
-    body: sweepCreation, status: 202, answer: sweep,
+    summary: 'Starts a sweep of at most 10,000 rows: lists and ranges of parameters multiplied out. Rows and progress follow as events. `leftOut` counts the combinations that make no row, and says why the first does not.',
+    body: sweepCreation, status: 202, answer: startedSweep,
   },
   'DELETE /api/sweeps/:id': { summary: 'Cancels a sweep; rows without numbers are removed, the others stay.', answer: sweepCancellation },
 })

@@ -1,5 +1,5 @@
 import { and, count, eq, inArray, isNull, sql } from 'drizzle-orm'
-import type { Sweep, SweepCancellation, SweepCreation } from '#shared/schemas/sweeps'
+import type { StartedSweep, SweepCancellation, SweepCreation } from '#shared/schemas/sweeps'
 import type { Account } from '#shared/schemas/session'
 import { expandSweep } from '#shared/study/expand-sweep'
 import type { SweepPlan } from '#shared/study/expand-sweep'
@@ -30,7 +30,7 @@ function planOf(definition: SweepCreation): SweepPlan {
 }
 
 /** Starts a sweep: its rows are made and computed after the answer, and events tell how far it is. */
-export async function createSweep(studyId: string, definition: SweepCreation, by: Account): Promise<Sweep> {
+export async function createSweep(studyId: string, definition: SweepCreation, by: Account): Promise<StartedSweep> {
   const plan = planOf(definition)
   const id = newId()
   const sweep = await transact(async (tx) => {
@@ -42,7 +42,7 @@ export async function createSweep(studyId: string, definition: SweepCreation, by
     return sweepOf(tx, id)
   })
   void runSweep(id)
-  return sweep!
+  return { ...sweep!, leftOut: plan.leftOut }
 }
 
 /**

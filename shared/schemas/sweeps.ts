@@ -50,6 +50,10 @@ export const sweep = z.object({
 })
 export type Sweep = z.infer<typeof sweep>
 
+/** Answer of POST /api/studies/{id}/sweeps: with the combinations that make no row, and why the first of them does not. */
+export const startedSweep = sweep.extend({ leftOut: z.object({ count: z.int(), reason: z.string().nullable() }) })
+export type StartedSweep = z.infer<typeof startedSweep>
+
 /** DELETE /api/sweeps/{id}: rows that had not been computed are removed, the others stay. */
 export const sweepCancellation = sweep.extend({ removed: z.int(), kept: z.int() })
 export type SweepCancellation = z.infer<typeof sweepCancellation>

@@ -1,7 +1,7 @@
 import { defaultInputs } from '../schemas/candidates'
 import type { CandidateInputs } from '../schemas/candidates'
 import type { Issue } from '../schemas/common'
-import type { SweepCreation } from '../schemas/sweeps'
+import type { SweepCreation, SweepField } from '../schemas/sweeps'
 import { describeCandidate } from './describe-candidate'
 import { constellationIssues, settingIssues } from './input-issues'
 import { axisValues, constellationFields, depends, withValue } from './sweep-axes'
@@ -30,10 +30,13 @@ const number = (n: number) => n.toLocaleString('en')
 
 /**
  * Multiplies a sweep's lists and ranges out. Combinations that a family cannot have are left out and counted,
- * and so are those that would repeat a row because its numbers do not depend on the parameter.
+ * and so are those that would repeat a row, because its numbers do not depend on the parameter or because a list has a value twice.
  */
 export function expandSweep(definition: SweepCreation): SweepPlan {
-  const axes = definition.axes.map((axis, n) => ({ field: axis.field, ...axisValues(axis, n) }))
+  const axes = definition.axes.map((axis, n) => {
+    const { values, issues } = axisValues(axis, n)
+    return { field: axis.field, values, issues, repeats: repeatsOf(values) }
+  })
   const issues = axes.flatMap(axis => axis.issues)
   if (issues.length > 0) return refused(issues)
   const combinations = axes.reduce((product, axis) => product * axis.values.length, 1)
@@ -60,9 +63,11 @@ export function expandSweep(definition: SweepCreation): SweepPlan {
     return checked.get(key)!
   }
   const reasonAgainst = (at: readonly number[]): string | null => {
+    const repeat = axes.find((axis, n) => axis.repeats.has(at[n]!))
+    if (repeat) return `A value stands twice in the list for ${wordsOf(repeat.field)}: it is used once.`
     const inputs = inputsAt(at)
     const idle = axes.find((axis, n) => at[n]! > 0 && !depends(inputs, axis.field))
-    if (idle) return `A row of this kind does not depend on ${words[idle.field] ?? idle.field}: it is made once.`
+    if (idle) return `A row of this kind does not depend on ${wordsOf(idle.field)}: it is made once.`
     return constellationSentence(inputs, at) ?? settingIssues(inputs)[0]?.message ?? null
   }
 
@@ -88,7 +93,20 @@ export function expandSweep(definition: SweepCreation): SweepPlan {
   }
 }
 
-const words: Partial<Record<string, string>> = {
+const words: Partial<Record<SweepField, string>> = {
+  'family': 'the family', 'preset': 'the ring set', 'rollOff': 'the roll-off', 'backOff': 'the back-off', 'implementationLossDb': 'the implementation loss',
   'order': 'the order M', 'rings': 'rings', 'ratios.0': 'ring ratios', 'ratios.1': 'ring ratios', 'ratios.2': 'ring ratios',
   'spacing': 'the spacing', 'normalisation': 'the normalisation', 'backOffDb': 'an entered back-off',
+}
+const wordsOf = (field: SweepField) => words[field] ?? field
+
+/** Places of a list whose value stands at an earlier one. */
+function repeatsOf(values: readonly unknown[]): Set<number> {
+  const seen = new Set<string>()
+  return new Set(values.flatMap((value, i) => {
+    const text = JSON.stringify(value)
+    if (seen.has(text)) return [i]
+    seen.add(text)
+    return []
+  }))
 }

@@ -1,5 +1,5 @@
 import { beforeAll, describe, expect, it } from 'vitest'
-import type { Sweep, SweepCancellation } from '#shared/schemas/sweeps'
+import type { StartedSweep, Sweep, SweepCancellation } from '#shared/schemas/sweeps'
 import { signIn } from '../support/client'
 import type { Client } from '../support/client'
 import { otherServer } from './other-server'
@@ -50,6 +50,11 @@ describe('a sweep', () => {
   it('leaves out what a family cannot have', async () => {
     const axes = [{ field: 'family', values: ['psk', 'cross-qam'] }, { field: 'order', values: [16, 32] }]
     expect((await begin(owner, await ownStudy(owner, 'Left out'), { base: {}, axes })).body.total).toBe(3)
+  })
+  it('says how much it leaves out, and why', async () => {
+    const axes = [{ field: 'family', values: ['psk', 'cross-qam'] }, { field: 'order', values: [16, 32] }]
+    const { body } = await begin<StartedSweep>(owner, await ownStudy(owner, 'Left out and told'), { base: {}, axes })
+    expect(body.leftOut).toEqual({ count: 1, reason: 'Cross QAM has 32, 128 or 512 points.' })
   })
   it('makes the published ring sets, each with its own pair of ratios and its phases', async () => {
     const study = await ownStudy(owner, 'Presets')

@@ -21,6 +21,10 @@ describe('a sweep multiplied out', () => {
     const plan = expandSweep({ base: { ratios: [2.5], rings: [4, 12] }, axes: [{ field: 'family', values: ['qam', 'apsk'] }, ringSweep] })
     expect([plan.rows, plan.leftOut.count]).toEqual([6, 4])
   })
+  it('makes a row once where a list has a value twice', () => {
+    const plan = expandSweep({ base: { family: 'psk' }, axes: [{ field: 'order', values: [8, 16, 8] }] })
+    expect([plan.rows, plan.leftOut]).toEqual([2, { count: 1, reason: 'A value stands twice in the list for the order M: it is used once.' }])
+  })
   it('says so when no combination makes a row', () =>
     expect(expandSweep({ base: {}, axes: [{ field: 'family', values: ['cross-qam'] }] }).issues).toEqual([
       { path: 'axes', message: 'No combination makes a row. Cross QAM has 32, 128 or 512 points.' },
