@@ -1,10 +1,20 @@
 import { z } from 'zod'
 import { numberBetween, wholeBetween } from './common'
 import { families } from '../modulation'
+import type { FamilyParameter } from '../modulation'
 
 export const limits = { order: 4096, dimensions: 8, snrValues: 1001 } as const
 
 const coordinate = z.number({ error: 'A coordinate is a finite number.' })
+
+const parameters: readonly FamilyParameter[] = ['order', 'rings', 'ratios', 'phases', 'points']
+const list = new Intl.ListFormat('en-GB')
+
+/** What is wrong with naming a parameter that another family takes. */
+function foreignSentence(family: (typeof families)[number], parameter: FamilyParameter): string {
+  const takers = families.filter(other => other.parameters.includes(parameter)).map(other => other.id)
+  return `${family.title} takes its ${list.format(family.parameters)}; ${parameter} ${parameter === 'order' ? 'is' : 'are'} for the ${takers.length > 1 ? 'families' : 'family'} ${list.format(takers)}.`
+}
 
 /** Constellation of an evaluation: points as given, or a family at unit mean energy. */
 export const evaluatedConstellation = z.strictObject({
@@ -18,6 +28,12 @@ export const evaluatedConstellation = z.strictObject({
     .min(2, 'Send 2 to 4096 points.').max(limits.order, 'Send 2 to 4096 points.').optional(),
   labels: z.array(z.string({ error: 'A label is a word of 1 to 12 bits such as 0110.' }).regex(/^[01]{1,12}$/, 'A label is a word of 1 to 12 bits such as 0110.')).max(limits.order, 'Send a label for each point, at most 4096.').optional(),
   probabilities: z.array(numberBetween(0, 1, 'A probability is from 0 to 1.')).max(limits.order, 'Send a probability for each point, at most 4096.').optional(),
+}).superRefine((constellation, refine) => {
+  const family = families.find(({ id }) => id === constellation.family)!
+  for (const parameter of parameters) {
+    if (constellation[parameter] === undefined || family.parameters.includes(parameter)) continue
+    refine.addIssue({ code: 'custom', path: [parameter], message: foreignSentence(family, parameter) })
+  }
 })
 
 export const evaluationQuantities = ['serUnion', 'serAllPairs', 'serNearest', 'serExact'] as const

@@ -42,6 +42,7 @@ describe('POST /api/evaluate', () => {
     ['a quantity that is not offered', { constellation: points, esN0Db: [8], quantities: ['serExact', 'mutualInformation'] }, 'quantities.1'],
     ['a family that does not exist', { constellation: { family: 'spiral' }, esN0Db: [8] }, 'constellation.family'],
     ['an order that a family cannot have', { constellation: { family: 'cross-qam', order: 16 }, esN0Db: [8] }, 'constellation.order'],
+    ['points beside a family that takes its order', { constellation: { ...points, family: 'qam', order: 16 }, esN0Db: [8] }, 'constellation.points'],
     ['coincident points', { constellation: { family: 'custom', points: [[1, 0], [1, 0]] }, esN0Db: [8] }, 'constellation.points.1'],
     ['a string where a number belongs', { constellation: points, esN0Db: ['8'] }, 'esN0Db.0'],
     ['no SNR value', { constellation: points, esN0Db: [] }, 'esN0Db'],
@@ -56,6 +57,14 @@ describe('POST /api/evaluate', () => {
       expect([answer.status, answer.body.errors![0]!.path]).toEqual([422, path])
     })
   }
+  it('says which family takes a field that this one does not use', async () => {
+    const { body } = await evaluate<Problem>({ constellation: { ...points, family: 'qam', order: 16 }, esN0Db: [8] })
+    expect(body.errors![0]!.message).toBe('QAM takes its order; points are for the family custom.')
+  })
+  it('marks the ratios of rings whose points coincide', async () => {
+    const { body } = await evaluate<Problem>({ constellation: { family: 'apsk', rings: [4, 4], ratios: [1.0000000001] }, esN0Db: [8] })
+    expect(body.errors![0]!.path).toBe('constellation.ratios')
+  })
   it('refuses points of three coordinates, naming the dimensions', async () => {
     const { status, body } = await evaluate<Problem>({ constellation: { family: 'custom', points: [[1, 0, 0], [0, 1, 0]] }, esN0Db: [8] })
     expect([status, body.detail]).toEqual([422, 'Geometry is offered for one and two dimensions.'])
