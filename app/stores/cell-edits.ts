@@ -83,13 +83,12 @@ export const useCellEditsStore = defineStore('cell-edits', () => {
       try {
         const base = versions.baseOf(row, seen)
         versions.saved(row, base, await candidates.change(row, change, base))
-        stale.set(row, (stale.get(row) ?? 0) - numbers)
-        if (saves.get(key) === own) set(key, null)
+        // A later edit of the same cell may have taken this one's place.
+        if (saves.get(key) === own) saves.delete(key)
       } catch (thrown) {
-        stale.set(row, (stale.get(row) ?? 0) - numbers)
-        // A later edit of the same cell has taken this one's place.
         if (saves.get(key) === own) fail(key, column, text, change, thrown)
       }
+      stale.set(row, (stale.get(row) ?? 0) - numbers)
       announce(key)
     })
   }
