@@ -9,7 +9,10 @@ export const useStudyStore = defineStore('study', () => {
   const study = ref<Study | null>(null)
   const requirements = computed(() => study.value?.requirements ?? null)
   const canOwn = computed(() => study.value?.role === 'owner')
-  const canEdit = computed(() => canOwn.value || study.value?.role === 'editor')
+  const archived = computed(() => Boolean(study.value?.archivedAt))
+  /** the role allows changes, once the study is in work */
+  const mayEdit = computed(() => canOwn.value || study.value?.role === 'editor')
+  const canEdit = computed(() => mayEdit.value && !archived.value)
   let queue: Promise<unknown> = Promise.resolve()
 
   /**
@@ -43,5 +46,5 @@ export const useStudyStore = defineStore('study', () => {
     return done
   }
 
-  return { study, requirements, canEdit, canOwn, load, adopt, change }
+  return { study, requirements, archived, mayEdit, canEdit, canOwn, load, adopt, change }
 })

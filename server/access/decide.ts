@@ -1,5 +1,5 @@
 import type { StudyRole } from '#shared/schemas/members'
-import { studyStanding } from '../services/study-access'
+import { archivedSentence, studyStanding } from '../services/study-access'
 import type { Caller, StudyAccess } from '../utils/caller'
 import { problem } from '../utils/problem'
 import type { Match } from './match'
@@ -15,7 +15,7 @@ const readsOnly = (route: string) => route.startsWith('GET ') || route === 'POST
  * Decides whether a caller may have a route.
  * @param caller null: anonymous
  * @returns the study that the route is about, null on routes that are about none
- * @throws 401 to anonymous callers, 403 with why, 404 for studies that the caller has no part in
+ * @throws 401 to anonymous callers, 403 with why, 404 for studies that the caller has no part in, 409 for changes of archived ones
  */
 export async function decide({ route, rule, params }: Match, caller: Caller | null): Promise<StudyAccess | null> {
   if (rule === 'anyone') return null
@@ -33,7 +33,10 @@ async function decideInStudy(rule: Exclude<Rule, string>, id: string, { account 
   if (!study || gone || partless) {
     problem(404, rule.of === 'study' ? 'This study does not exist, or is not shared with you.' : 'This does not exist, or is not shared with you.')
   }
-  if (study.role && rule.roles.includes(study.role)) return { id: study.id, role: study.role }
+  if (study.role && rule.roles.includes(study.role)) {
+    if (rule.changes && study.archived) problem(409, archivedSentence)
+    return { id: study.id, role: study.role }
+  }
   const mayRead = rule.admin && account.role === 'admin'
   if (mayRead) return { id: study.id, role: study.role }
   const who = list.format(rule.roles.map(role => plural[role]))

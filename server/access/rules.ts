@@ -19,10 +19,12 @@ export type Rule
       admin: boolean
       /** whether it is also for deleted studies, which otherwise exist for nobody */
       deleted?: true
+      /** whether it changes what an archived study keeps as it is */
+      changes?: true
     }
 
 const reads = (of: Subject): Rule => ({ roles: ['owner', 'editor', 'reviewer', 'observer'], of, admin: true })
-const edits = (of: Subject): Rule => ({ roles: ['owner', 'editor'], of, admin: false })
+const edits = (of: Subject): Rule => ({ roles: ['owner', 'editor'], of, admin: false, changes: true })
 const owns = (of: Subject): Rule => ({ roles: ['owner'], of, admin: false })
 
 /** Every route of the API. One that is not listed is refused for everybody. */
@@ -48,7 +50,8 @@ export const rules = {
   'GET /api/studies': 'signedIn',
   'POST /api/studies': 'signedIn',
   'GET /api/studies/:id': reads('study'),
-  'PATCH /api/studies/:id': edits('study'),
+  // The one change that an archived study allows is to take it out of the archive: the service tells it from others.
+  'PATCH /api/studies/:id': { roles: ['owner', 'editor'], of: 'study', admin: false },
   'DELETE /api/studies/:id': owns('study'),
   'POST /api/studies/:id/restore': { roles: ['owner'], of: 'study', admin: false, deleted: true },
   'GET /api/studies/:id/members': reads('study'),

@@ -31,6 +31,7 @@ function refusalsOf(route: Route, rule: Rule, { body, query, versioned, refusals
     ...((body || query || route.includes(':')) && { 422: 'An input is not allowed; `errors` names each by its path.' }),
     ...(versioned && { 428: 'If-Match is missing.' }),
     ...refusals,
+    ...(inStudy && rule.changes && { 409: [refusals?.[409], 'The study is archived: it is read-only until it is taken back into work.'].filter(Boolean).join(' Or: ') }),
     503: 'The database is away; try again after Retry-After seconds.',
   }
 }

@@ -13,7 +13,7 @@ export const studyOperations = tagged('Studies', {
   'GET /api/studies/:id': { summary: 'A study with its requirements.', answer: study },
   'PATCH /api/studies/:id': {
     summary: 'Changes name, description or requirements, archives or takes out of the archive.',
-    body: studyChange, answer: study, versioned: true, refusals: { 409: stale },
+    body: studyChange, answer: study, versioned: true, refusals: { 409: `${stale} Or: the study is archived, and the change does not take it back into work.` },
   },
   'DELETE /api/studies/:id': { summary: 'Deletes a study; an owner can restore it for 30 days.', status: 204, versioned: true, refusals: { 409: stale } },
   'POST /api/studies/:id/restore': { summary: 'Brings a deleted study back.', answer: study },

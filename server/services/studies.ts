@@ -13,7 +13,7 @@ import { problem } from '../utils/problem'
 import { recordActivity } from './activity'
 import { copyCandidates, rekeyStudy } from './candidate-keys'
 import { appendEvent } from './events'
-import { studyStanding } from './study-access'
+import { archivedSentence, studyStanding } from './study-access'
 import { transact } from './transactions'
 
 type Row = typeof studies.$inferSelect
@@ -85,7 +85,7 @@ function difference(row: Row, { requirements, archived, name, description }: Stu
 /**
  * Changes a study; new requirements have all its candidates computed again.
  * @param version that the change is based on
- * @throws 409 with the study as it is now when that is not its version
+ * @throws 409 with the study as it is now when that is not its version, or when it is archived and stays so
  */
 export async function changeStudy(access: StudyAccess, change: StudyChange, version: number, by: Account): Promise<Study> {
   return transact(async (tx) => {
@@ -93,6 +93,7 @@ export async function changeStudy(access: StudyAccess, change: StudyChange, vers
     const { keys, from, to } = difference(row, change)
     if (keys.length === 0) return shownStudy(row, access.role)
     const { name, description, requirements, archived } = change
+    if (row.archivedAt !== null && archived !== false) problem(409, archivedSentence, { current: shownStudy(row, access.role), sent: change })
     await tx.update(studies).set({
       name, description, requirements,
       archivedAt: archived === undefined || archived === (row.archivedAt !== null) ? undefined : archived ? sql`current_timestamp(3)` : null,

@@ -4,10 +4,14 @@ import type { Subject } from '../access/rules'
 import { useDatabase } from '../database/client'
 import { candidates, members, studies, sweeps } from '../database/schema'
 
+/** Why an archived study does not take a change. */
+export const archivedSentence = 'This study is archived: it can be read and exported. Take it back into work to change it.'
+
 /** A study as far as access needs it. */
 export interface StudyStanding {
   id: string
   deleted: boolean
+  archived: boolean
   /** the person's role in it; null: none */
   role: StudyRole | null
 }
@@ -17,7 +21,7 @@ export interface StudyStanding {
  * @returns null when there is none
  */
 export async function studyStanding(of: Subject, id: string, userId: string): Promise<StudyStanding | null> {
-  const query = useDatabase().select({ id: studies.id, deletedAt: studies.deletedAt, role: members.role }).from(studies)
+  const query = useDatabase().select({ id: studies.id, deletedAt: studies.deletedAt, archivedAt: studies.archivedAt, role: members.role }).from(studies)
     .leftJoin(members, and(eq(members.studyId, studies.id), eq(members.userId, userId))).$dynamic()
   const found = of === 'study'
     ? query.where(eq(studies.id, id))
@@ -25,5 +29,5 @@ export async function studyStanding(of: Subject, id: string, userId: string): Pr
       ? query.innerJoin(candidates, eq(candidates.studyId, studies.id)).where(eq(candidates.id, id))
       : query.innerJoin(sweeps, eq(sweeps.studyId, studies.id)).where(eq(sweeps.id, id))
   const [row] = await found
-  return row ? { id: row.id, deleted: row.deletedAt !== null, role: row.role } : null
+  return row ? { id: row.id, deleted: row.deletedAt !== null, archived: row.archivedAt !== null, role: row.role } : null
 }
