@@ -17,6 +17,10 @@ describe('POST /api/evaluate', () => {
     const { body } = await evaluate({ constellation: points, esN0Db: [8] })
     expect(body.meanEnergy).toBeCloseTo((1 + 1.25 + 1.25 + 1.01) / 4, 14)
   })
+  it('takes labels and probabilities beside points', async () => {
+    const constellation = { ...points, labels: ['00', '01', '11', '10'], probabilities: [0.25, 0.25, 0.25, 0.25] }
+    expect((await evaluate({ constellation, esN0Db: [8, 12.5], target: { quantity: 'ser', value: 1e-6 } })).status).toBe(200)
+  })
   it('scales families to unit mean energy', async () => {
     const { body } = await evaluate({ constellation: { family: 'apsk', rings: [4, 12], ratios: [3.15] }, esN0Db: [8] })
     expect(body.meanEnergy).toBeCloseTo(1, 14)

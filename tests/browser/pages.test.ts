@@ -92,6 +92,19 @@ describe('studies', () => {
     expect(complaints).toEqual([])
   })
 
+  it('an archived study is not edited until it is taken back into work', async () => {
+    await command('Archive')
+    await row().waitFor({ state: 'detached' })
+    await openReady(page, `/studies/${id}/candidates`)
+    await page.getByText('This study is archived.').waitFor()
+    const add = page.getByRole('button', { name: 'Add a row' })
+    expect(await add.count()).toBe(0)
+    await page.getByRole('button', { name: 'Take back into work' }).click()
+    await add.waitFor()
+    expect(await page.getByText('This study is archived.').count()).toBe(0)
+    expect(complaints).toEqual([])
+  })
+
   it('deleting asks first, and can be undone', async () => {
     await command('Delete …')
     await page.getByRole('button', { name: 'Keep it' }).click()
