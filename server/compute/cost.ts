@@ -1,4 +1,3 @@
-import { familyOf } from '#shared/modulation'
 import type { EvaluationRequest } from '#shared/schemas/evaluate'
 import type { Issue } from '#shared/schemas/common'
 
@@ -18,12 +17,9 @@ const secondsOf: Record<EvaluationRequest['quantities'][number], (points: number
 /** Seconds for putting the distances of all pairs together, once. */
 const secondsOfPairs = (points: number) => 5e-8 * points * points
 
-/** Number of points: by the parameters that the family reads, as others may stand beside them unread. */
-function countOf({ family, order, points, rings }: EvaluationRequest['constellation']): number {
-  const { parameters } = familyOf(family)
-  if (parameters.includes('points')) return points?.length ?? 0
-  if (parameters.includes('rings')) return rings?.reduce((a, b) => a + b, 0) ?? 0
-  return order ?? 0
+/** Number of points, by whichever parameter gives it: the schema refuses those of other families. */
+function countOf({ order, points, rings }: EvaluationRequest['constellation']): number {
+  return points?.length ?? rings?.reduce((a, b) => a + b, 0) ?? order ?? 0
 }
 
 /** Estimated seconds of an evaluation. */

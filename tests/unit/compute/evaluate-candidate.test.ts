@@ -39,6 +39,8 @@ describe('one row', () => {
   it('carries k bits a symbol, less the overhead', () => expect(values({}, { overhead: 0.25 }).netBitRate).toBe(3e6))
   it('has no receiver threshold without a link', () => expect(values({}).receiverThresholdDbm).toBeNull())
   it('is computed over its SNR range', () => expect(evaluated({ snrStart: 0, snrStop: 10, snrStep: 5 }).curves!.esN0Db).toEqual([0, 5, 10]))
+  it.each([[1e-30, 1e9], [1e12, 1e-9]])('is computed at N0 %d and spacing %d, the ends of what may be entered', (n0, spacing) =>
+    expect(evaluated({ normalisation: 'minimumDistance', spacing }, { available: { from: 'noiseDensity', n0 } }).errors).toEqual([]))
   it('marks the ratios of rings so near that their points coincide', () =>
     expect(evaluated({ family: 'apsk', rings: [4, 4], ratios: [1.0000000001] }).errors.map(error => error.path)).toEqual(['ratios']))
   it('keeps a refusal of the core with its place', () =>
