@@ -8,6 +8,7 @@ import type { CandidateConstellation, CandidateCurves } from '#shared/schemas/va
 import { signIn } from '../support/client'
 import type { Client } from '../support/client'
 import { computeFormula } from './formula'
+import type { Scalar } from './formula'
 import { allRows, change, ownStudy } from './own-study'
 
 let owner: Client
@@ -37,17 +38,44 @@ const computed = (study: string) => vi.waitFor(async () => {
 const letters = (column: number): string => column > 26 ? letters(Math.floor((column - 1) / 26)) + letters((column - 1) % 26 + 1) : String.fromCharCode(64 + column)
 const titlesOf = (sheet: ExcelJS.Worksheet, row = 1) => (sheet.getRow(row).values as ExcelJS.CellValue[]).slice(1)
 
-/** Value of a cell, formulas computed anew from what stands in the others; `overrides` replace entered cells. */
-function valueOf(workbook: ExcelJS.Workbook, sheet: string, address: string, overrides: Record<string, number> = {}): number {
-  const replaced = overrides[`${sheet}!${address}`]
-  if (replaced !== undefined) return replaced
+type Entered = Record<string, number | string | null>
+
+/** Value of a cell, formulas computed anew from what stands in the others; `entered` replaces cells, `known` keeps what was computed. */
+function valueOf(workbook: ExcelJS.Workbook, sheet: string, address: string, entered: Entered = {}, known = new Map<string, Scalar>()): Scalar {
+  const key = `${sheet}!${address}`
+  if (key in entered) return entered[key]!
   const { value } = workbook.getWorksheet(sheet)!.getCell(address)
-  if (typeof value === 'number') return value
-  if (typeof value === 'object' && value !== null && 'formula' in value && value.formula) {
-    return computeFormula(value.formula, (other, column, row) => valueOf(workbook, other ?? sheet, `${column}${row}`, overrides))
+  if (value === null || typeof value === 'number' || typeof value === 'string') return value
+  if (typeof value !== 'object' || !('formula' in value) || !value.formula) throw new Error(`${key} holds neither a value nor a formula.`)
+  if (!known.has(key)) {
+    known.set(key, computeFormula(value.formula, {
+      cell: (other, column, row) => valueOf(workbook, other ?? sheet, `${column}${row}`, entered, known),
+      lastRow: other => workbook.getWorksheet(other ?? sheet)!.rowCount,
+    }))
   }
-  throw new Error(`${sheet}!${address} holds no number: ${JSON.stringify(value)}`)
+  return known.get(key)!
 }
+
+/** Every cell of a sheet that holds a formula. */
+function formulasOf(sheet: ExcelJS.Worksheet): ExcelJS.Cell[] {
+  const found: ExcelJS.Cell[] = []
+  sheet.eachRow(row => row.eachCell((cell) => {
+    if (cell.formula) found.push(cell)
+  }))
+  return found
+}
+
+/** Addresses in a column of a sheet whose row begins with a text. */
+function cellsBeside(sheet: ExcelJS.Worksheet, label: string, column: string): string[] {
+  const found: string[] = []
+  sheet.eachRow((row, number) => {
+    if (row.getCell(1).value === label) found.push(`${column}${number}`)
+  })
+  return found
+}
+
+/** What stands in a formula's cell until it is computed again; ExcelJS leaves a nought out when it reads one. */
+const cached = (cell: ExcelJS.Cell) => (cell.value as { result?: number | string }).result ?? 0
 
 beforeAll(async () => {
   owner = await signIn('owner')
@@ -72,56 +100,122 @@ describe('the workbook', () => {
     expect(candidates().rowCount).toBe(rows.length + 2)
   })
 
-  it('has a row of units under the titles, both frozen, and a filter', () => {
+  it('has a row of units under the titles, both frozen, and a filter over all rows', () => {
     expect(titlesOf(candidates(), 2)[column('Required Es/N0') - 1]).toBe('dB')
     expect(titlesOf(candidates(), 2)[column('Net rate') - 1]).toBe('Mbit/s')
     expect(candidates().views[0]).toMatchObject({ state: 'frozen', xSplit: 2, ySplit: 2 })
-    expect(candidates().autoFilter).toBe(`A2:${letters(candidates().columnCount)}2`)
+    expect(candidates().autoFilter).toBe(`A2:${letters(candidates().columnCount)}${rows.length + 2}`)
   })
 
   it('holds numbers as numbers, in full, with a format', () => {
     for (const row of rows) {
       expect(cell(row, 'Required Es/N0').value).toBe(row.values!.requiredEsN0Db)
-      expect(cell(row, 'Net rate').value).toBe(row.values!.netBitRate / 1e6)
+      expect(cached(cell(row, 'Net rate'))).toBe(row.values!.netBitRate / 1e6)
     }
     expect(cell(rows[0]!, 'Required Es/N0').numFmt).toBe('0.00')
     expect(cell(rows[0]!, 'Surplus').numFmt).toBe('+0.00;-0.00;0.00')
   })
 
-  it.each(['Margin', 'Surplus', 'Required Eb/N0', 'Available Es/N0', 'Required margin'])('%s is a formula that comes to what was computed', (title) => {
-    for (const row of rows) {
-      const address = `${letters(column(title))}${lineOf(row)}`
-      const { value } = candidates().getCell(address)
-      expect(value).toHaveProperty('formula')
-      expect(valueOf(book, 'Candidates', address)).toBeCloseTo((value as { result: number }).result, 9)
+  const address = (row: Candidate, title: string) => `${letters(column(title))}${lineOf(row)}`
+  const now = (row: Candidate, title: string, entered: Entered = {}) => valueOf(book, 'Candidates', address(row, title), entered)
+  const named = (name: string) => rows.find(({ inputs }) => inputs.name === name)!
+  const inputCell = (sheet: string, label: string, column: string) => `${sheet}!${cellsBeside(book.getWorksheet(sheet)!, label, column)[0]}`
+
+  it.each(['Summary', 'Link cases', 'Candidates'])('every formula of the sheet %s comes to the number or the words that stand in its cell', (name) => {
+    const found = formulasOf(book.getWorksheet(name)!)
+    expect(found.length).toBeGreaterThan(10)
+    const known = new Map<string, Scalar>()
+    for (const cell of found) {
+      const computed = valueOf(book, name, cell.address, {}, known)
+      if (typeof computed === 'number') expect(computed, cell.address).toBeCloseTo(cached(cell) as number, 9)
+      else expect(computed, cell.address).toBe(cached(cell))
     }
   })
 
-  it('one decibel more of output power is one decibel more of surplus, by its own formulas', () => {
+  it.each([
+    'Verdict', 'Margin', 'Surplus', 'Required Eb/N0', 'Available Es/N0', 'Required margin', 'Deciding case', 'Net rate', 'Symbol rate Rs', 'Implementation loss used',
+  ])('%s is a formula in every row', (title) => {
+    for (const row of rows) expect(cell(row, title).formula, row.inputs.name).toBeTruthy()
+  })
+
+  it('the exact margins are the page\'s, in full', () => {
+    for (const row of rows) {
+      expect(cached(cell(row, 'Surplus, exact'))).toBe(row.values!.surplusDb)
+      expect(cached(cell(row, 'Available Es/N0, exact'))).toBe(row.values!.availableEsN0Db)
+    }
+  })
+
+  it('no margin is shown better than it is: 16-QAM is 0.14 dB short, hexagonal 16 has 0.51 dB to spare', () => {
+    for (const title of ['Margin', 'Surplus', 'Available Es/N0', 'Available Eb/N0']) {
+      for (const row of rows) {
+        const shown = Number((now(row, title) as number).toFixed(2))
+        const exact = now(row, `${title}, exact`) as number
+        expect(shown).toBeLessThanOrEqual(exact + 1e-9)
+        expect(shown).toBeGreaterThan(exact - 0.01)
+      }
+    }
+    expect(cached(cell(named('16-QAM'), 'Surplus'))).toBe(-0.14)
+    expect(cached(cell(named('hexagonal 16'), 'Surplus'))).toBe(0.51)
+  })
+
+  it('common lines, required margin, implementation loss and symbol rate each stand in one cell', () => {
     const link = book.getWorksheet('Link cases')!
-    const outputs: Record<string, number> = {}
-    link.eachRow((row, number) => {
-      if (row.getCell(1).value === 'Saturated output') outputs[`Link cases!F${number}`] = (row.getCell(6).value as number) + 1
-    })
-    expect(Object.keys(outputs)).toHaveLength(2)
-    const address = `${letters(column('Surplus'))}3`
-    expect(valueOf(book, 'Candidates', address, outputs)).toBeCloseTo(rows[0]!.values!.surplusDb! + 1, 9)
+    expect(cellsBeside(link, 'Saturated output', 'F')).toHaveLength(1)
+    const margin = book.getWorksheet('Summary')!.getCell(cellsBeside(book.getWorksheet('Summary')!, 'Required margin', 'B')[0]!)
+    expect(margin.value).toBe(1)
+    expect(cell(rows[0]!, 'Implementation loss used').formula).toContain('Summary!')
+    expect(cell(rows[0]!, 'Symbol rate Rs').formula).toMatch(/^Summary!\$B\$\d+$/)
   })
 
-  it('shades and words every verdict by its side', () => {
-    for (const row of rows) {
-      const { value, fill } = cell(row, 'Verdict')
-      expect(value).toBe(row.values!.verdict)
-      expect(fill).toMatchObject({ pattern: 'solid', fgColor: { argb: row.values!.passes ? 'FFD5E8E4' : 'FFF8DAD3' } })
-    }
+  it('one decibel more of output power, in its one cell, is one decibel more of surplus', () => {
+    const output = inputCell('Link cases', 'Saturated output', 'F')
+    const entered = { [output]: 28 }
+    expect(now(rows[0]!, 'Surplus, exact', entered)).toBeCloseTo(rows[0]!.values!.surplusDb! + 1, 9)
+  })
+
+  it('the verdict\'s words follow a link line', () => {
+    const output = inputCell('Link cases', 'Saturated output', 'F')
+    const row = rows.find(({ values }) => values!.passes)!
+    expect(now(row, 'Verdict')).toBe('passes')
+    expect(now(row, 'Verdict', { [output]: 17 })).toMatch(/^fails R\d+: margin \d+\.\d\d dB short at −\d+\.\d\d dB \(Faded\)$/)
+    expect(now(named('16-QAM'), 'Verdict', { [output]: 28 })).toBe('passes')
+  })
+
+  it('the verdict follows the study\'s limits on the summary', () => {
+    const row = rows.find(({ values }) => values!.passes)!
+    expect(now(row, 'Verdict', { [inputCell('Summary', 'Minimum net bit rate', 'B')]: 1000 })).toMatch(/^fails R\d+: net bit rate \d+\.\d Mbit\/s short at \d+\.\d Mbit\/s$/)
+    expect(now(row, 'Verdict', { [inputCell('Summary', 'Minimum net bit rate', 'B')]: row.values!.netBitRate / 1e6 + 0.004 }))
+      .toMatch(/net bit rate 0\.004 Mbit\/s short/)
+  })
+
+  it('another case decides where it becomes the worst', () => {
+    const margins = cellsBeside(book.getWorksheet('Link cases')!, 'Required margin', 'F')
+    expect(margins).toHaveLength(2)
+    const entered = { [`Link cases!${margins[0]}`]: 40 }
+    expect(now(rows[0]!, 'Deciding case')).toBe('Faded')
+    expect(now(rows[0]!, 'Deciding case', entered)).toBe('Clear')
+    const { cases } = rows[0]!.values!
+    expect(now(rows[0]!, 'Margin, exact', entered)).toBeCloseTo(cases.find(({ name }) => name === 'Clear')!.marginDb!, 9)
+  })
+
+  it('a row\'s own implementation loss counts instead of the study\'s', () => {
+    const own = { [`Candidates!${address(rows[0]!, 'Implementation loss')}`]: 3.5 }
+    expect(now(rows[0]!, 'Surplus, exact', own)).toBeCloseTo(rows[0]!.values!.surplusDb! + rows[0]!.values!.implementationLossDb - 3.5, 9)
+  })
+
+  it('shades verdicts by their words: teal where they pass, vermilion where they fail or cannot be computed', () => {
+    const [shading] = (candidates() as unknown as { conditionalFormattings: ExcelJS.ConditionalFormattingOptions[] }).conditionalFormattings
+    expect(shading!.ref).toBe(`C3:C${rows.length + 2}`)
+    expect(shading!.rules.map(({ style, ...rule }) => [(rule as { formulae: string[] }).formulae[0], (style.fill as ExcelJS.FillPattern).bgColor!.argb])).toEqual([
+      ['LEFT($C3,6)="passes"', 'FFD5E8E4'],
+      ['OR(LEFT($C3,5)="fails",LEFT($C3,6)="cannot")', 'FFF8DAD3'],
+    ])
+    expect(column('Verdict')).toBe(3)
+    for (const row of rows) expect(cached(cell(row, 'Verdict'))).toBe(row.values!.verdict)
   })
 
   it('sums up the link cases by formulas over their lines', () => {
-    const link = book.getWorksheet('Link cases')!
-    const sums: number[] = []
-    link.eachRow((row, number) => {
-      if (row.getCell(1).value === 'C/N0') sums.push(valueOf(book, 'Link cases', `F${number}`))
-    })
+    const sums = cellsBeside(book.getWorksheet('Link cases')!, 'C/N0', 'F').map(cell => valueOf(book, 'Link cases', cell) as number)
     // clear and faded, from the demonstration's lines: −55.54 and −72.74 dBm over −168.98 dBm/Hz
     expect(sums.map(sum => sum.toFixed(2))).toEqual(['113.43', '96.23'])
   })
@@ -169,7 +263,7 @@ describe('a row that could not be computed', () => {
     expect(body.id).toBe(row!.id)
     await change(owner, row!, { family: 'qam' })
     await expect.poll(async () => (await allRows(owner, study))[0]!.state).toBe('failed')
-    const sentence = 'could not be computed: QAM has a power of two of points from 4 to 4096.'
+    const sentence = 'cannot be computed: QAM has a power of two of points from 4 to 4096.'
     const sheet = (await workbookOf(study)).getWorksheet('Candidates')!
     const titles = titlesOf(sheet)
     expect(sheet.getRow(3).getCell(titles.indexOf('Verdict') + 1).value).toBe(sentence)

@@ -10,6 +10,10 @@ export function columnLetters(index: number): string {
   return letters
 }
 
+const sheetPrefix = (sheet: string) => /^[A-Za-z]+$/.test(sheet) ? `${sheet}!` : `'${sheet.replaceAll('\'', '\'\'')}'!`
+
 /** Address of a cell that other sheets can use, fixed against filling and sorting. */
-export const fixedAddress = (sheet: string, column: number, row: number) =>
-  `'${sheet.replaceAll('\'', '\'\'')}'!$${columnLetters(column)}$${row}`
+export const fixedAddress = (sheet: string, column: number, row: number) => `${sheetPrefix(sheet)}$${columnLetters(column)}$${row}`
+
+/** A whole column of a sheet, fixed. */
+export const wholeColumn = (sheet: string, letters: string) => `${sheetPrefix(sheet)}$${letters}:$${letters}`

@@ -10,12 +10,15 @@ export function writeCurvesSheet(workbook: ExcelJS.stream.xlsx.WorkbookWriter, {
   sheet.getColumn(2).numFmt = '0.00'
   styleRow(sheet.addRow(['Candidate', 'Es/N0', 'SER, union bound', 'SER, nearest-neighbour approximation', 'SER, exact']), headerStyle).commit()
   styleRow(sheet.addRow(['—', 'dB', '—', '—', '—']), unitStyle).commit()
-  sheet.autoFilter = 'A2:E2'
+  let last = 2
   for (const { row, curves } of pinned) {
     curves.esN0Db.forEach((esN0, i) => {
-      sheet.addRow([row.inputs.name, esN0, curves.serUnion[i], curves.serNearest[i], curves.serExact[i]]).commit()
+      const line = sheet.addRow([row.inputs.name, esN0, curves.serUnion[i], curves.serNearest[i], curves.serExact[i]])
+      last = line.number
+      line.commit()
     })
   }
+  sheet.autoFilter = `A2:E${last}`
   if (!pinned.length) sheet.addRow(['No row is pinned: pin rows in the grid to have their curves here.']).commit()
   sheet.commit()
 }

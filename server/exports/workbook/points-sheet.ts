@@ -13,7 +13,6 @@ export async function writePointsSheet(workbook: ExcelJS.stream.xlsx.WorkbookWri
   for (const index of [3, 4]) sheet.getColumn(index).numFmt = '0.000000'
   styleRow(sheet.addRow(['Candidate', 'Point', 'I', 'Q']), headerStyle).commit()
   styleRow(sheet.addRow(['—', 'counted from 0', 'signal units', 'signal units']), unitStyle).commit()
-  sheet.autoFilter = 'A2:D2'
   let written = 0
   for (const { row, points } of constellations()) {
     if (written + points.length > mostPoints) {
@@ -25,6 +24,7 @@ export async function writePointsSheet(workbook: ExcelJS.stream.xlsx.WorkbookWri
     // Other requests go in between.
     await setImmediate()
   }
+  sheet.autoFilter = `A2:D${2 + written}`
   if (written === 0) sheet.addRow(['Pin a row or give it a role to have its points here.']).commit()
   sheet.commit()
 }

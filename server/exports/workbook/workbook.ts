@@ -1,6 +1,7 @@
 import type { Writable } from 'node:stream'
 import ExcelJS from 'exceljs'
 import type { StudyExport } from '../study-export'
+import { candidatesLayout } from './candidates-layout'
 import { writeCandidatesSheet } from './candidates-sheet'
 import { writeCurvesSheet } from './curves-sheet'
 import { writeLinkSheet } from './link-sheet'
@@ -19,10 +20,11 @@ export async function writeWorkbook(data: StudyExport, stream: Writable): Promis
   workbook.created = data.at
   // Spreadsheets recompute the formulas on opening, so that an edited cell and its neighbours agree.
   workbook.calcProperties = { fullCalcOnLoad: true }
-  const studyMarginDb = data.study.requirements.mustHaves.find(m => m.kind === 'margin')?.value ?? 0
-  writeSummarySheet(workbook, data)
-  const link = writeLinkSheet(workbook, data.study.requirements.available, studyMarginDb)
-  await writeCandidatesSheet(workbook, data, link)
+  const { requirements } = data.study
+  const layout = candidatesLayout(requirements)
+  const summary = writeSummarySheet(workbook, data, layout)
+  const link = writeLinkSheet(workbook, requirements, summary)
+  await writeCandidatesSheet(workbook, data, layout, { requirements, summary, link })
   writeCurvesSheet(workbook, data)
   await writePointsSheet(workbook, data)
   writeMethodsSheet(workbook)
