@@ -60,8 +60,9 @@ export const useCellEditsStore = defineStore('cell-edits', () => {
       return
     }
     const { row } = partsOf(key)
-    if (thrown.status === 409) {
-      if (isCandidate(thrown.current)) candidates.adopt([thrown.current])
+    // Without a row beside it, 409 is the study's state: it is archived.
+    if (thrown.status === 409 && isCandidate(thrown.current)) {
+      candidates.adopt([thrown.current])
       const theirs = candidates.byId(row)
       set(key, { state: 'conflict', text, change, theirs: theirs ? column.text(theirs.inputs) : '', sentence: staleSentence })
     } else if (thrown.status === 422) {

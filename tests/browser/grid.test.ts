@@ -129,6 +129,9 @@ it('tells why a number is what it is, with the row\'s own values', async () => {
   await (await cell(page, '16-QAM', 'requiredEbN0')).click()
   await page.getByRole('button', { name: 'Why this number' }).click()
   await page.getByText('20.92 dB − 10·log10 4.000 = 14.90 dB').waitFor()
+  await (await cell(page, '16-QAM', 'requiredEsN0')).click()
+  await page.keyboard.press('Escape')
+  await page.getByRole('heading', { name: 'Why this number' }).waitFor({ state: 'detached' })
 })
 
 it('shows a reviewer the rows without a way to change them', async () => {

@@ -42,9 +42,14 @@ export function fullText(view: CellView): string {
   return typeof value === 'number' ? plain(value) : value ?? ''
 }
 
+/** What the row's other cells go on counting with while a typed text stands in one without being taken. */
+const kept = (row: Candidate, column: Column) =>
+  column.kind === 'input' ? ` Until then the row counts with ${column.text(row.inputs) || 'none'}.` : ''
+
 /** The sentence that goes with a cell: a refusal, the row's mistake, or why the cell is not used. */
 export function cellSentence(view: CellView): string | null {
   const { row, column, save } = view
+  if (save?.state === 'refused') return save.sentence + kept(row, column)
   if (save) return save.state === 'saving' ? 'Being saved.' : save.sentence
   const without = lacking(view)
   if (without === 'failed') return failure(row)

@@ -12,6 +12,8 @@ export type GridKeys = {
   copy: (row: Candidate, column: string) => void
   /** Alt+W: why this number */
   why: (row: Candidate, column: string) => void
+  /** Escape: closes what Alt+W has opened */
+  leave: () => void
   /** Alt+P: pins the rows that commands act on, or unpins them */
   pin: () => void
   /** Home: beside the grid's own move, which stays in the frozen columns, the others go back to their start */
@@ -33,6 +35,7 @@ export function handleKey({ event, editing, data, column }: SuppressKeyboardEven
     return true
   }
   if (event.altKey && event.code === 'KeyW') return run(() => keys.why(data, id))
+  if (event.key === 'Escape') return run(keys.leave)
   if (event.altKey && event.code === 'KeyP') return run(keys.pin)
   if (ctrl && event.code === 'KeyA') return run(keys.selectAll)
   if (ctrl && event.code === 'KeyC') return run(() => keys.copy(data, id))

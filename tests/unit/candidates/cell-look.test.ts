@@ -31,7 +31,7 @@ describe('marks of a cell', () => {
 describe('the sentence of a cell', () => {
   it('is the mistake at its input', () => expect(cellSentence(view('order', { row: failed }))).toBe('QAM has a power of two of points from 4 to 4096.'))
   it('is why a cell is not used', () => expect(cellSentence(view('rings'))).toBe('QAM does not use rings and ratios; entering them makes it APSK.'))
-  it('is the server\'s after a refusal', () => expect(cellSentence(view('order', { save: { state: 'refused', text: 'x', sentence: 'No.' } }))).toBe('No.'))
+  it('is the server\'s after a refusal, with what the row goes on counting with', () => expect(cellSentence(view('order', { save: { state: 'refused', text: 'x', sentence: 'No.' } }))).toBe('No. Until then the row counts with 16.'))
 })
 
 describe('editing', () => {
