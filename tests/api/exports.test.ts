@@ -206,7 +206,7 @@ describe('the workbook', () => {
   it('shades verdicts by their words: teal where they pass, vermilion where they fail or cannot be computed', () => {
     const [shading] = (candidates() as unknown as { conditionalFormattings: ExcelJS.ConditionalFormattingOptions[] }).conditionalFormattings
     expect(shading!.ref).toBe(`C3:C${rows.length + 2}`)
-    expect(shading!.rules.map(({ style, ...rule }) => [(rule as { formulae: string[] }).formulae[0], (style.fill as ExcelJS.FillPattern).bgColor!.argb])).toEqual([
+    expect(shading!.rules.map(({ style, ...rule }) => [(rule as { formulae: string[] }).formulae[0], (style!.fill as ExcelJS.FillPattern).bgColor!.argb])).toEqual([
       ['LEFT($C3,6)="passes"', 'FFD5E8E4'],
       ['OR(LEFT($C3,5)="fails",LEFT($C3,6)="cannot")', 'FFF8DAD3'],
     ])
