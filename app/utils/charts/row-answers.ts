@@ -17,7 +17,7 @@ const keyOf = (row: Candidate) => `${row.version} ${row.updatedAt}`
 /** Why a row has nothing to draw, or null. */
 export function withoutDrawing(row: Candidate): string | null {
   if (row.inputs.family === 'entered') return 'entered by its values, without points'
-  if (row.state === 'failed') return 'the row could not be computed'
+  if (row.state === 'failed') return 'the row cannot be computed'
   return null
 }
 
