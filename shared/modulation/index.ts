@@ -2,6 +2,8 @@
 export { coreVersion } from './version'
 export { ModulationError } from './errors'
 export type { Issue } from './errors'
+export { highOf, isInterval, lowOf, mapEstimate, valueOf } from './estimate'
+export type { Estimate, Interval } from './estimate'
 export { decibels, fromDecibels } from './decibels'
 export { logQ, q, qInverse } from './gaussian'
 export { gaussLegendre } from './quadrature'
