@@ -1,7 +1,9 @@
 import type { Issue } from '../errors'
 
 export type FamilyId = 'pam' | 'psk' | 'qam' | 'cross-qam' | 'apsk' | 'hexagonal' | 'custom'
-export type FamilyParameter = 'order' | 'rings' | 'ratios' | 'phases' | 'points'
+  | 'orthogonal' | 'biorthogonal' | 'simplex' | 'hypercube' | 'lattice' | 'product'
+export type FamilyParameter = 'order' | 'rings' | 'ratios' | 'phases' | 'points' | 'lattice' | 'offset' | 'factors'
+export type LatticeId = 'A2' | 'D4' | 'E8'
 
 /** Parameters of a family; each family reads its own and ignores the others, so that a change of family loses nothing. */
 export interface FamilyParameters {
@@ -15,6 +17,12 @@ export interface FamilyParameters {
   phases?: readonly number[] | null
   /** custom: M points of N coordinates, signal units */
   points?: readonly (readonly number[])[] | null
+  /** lattice: which one */
+  lattice?: LatticeId | null
+  /** lattice: centre of the cut, in minimum distances; left out: the family's own */
+  offset?: readonly number[] | null
+  /** product: its factors, 2 to 8, not nested */
+  factors?: readonly ({ family: FamilyId } & FamilyParameters)[] | null
 }
 
 /** The rule that generates a constellation: one file each, listed in index.ts. */
