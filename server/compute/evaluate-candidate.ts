@@ -56,7 +56,7 @@ function requiredValues({ constellation, requiredEsN0Db, study }: CanonicalInput
   if (requiredEsN0Db !== null || !constellation) {
     return { requiredEsN0Db: requiredEsN0Db!, requiredUnionEsN0Db: null, requiredAllPairsEsN0Db: null, requiredNearestEsN0Db: null, boundPenaltyDb: null }
   }
-  const { serExact, serUnion, serAllPairs, serNearest } = requiredOf(constellation, study.target)
+  const { serExact, serUnion, serAllPairs, serNearest } = requiredOf(constellation, study.target.value)
   return {
     requiredEsN0Db: serExact, requiredUnionEsN0Db: serUnion, requiredAllPairsEsN0Db: serAllPairs, requiredNearestEsN0Db: serNearest,
     boundPenaltyDb: serUnion === null ? null : serUnion - serExact,

@@ -14,3 +14,11 @@ export const instant = customType<{ data: Date, driverData: Date | string }>({
 
 /** Now, with milliseconds, in the connection's time zone, which is UTC. */
 export const now = sql`current_timestamp(3)`
+
+/** JSON whose older rows are completed when they are read: the one place that knows what they lack. */
+export const completedJson = <T>(column: string, complete: (stored: T) => T) => customType<{ data: T, driverData: string | T }>({
+  dataType: () => 'json',
+  toDriver: value => JSON.stringify(value),
+  // The driver hands a JSON column over parsed, a JSON expression as text.
+  fromDriver: value => complete(typeof value === 'string' ? JSON.parse(value) as T : value),
+})(column)

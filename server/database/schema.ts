@@ -1,14 +1,14 @@
 import { sql } from 'drizzle-orm'
 import { bigint, double, foreignKey, index, int, json, mysqlEnum, mysqlTable, primaryKey, text, uniqueIndex, varchar } from 'drizzle-orm/mysql-core'
 import type { CandidateCurves, CandidateValues } from '#shared/schemas/values'
-import type { CandidateInputs } from '#shared/schemas/candidates'
 import type { Issue } from '#shared/schemas/common'
-import type { Requirements } from '#shared/schemas/requirements'
 import type { SweepCreation } from '#shared/schemas/sweeps'
 // By their paths: drizzle-kit reads this file and knows no aliases.
+import { completeInputs } from '../../shared/schemas/candidates'
 import { studyRoles } from '../../shared/schemas/members'
+import { completeRequirements } from '../../shared/schemas/requirements'
 import { accountRoles } from '../../shared/schemas/session'
-import { instant, now, uuid } from './columns'
+import { completedJson, instant, now, uuid } from './columns'
 
 export const users = mysqlTable('users', {
   id: uuid('id').primaryKey(),
@@ -53,7 +53,7 @@ export const studies = mysqlTable('studies', {
   id: uuid('id').primaryKey(),
   name: varchar('name', { length: 120 }).notNull(),
   description: text('description').notNull(),
-  requirements: json('requirements').$type<Requirements>().notNull(),
+  requirements: completedJson('requirements', completeRequirements).notNull(),
   version: int('version').notNull().default(1),
   /** number of the last event; raised under this row's lock */
   eventNumber: bigint('event_number', { mode: 'number' }).notNull().default(0),
@@ -106,7 +106,7 @@ export const candidates = mysqlTable('candidates', {
   studyId: uuid('study_id').notNull().references(() => studies.id, { onDelete: 'cascade' }),
   sweepId: uuid('sweep_id'),
   position: double('position').notNull(),
-  inputs: json('inputs').$type<CandidateInputs>().notNull(),
+  inputs: completedJson('inputs', completeInputs).notNull(),
   version: int('version').notNull().default(1),
   pin: int('pin'),
   /** null when the inputs contradict each other: then `errors` says how */

@@ -27,7 +27,7 @@ export const ridgeLink: { name: string, description: string, requirements: Requi
   name: 'Ridge station to valley gateway',
   description: 'Radio link of an unattended weather station: 38 km at 7.5 GHz in a 7 MHz channel, with a peak-limited amplifier.',
   requirements: {
-    target: { quantity: 'ser', value: 1e-6 },
+    target: { quantity: 'ser', value: 1e-6, stage: 'afterDecoding' },
     mustHaves: [
       { id: 'R1', kind: 'margin', value: 1, reason: 'Nobody can reach the station in winter; 1 dB covers ageing until the next visit.' },
       { id: 'R2', kind: 'netBitRate', value: 20, reason: 'Radar sectors, camera and sensors together, every ten seconds.' },

@@ -11,6 +11,6 @@ export const familyChoices: readonly Choice[] = [
   { value: 'entered', title: 'entered' },
 ]
 export const normalisationChoices = titled(normalisations, { meanEnergy: 'mean energy', peakEnergy: 'peak energy', minimumDistance: 'minimum distance' })
-export const basisChoices = titled(bases, { uncoded: 'uncoded', entered: 'entered' })
+export const basisChoices = titled(bases, { uncoded: 'uncoded', rateThreshold: 'rate threshold', entered: 'entered' })
 export const backOffChoices = titled(backOffs, { simulated: 'simulated', entered: 'entered', papr: 'PAPR alone' })
 export const roleChoices = titled(roles, { reference: 'reference', chosen: 'chosen', fallback: 'fallback', rejected: 'rejected' })

@@ -1,4 +1,5 @@
 import { z } from 'zod'
+import { factorFamilies, lattices } from './candidates'
 import { numberBetween, wholeBetween } from './common'
 import { families } from '../modulation'
 import type { FamilyParameter } from '../modulation'
@@ -7,7 +8,7 @@ export const limits = { order: 4096, dimensions: 8, snrValues: 1001 } as const
 
 const coordinate = z.number({ error: 'A coordinate is a finite number.' })
 
-const parameters: readonly FamilyParameter[] = ['order', 'rings', 'ratios', 'phases', 'points']
+const parameters: readonly FamilyParameter[] = ['order', 'rings', 'ratios', 'phases', 'points', 'lattice', 'offset', 'factors']
 const list = new Intl.ListFormat('en-GB')
 
 /** What is wrong with naming a parameter that another family takes. */
@@ -16,14 +17,24 @@ function foreignSentence(family: (typeof families)[number], parameter: FamilyPar
   return `${family.title} takes its ${list.format(family.parameters)}; ${parameter} ${parameter === 'order' ? 'is' : 'are'} for the ${takers.length > 1 ? 'families' : 'family'} ${list.format(takers)}.`
 }
 
-/** Constellation of an evaluation: points as given, or a family at unit mean energy. */
-export const evaluatedConstellation = z.strictObject({
-  family: z.enum(families.map(f => f.id) as [string, ...string[]], { error: `The family is one of ${families.map(f => f.id).join(', ')}.` }),
+const shape = {
   order: wholeBetween(2, limits.order, 'Order M is a whole number from 2 to 4096.').optional(),
   rings: z.array(wholeBetween(1, limits.order, 'A ring has 1 to 4096 points.')).min(1, 'Send at least one ring.').max(64, 'At most 64 rings.').optional(),
   ratios: z.array(numberBetween(1e-3, 1e3, 'A ring ratio is a number from 0.001 to 1,000.')).max(63, 'At most 63 ring ratios.').optional(),
   /** radians */
   phases: z.array(numberBetween(-10, 10, 'A ring phase is in radians, from −10 to 10.')).max(64, 'At most 64 ring phases.').optional(),
+  lattice: z.enum(lattices, { error: 'A lattice is A2, D4 or E8.' }).optional(),
+  /** centre of a lattice cut, in minimum distances */
+  offset: z.array(numberBetween(-1e3, 1e3, 'An offset is of numbers from −1,000 to 1,000, in minimum distances.')).max(limits.dimensions, 'An offset has at most 8 coordinates.').optional(),
+}
+
+/** Constellation of an evaluation: points as given, or a family at unit mean energy. */
+export const evaluatedConstellation = z.strictObject({
+  family: z.enum(families.map(f => f.id) as [string, ...string[]], { error: `The family is one of ${families.map(f => f.id).join(', ')}.` }),
+  ...shape,
+  factors: z.array(z.strictObject({
+    family: z.enum(factorFamilies, { error: 'A factor is a family of the list other than a product or points of your own.' }), ...shape,
+  })).min(2, 'A product has 2 to 8 factors.').max(8, 'A product has 2 to 8 factors.').optional(),
   points: z.array(z.array(coordinate).min(1, 'A point has 1 to 8 coordinates.').max(limits.dimensions, 'A point has 1 to 8 coordinates.'))
     .min(2, 'Send 2 to 4096 points.').max(limits.order, 'Send 2 to 4096 points.').optional(),
   labels: z.array(z.string({ error: 'A label is a word of 1 to 12 bits such as 0110.' }).regex(/^[01]{1,12}$/, 'A label is a word of 1 to 12 bits such as 0110.')).max(limits.order, 'Send a label for each point, at most 4096.').optional(),

@@ -94,12 +94,22 @@ export const heldConstantKinds = {
 } as const
 export type HeldConstant = keyof typeof heldConstantKinds
 
+/** Error rates that a target may be stated as, and whether it is stated before or behind a decoder. */
+export const targetQuantities = { ser: { title: 'SER', words: 'symbol error rate' }, ber: { title: 'BER', words: 'bit error rate' } } as const
+export type TargetQuantity = keyof typeof targetQuantities
+export const targetStages = ['beforeDecoding', 'afterDecoding'] as const
+
+/** The error rate to meet. For uncoded rows both stages are the same. */
+export const target = z.strictObject({
+  quantity: z.enum(Object.keys(targetQuantities) as TargetQuantity[], { error: 'The target is a symbol error rate (ser) or a bit error rate (ber).' }),
+  value: numberBetween(1e-15, 0.5, 'Enter a target error rate from 1e-15 to 0.5.'),
+  stage: z.enum(targetStages, { error: 'The target holds before or after decoding.' }).default('afterDecoding'),
+})
+export type Target = z.infer<typeof target>
+
 /** Requirements of a study in their first form. */
 export const requirements = z.strictObject({
-  target: z.strictObject({
-    quantity: z.literal('ser', { error: 'The target is a symbol error rate (ser).' }),
-    value: numberBetween(1e-15, 0.5, 'Enter a target SER from 1e-15 to 0.5.'),
-  }),
+  target,
   mustHaves: z.array(mustHave).max(20, 'A study has at most 20 must-haves.')
     .refine(unique<{ id: string }>(m => m.id.toLowerCase()), 'Every must-have has an ID of its own.')
     .refine(unique<{ kind: string }>(m => m.kind), 'Each kind of must-have is stated once.'),
@@ -122,7 +132,7 @@ export type Requirements = z.infer<typeof requirements>
 
 /** What a new study starts with: a plain set of requirements that computes at once. */
 export const defaultRequirements: Requirements = {
-  target: { quantity: 'ser', value: 1e-6 },
+  target: { quantity: 'ser', value: 1e-6, stage: 'afterDecoding' },
   mustHaves: [{ id: 'R1', kind: 'margin', value: 1, reason: '' }],
   heldConstant: { kind: 'symbolRate', value: 1 },
   limitedBy: 'meanPower',
@@ -132,3 +142,7 @@ export const defaultRequirements: Requirements = {
   dimensionsPerInterval: 2,
   available: { from: 'entered', esN0Db: 20 },
 }
+
+/** Requirements as they are stored: those of earlier versions do not say at which stage their target holds. */
+export const completeRequirements = (stored: z.input<typeof requirements>): Requirements =>
+  ({ ...stored, target: { ...stored.target, stage: stored.target.stage ?? 'afterDecoding' } })

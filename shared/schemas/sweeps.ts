@@ -8,6 +8,7 @@ import { id, numberBetween } from './common'
  */
 export const sweepFields = [
   'family', 'order', 'preset', 'rings', 'ratios.0', 'ratios.1', 'ratios.2', 'normalisation', 'spacing', 'rollOff', 'backOff', 'backOffDb', 'implementationLossDb',
+  'codeRate', 'decoderGapDb', 'shapedEntropy', 'branches', 'phaseErrorDeg',
 ] as const
 export type SweepField = (typeof sweepFields)[number]
 /** What a preset sets, so that it is not varied beside one. */

@@ -1,11 +1,24 @@
 import type { FamilyId, FamilyParameters, Normalisation } from '../modulation'
 import type { CandidateInputs } from '../schemas/candidates'
-import type { Requirements } from '../schemas/requirements'
+import type { Requirements, Target } from '../schemas/requirements'
 import { canonicalStudy } from './canonical-study'
 import type { CanonicalStudy } from './canonical-study'
 import { familyParameters } from './family-parameters'
+import { decidesByMap } from './option-issues'
 
 export type CanonicalBackOff = { by: 'simulated', exceedance: number } | { by: 'entered', db: number } | { by: 'papr' }
+
+/** How the points come about, and what is not as usual about them: labels other than the family's, unequal probabilities. */
+export interface CanonicalPoints {
+  family: FamilyId
+  parameters: FamilyParameters
+  normalisation: Normalisation
+  labels?: 'natural' | string[]
+  probabilities?: { entropy: number } | number[]
+}
+
+/** A channel with fading; K in dB. */
+export type CanonicalFading = { kind: 'rayleigh' | 'rician' | 'nakagami', branches: number, kDb?: number, m?: number }
 
 /**
  * What a row's result depends on, and nothing else: neither name, role, note and source, nor fields of other families,
@@ -13,12 +26,22 @@ export type CanonicalBackOff = { by: 'simulated', exceedance: number } | { by: '
  */
 export interface CanonicalInputs {
   /** null: an entered scheme, which has no points */
-  constellation: { family: FamilyId, parameters: FamilyParameters, normalisation: Normalisation } | null
+  constellation: CanonicalPoints | null
   /** net bits per symbol as entered, or null: from the constellation and the code rate */
   netBits: number | null
   codeRate: number
   /** required Es/N0 as entered, dB, or null: from the study's target */
   requiredEsN0Db: number | null
+  /** the basis rate threshold: its rate, the decoder's distance from it in dB, and whether the target also holds before decoding */
+  threshold?: { kind: CandidateInputs['rateKind'], decoderGapDb: number, stage: Target['stage'] }
+  /** left out: minimum distance */
+  decision?: 'map'
+  /** left out: white Gaussian noise alone */
+  channel?: CanonicalFading
+  /** r.m.s. carrier phase error in degrees; left out: none */
+  phaseErrorDeg?: number
+  /** symbols of a frame; left out: none asked for */
+  frameSymbols?: number
   /** SNR range in dB */
   range: { start: number, stop: number, step: number }
   rollOff: number
@@ -32,25 +55,46 @@ function canonicalBackOff({ backOff, backOffDb, backOffExceedance }: CandidateIn
   return backOff === 'entered' ? { by: 'entered', db: backOffDb! } : { by: 'papr' }
 }
 
+/** How a row's constellation comes about; null for an entered scheme. */
+export function canonicalPoints(inputs: CandidateInputs): CanonicalPoints | null {
+  const { family, normalisation, spacing, labelling, labels, probabilityRule, shapedEntropy, probabilities } = inputs
+  if (family === 'entered') return null
+  return {
+    family,
+    parameters: familyParameters(inputs),
+    normalisation: normalisation === 'minimumDistance' ? { normalisation, spacing } : { normalisation },
+    ...labelling === 'family' ? {} : { labels: labelling === 'natural' ? labelling : labels! },
+    ...probabilityRule === 'equal' ? {} : { probabilities: probabilityRule === 'shaped' ? { entropy: shapedEntropy! } : probabilities! },
+  }
+}
+
+/** What is not as usual between transmitter and decision; nothing of it for an entered scheme. */
+function canonicalOptions(inputs: CandidateInputs, { target }: Requirements): Partial<CanonicalInputs> {
+  const { family, basis, rateKind, decoderGapDb, channel, branches, ricianKDb, nakagamiM, phaseErrorDeg, frameSymbols } = inputs
+  if (family === 'entered') return {}
+  return {
+    ...basis === 'rateThreshold' ? { threshold: { kind: rateKind, decoderGapDb: decoderGapDb!, stage: target.stage } } : {},
+    ...decidesByMap(inputs) ? { decision: 'map' } : {},
+    ...channel === 'awgn' ? {} : { channel: { kind: channel, branches, ...channel === 'rician' ? { kDb: ricianKDb! } : {}, ...channel === 'nakagami' ? { m: nakagamiM! } : {} } },
+    ...phaseErrorDeg > 0 ? { phaseErrorDeg } : {},
+    ...frameSymbols === null ? {} : { frameSymbols },
+  }
+}
+
 /**
  * Canonical inputs of a row in its study.
  * @param inputs without contradictions (inputIssues is empty)
  * @throws ModulationError when the study's link lines contradict each other
  */
 export function canonicalInputs(inputs: CandidateInputs, requirements: Requirements): CanonicalInputs {
-  const { family, normalisation, spacing, basis, snrStart, snrStop, snrStep } = inputs
+  const { family, basis, snrStart, snrStop, snrStep } = inputs
   const entered = basis === 'entered'
   return {
-    constellation: family === 'entered'
-      ? null
-      : {
-          family: family as FamilyId,
-          parameters: familyParameters(inputs),
-          normalisation: normalisation === 'minimumDistance' ? { normalisation, spacing } : { normalisation },
-        },
+    constellation: canonicalPoints(inputs),
     netBits: entered ? inputs.enteredNetBits : null,
     codeRate: family === 'entered' ? 1 : inputs.codeRate,
     requiredEsN0Db: entered ? inputs.enteredEsN0Db : null,
+    ...canonicalOptions(inputs, requirements),
     range: family === 'entered' ? { start: 0, stop: 0, step: 1 } : { start: snrStart, stop: snrStop, step: snrStep },
     rollOff: inputs.rollOff ?? requirements.rollOff,
     backOff: canonicalBackOff(inputs),

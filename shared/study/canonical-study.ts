@@ -1,5 +1,5 @@
 import { linkCase } from '../modulation/link'
-import type { MustHaveKind, Requirements } from '../schemas/requirements'
+import type { MustHaveKind, Requirements, TargetQuantity } from '../schemas/requirements'
 
 /** A link case as a row sees it: what its lines come to. */
 export interface CanonicalCase {
@@ -12,8 +12,8 @@ export interface CanonicalCase {
 
 /** What a row's result depends on of its study: neither names of lines nor reasons. */
 export interface CanonicalStudy {
-  /** SER to meet */
-  target: number
+  /** error rate to meet */
+  target: { quantity: TargetQuantity, value: number }
   mustHaves: { id: string, kind: MustHaveKind, value: number }[]
   /** symbol/s, Hz or bit/s by kind */
   heldConstant: { kind: Requirements['heldConstant']['kind'], value: number }
@@ -52,7 +52,7 @@ export function canonicalStudy(requirements: Requirements): CanonicalStudy {
   if (!study) {
     const { target, mustHaves, heldConstant, limitedBy, overhead, dimensionsPerInterval } = requirements
     study = {
-      target: target.value,
+      target: { quantity: target.quantity, value: target.value },
       mustHaves: mustHaves.map(({ id, kind, value }) => ({ id, kind, value })),
       heldConstant: { kind: heldConstant.kind, value: heldConstant.value * 1e6 },
       limitedBy, overhead, dimensionsPerInterval,

@@ -1,3 +1,5 @@
+import { formatNumber } from '../columns/format'
+import { defaultInputs } from '../schemas/candidates'
 import type { CandidateInputs } from '../schemas/candidates'
 import { familyOfRow, familyParameters } from './family-parameters'
 
@@ -12,13 +14,27 @@ const named: Partial<Record<string, (inputs: CandidateInputs) => string>> = {
   'hexagonal': ({ order }) => `hexagonal ${order ?? ''}`,
   'cross-qam': ({ order }) => `cross ${order ?? ''}`,
   'custom': ({ points }) => `custom ${points?.length ?? ''}`,
+  'orthogonal': ({ order }) => `orthogonal ${order ?? ''}`,
+  'biorthogonal': ({ order }) => `biorthogonal ${order ?? ''}`,
+  'simplex': ({ order }) => `simplex ${order ?? ''}`,
+  'hypercube': ({ order }) => `hypercube ${order ?? ''}`,
+  'lattice': ({ lattice, order }) => `${lattice ?? 'lattice'} ${order ?? ''}`,
+  'product': ({ factors }) => (factors ?? []).map(factor => baseName({ ...defaultInputs, order: null, ...factor })).join(' × ') || 'product',
   'entered': ({ enteredSource }) => enteredSource.trim() || 'entered scheme',
 }
 
-/** Name of a row that was given none: "16-QAM", "8-PSK", "4+12 at 2.57", "hexagonal 16", "cross 32". */
-export function describeCandidate(inputs: CandidateInputs): string {
+function baseName(inputs: CandidateInputs): string {
   const own = named[inputs.family]
-  const family = familyOfRow(inputs)
-  const text = own ? own(inputs) : family!.signature(familyParameters(inputs))
-  return text.trim().slice(0, 120)
+  return (own ? own(inputs) : familyOfRow(inputs)!.signature(familyParameters(inputs))).trim()
+}
+
+/**
+ * Name of a row that was given none: "16-QAM", "8-PSK", "4+12 at 2.57", "hexagonal 16", "cross 32", "D4 24", "4-PAM × QPSK";
+ * with its code rate and its entropy where a code or shaping is counted: "64-QAM r 3/4 H 5.2".
+ */
+export function describeCandidate(inputs: CandidateInputs): string {
+  const { family, basis, codeRate, probabilityRule, shapedEntropy } = inputs
+  const coded = family !== 'entered' && basis === 'rateThreshold' && codeRate < 1 ? ` r ${formatNumber(codeRate, 'fraction')}` : ''
+  const shaped = family !== 'entered' && probabilityRule === 'shaped' && shapedEntropy !== null ? ` H ${Number(shapedEntropy.toFixed(4))}` : ''
+  return `${baseName(inputs)}${coded}${shaped}`.slice(0, 120)
 }

@@ -97,6 +97,7 @@ const words: Partial<Record<SweepField, string>> = {
   'family': 'the family', 'preset': 'the ring set', 'rollOff': 'the roll-off', 'backOff': 'the back-off', 'implementationLossDb': 'the implementation loss',
   'order': 'the order M', 'rings': 'rings', 'ratios.0': 'ring ratios', 'ratios.1': 'ring ratios', 'ratios.2': 'ring ratios',
   'spacing': 'the spacing', 'normalisation': 'the normalisation', 'backOffDb': 'an entered back-off',
+  'codeRate': 'the code rate', 'decoderGapDb': 'the decoder gap', 'shapedEntropy': 'the shaped entropy', 'branches': 'the branches', 'phaseErrorDeg': 'the phase error',
 }
 const wordsOf = (field: SweepField) => words[field] ?? field
 

@@ -1,6 +1,7 @@
 import type { CandidateField, CandidateInputs } from '../schemas/candidates'
 import type { Issue } from '../schemas/common'
 import { familyOfRow, familyParameters } from './family-parameters'
+import { channelIssues, labelIssues, probabilityIssues } from './option-issues'
 import { mostValues, valuesOfRange } from './snr-grid'
 
 const fieldOf: Partial<Record<string, CandidateField>> = { phases: 'phasesDeg' }
@@ -11,11 +12,9 @@ const at = (path: CandidateField, message: string): Issue => ({ path, message })
 export function constellationIssues(inputs: CandidateInputs): Issue[] {
   const family = familyOfRow(inputs)
   if (!family) return []
-  const issues = family.validate(familyParameters(inputs)).map(({ path: [field, ...rest], message }) => ({
+  return family.validate(familyParameters(inputs)).map(({ path: [field, ...rest], message }) => ({
     path: [fieldOf[String(field)] ?? field, ...rest].join('.'), message,
   }))
-  const beyondPlane = inputs.family === 'custom' && (inputs.points?.some(point => point.length > 2) ?? false)
-  return issues.length > 0 || !beyondPlane ? issues : [at('points', 'Points of 3 or more coordinates are not offered so far: enter 1 or 2.')]
 }
 
 function basisIssues(inputs: CandidateInputs): Issue[] {
@@ -29,9 +28,17 @@ function basisIssues(inputs: CandidateInputs): Issue[] {
   if (inputs.basis === 'entered') {
     return inputs.enteredEsN0Db === null ? [at('enteredEsN0Db', 'The basis is entered: enter the required Es/N0, from −60 to 120 dB.')] : []
   }
+  if (inputs.basis === 'rateThreshold') return thresholdIssues(inputs)
   return inputs.codeRate < 1
-    ? [at('codeRate', 'A code rate below 1 with an uncoded basis is refused: it would charge for the code and credit nothing. Use 1, or the basis entered.')]
+    ? [at('codeRate', 'A code rate below 1 with an uncoded basis is refused: it would charge for the code and credit nothing. Use 1, or the basis rate threshold or entered.')]
     : []
+}
+
+function thresholdIssues({ codeRate, decoderGapDb }: CandidateInputs): Issue[] {
+  return [
+    ...codeRate === 1 ? [at('codeRate', 'A rate threshold is for a code rate below 1: at 1 no SNR is enough. Enter a code rate such as 3/4, or use the basis uncoded.')] : [],
+    ...decoderGapDb === null ? [at('decoderGapDb', 'Enter how far the decoder stays above the rate threshold, from 0 to 60 dB; 0 is an ideal code.')] : [],
+  ]
 }
 
 function backOffIssues(inputs: CandidateInputs): Issue[] {
@@ -54,6 +61,7 @@ export function settingIssues(inputs: CandidateInputs): Issue[] {
   return [
     ...spacingMissing ? [at('spacing', 'Enter the spacing, the minimum distance in signal units, from 1e-9 to 1e9.')] : [],
     ...basisIssues(inputs), ...backOffIssues(inputs), ...rangeIssues(inputs),
+    ...inputs.family === 'entered' ? [] : [...labelIssues(inputs), ...probabilityIssues(inputs), ...channelIssues(inputs)],
   ]
 }
 

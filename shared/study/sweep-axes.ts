@@ -60,6 +60,10 @@ export function depends(inputs: CandidateInputs, field: SweepField): boolean {
   if (name === 'spacing') return inputs.normalisation === 'minimumDistance' && inputs.family !== 'entered'
   if (name === 'normalisation') return inputs.family !== 'entered'
   if (name === 'backOffDb') return inputs.backOff === 'entered'
+  if (name === 'decoderGapDb') return inputs.basis === 'rateThreshold' && inputs.family !== 'entered'
+  if (name === 'shapedEntropy') return inputs.probabilityRule === 'shaped' && inputs.family !== 'entered'
+  if (name === 'branches') return inputs.channel !== 'awgn' && inputs.family !== 'entered'
+  if (name === 'codeRate' || name === 'phaseErrorDeg') return inputs.family !== 'entered'
   if (name === 'order' || name === 'rings' || name === 'ratios') {
     return familyOfRow(inputs)?.parameters.includes(name satisfies FamilyParameter) ?? false
   }

@@ -136,7 +136,7 @@ describe('the database client', () => {
   })
   it('reads JSON columns as what was written', async () => {
     const [study] = await useDatabase().select({ requirements: studies.requirements }).from(studies).limit(1)
-    expect(study!.requirements.target).toEqual({ quantity: 'ser', value: 1e-6 })
+    expect(study!.requirements.target).toEqual({ quantity: 'ser', value: 1e-6, stage: 'afterDecoding' })
   })
   it('keeps milliseconds and reads times as UTC', async () => {
     const [[row], [now]] = await Promise.all([

@@ -44,7 +44,7 @@ describe('one row', () => {
   it('marks the ratios of rings so near that their points coincide', () =>
     expect(evaluated({ family: 'apsk', rings: [4, 4], ratios: [1.0000000001] }).errors.map(error => error.path)).toEqual(['ratios']))
   it('keeps a refusal of the core with its place', () =>
-    expect(evaluated({ family: 'psk', order: 2 }, { target: { quantity: 'ser', value: 0.5 } }).errors[0]!.path).toBe('requirements.target.value'))
+    expect(evaluated({ family: 'psk', order: 2 }, { target: { quantity: 'ser', value: 0.5, stage: 'afterDecoding' } }).errors[0]!.path).toBe('requirements.target.value'))
 })
 
 describe('an entered scheme', () => {

@@ -31,9 +31,16 @@ describe('canonical inputs', () => {
   it('depend on what the link lines come to alone', () => expect(json({}, linked(lines('Power', 10)))).toBe(json({}, linked(lines('Amplifier', 20)))))
   it('depend on the order', () => expect(json({ order: 64 })).not.toBe(json({})))
   it('depend on the study\'s target', () => {
-    const target = { quantity: 'ser' as const, value: 1e-5 }
+    const target = { ...defaultRequirements.target, value: 1e-5 }
     expect(json({}, { ...defaultRequirements, target })).not.toBe(json({}))
   })
+  it('leave out labels that are the family\'s', () => expect(json({ labels: ['0', '1'] })).toBe(json({})))
+  it('depend on natural labels', () => expect(json({ labelling: 'natural' })).not.toBe(json({})))
+  it('leave out what another channel would need', () => expect(json({ ricianKDb: 3, nakagamiM: 2, branches: 4 })).toBe(json({})))
+  it('depend on the branches of a fading channel', () => expect(json({ channel: 'rayleigh', branches: 2 })).not.toBe(json({ channel: 'rayleigh' })))
+  it('leave out MAP decisions among equal probabilities', () => expect(json({ decision: 'map' })).toBe(json({})))
+  it('leave out the stage of the target without a decoder', () =>
+    expect(json({}, { ...defaultRequirements, target: { ...defaultRequirements.target, stage: 'beforeDecoding' } })).toBe(json({})))
   it('refuse link lines that contradict each other', () =>
     expect(() => json({}, linked(lines('Power', 10).slice(1)))).toThrow('A link case needs a power line'))
 })
