@@ -1,3 +1,4 @@
+import type { MethodId } from '../methods'
 import type { Candidate, CandidateChange, CandidateField, CandidateInputs } from '../schemas/candidates'
 import type { Requirements } from '../schemas/requirements'
 import type { NumberFormat, Rounding } from './format'
@@ -64,6 +65,8 @@ export interface InputColumn extends Base {
 export interface ComputedColumn extends Base {
   kind: 'computed'
   type: 'text' | 'number'
+  /** how the number comes about, on the Methods page */
+  method: MethodId
   formula: string
   source: string
   tolerance: string

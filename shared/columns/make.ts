@@ -51,7 +51,7 @@ export const unusedParameter = (parameter: FamilyParameter, what: string) => ({ 
   return familyOf(family).parameters.includes(parameter) ? null : `${titleIn(familyChoices, family)} does not use ${what}.`
 }
 
-type Computed = Pick<ComputedColumn, Shared | 'formula' | 'source' | 'tolerance'>
+type Computed = Pick<ComputedColumn, Shared | 'method' | 'formula' | 'source' | 'tolerance'>
   & Partial<Pick<ComputedColumn, 'firstOpening' | 'width' | 'round' | 'format' | 'value' | 'type'>>
   & { lines?: (values: CandidateValues, row: Candidate, context: ColumnContext) => string[] }
 

@@ -1,10 +1,11 @@
+import { tolerances } from '../methods/tolerances'
 import type { CandidateValues } from '../schemas/values'
 import type { ColumnContext } from './column'
 import { computed, numberInput, shown, textInput, valueColumn } from './make'
 import type { Candidate } from '../schemas/candidates'
 
 const group = 'Required SNR' as const
-const tolerance = '1e−6 dB'
+const tolerance = tolerances.requiredDb
 
 const target = (context: ColumnContext) => shown(context.requirements?.target.value, '0.00e-0')
 
@@ -16,7 +17,7 @@ const requiredLines = (v: CandidateValues, row: Candidate, context: ColumnContex
     ]
 
 export const requiredEsN0 = valueColumn('requiredEsN0Db', '0.00', {
-  id: 'requiredEsN0', title: 'Required Es/N0', unit: 'dB', group, firstOpening: true, width: 19,
+  id: 'requiredEsN0', method: 'requiredSnr', title: 'Required Es/N0', unit: 'dB', group, firstOpening: true, width: 19,
   meaning: 'Smallest Es/N0 above which the error rate stays at or below the study\'s target, on the row\'s basis.',
   formula: 'smallest Es/N0 with SER(Es/N0) ≤ target', source: 'Methods §4; exact SER by Craig 1991', tolerance,
   lines: requiredLines,
@@ -28,9 +29,9 @@ const difference = (row: Candidate, { reference }: ColumnContext) => {
 }
 
 export const delta = computed({
-  id: 'delta', title: 'Δ to reference', unit: 'dB', group, format: '+0.00', firstOpening: true, width: 19,
+  id: 'delta', method: 'requiredSnr', title: 'Δ to reference', unit: 'dB', group, format: '+0.00', firstOpening: true, width: 19,
   meaning: 'Required Es/N0 minus that of the reference row; negative needs less.',
-  formula: 'Δ = required Es/N0 − required Es/N0 of the reference', source: 'Methods §4', tolerance: '2e−6 dB',
+  formula: 'Δ = required Es/N0 − required Es/N0 of the reference', source: 'Methods §4', tolerance: tolerances.differenceDb,
   value: difference,
   lines: (v, row, context) => context.reference
     ? [`${shown(v.requiredEsN0Db)} dB − ${shown(context.reference.values?.requiredEsN0Db)} dB (${context.reference.inputs.name}) = ${shown(difference(row, context), '+0.00')} dB`]
@@ -38,14 +39,14 @@ export const delta = computed({
 })
 
 export const requiredEbN0 = valueColumn('requiredEbN0Db', '0.00', {
-  id: 'requiredEbN0', title: 'Required Eb/N0', unit: 'dB', group, firstOpening: true, width: 19,
+  id: 'requiredEbN0', method: 'snrAxes', title: 'Required Eb/N0', unit: 'dB', group, firstOpening: true, width: 19,
   meaning: 'Required SNR per net bit.',
   formula: 'Eb/N0 = Es/N0 − 10·log10 R, R the net bits per symbol', source: 'Methods §0', tolerance,
   lines: v => [`${shown(v.requiredEsN0Db)} dB − 10·log10 ${shown(v.netBits, '0.000')} = ${shown(v.requiredEbN0Db)} dB`],
 })
 
 export const requiredEpkN0 = valueColumn('requiredEpkN0Db', '0.00', {
-  id: 'requiredEpkN0', title: 'Required Epk/N0', unit: 'dB', group, width: 20,
+  id: 'requiredEpkN0', method: 'snrAxes', title: 'Required Epk/N0', unit: 'dB', group, width: 20,
   meaning: 'Required SNR by the energy of the outermost point.',
   formula: 'Epk/N0 = Es/N0 + PAPR', source: 'Methods §0', tolerance,
   lines: v => [`${shown(v.requiredEsN0Db)} dB + ${shown(v.paprDb)} dB = ${shown(v.requiredEpkN0Db)} dB`],
@@ -57,41 +58,41 @@ const by = (what: string, formula: string, source: string) => ({
 })
 
 export const requiredUnion = valueColumn('requiredUnionEsN0Db', '0.00', {
-  id: 'requiredUnion', title: 'Required Es/N0, bound', width: 26,
+  id: 'requiredUnion', method: 'unionBound', title: 'Required Es/N0, bound', width: 26,
   ...by('union bound over relevant neighbours', 'smallest Es/N0 with Σᵢ pᵢ Σⱼ∈Nᵢ Q(dᵢⱼ/√(2·N0)) ≤ target', 'Methods §2, §4'),
   lines: (v, _row, context) => [`bound ≤ ${target(context)} from ${shown(v.requiredUnionEsN0Db)} dB`],
 })
 
 export const requiredAllPairs = valueColumn('requiredAllPairsEsN0Db', '0.00', {
-  id: 'requiredAllPairs', title: 'Required Es/N0, all pairs', width: 29,
+  id: 'requiredAllPairs', method: 'unionBound', title: 'Required Es/N0, all pairs', width: 29,
   ...by('union bound over all pairs', 'smallest Es/N0 with Σᵢ pᵢ Σⱼ≠ᵢ Q(dᵢⱼ/√(2·N0)) ≤ target', 'Methods §2, §4'),
   lines: (v, _row, context) => [`all-pairs bound ≤ ${target(context)} from ${shown(v.requiredAllPairsEsN0Db)} dB`],
 })
 
 export const requiredNearest = valueColumn('requiredNearestEsN0Db', '0.00', {
-  id: 'requiredNearest', title: 'Required Es/N0, approximation', width: 33,
+  id: 'requiredNearest', method: 'nearestNeighbour', title: 'Required Es/N0, approximation', width: 33,
   ...by('nearest-neighbour approximation', 'smallest Es/N0 with Ā·Q(d_min/√(2·N0)) ≤ target', 'Methods §2, §4'),
   lines: (v, _row, context) => [`${shown(v.nearestMean)}·Q(d_min/√(2·N0)) ≤ ${target(context)} from ${shown(v.requiredNearestEsN0Db)} dB`],
 })
 
 export const boundPenalty = valueColumn('boundPenaltyDb', '0.00', {
-  id: 'boundPenalty', title: 'Bound penalty', unit: 'dB', group, firstOpening: true, width: 18,
+  id: 'boundPenalty', method: 'boundPenalty', title: 'Bound penalty', unit: 'dB', group, firstOpening: true, width: 18,
   meaning: 'How much required SNR the union bound costs against the exact error rate.',
-  formula: 'required Es/N0 by the bound − required Es/N0 exact', source: 'Methods §4', tolerance: '2e−6 dB',
+  formula: 'required Es/N0 by the bound − required Es/N0 exact', source: 'Methods §4', tolerance: tolerances.differenceDb,
   lines: v => [`${shown(v.requiredUnionEsN0Db)} dB − ${shown(v.requiredEsN0Db)} dB = ${shown(v.boundPenaltyDb, '0.00e-0')} dB`],
 })
 
 export const gapToCapacity = valueColumn('gapToCapacityDb', '0.00', {
-  id: 'gapToCapacity', title: 'Gap to capacity', unit: 'dB', group, width: 20,
+  id: 'gapToCapacity', method: 'capacity', title: 'Gap to capacity', unit: 'dB', group, width: 20,
   meaning: 'Required Es/N0 minus the one at which capacity equals the net bits per symbol.',
   formula: 'required − 10·log10((N/2)·(2^(2R/N) − 1))', source: 'Methods §5; Shannon 1948', tolerance,
   lines: v => [`N = ${shown(v.dimensions, 'integer')}, R = ${shown(v.netBits, '0.000')}: ${shown(v.requiredEsN0Db)} dB − ${shown(v.requiredEsN0Db !== null && v.gapToCapacityDb !== null ? v.requiredEsN0Db - v.gapToCapacityDb : null)} dB = ${shown(v.gapToCapacityDb)} dB`],
 })
 
 export const evm = valueColumn('evmPercent', '0.00', {
-  id: 'evm', title: 'EVM at required SNR', unit: '%', group, width: 22,
+  id: 'evm', method: 'evm', title: 'EVM at required SNR', unit: '%', group, width: 22,
   meaning: 'Error vector magnitude that corresponds to the required SNR.',
-  formula: 'EVM = √(N·N0/(2·Es))', source: 'Methods §1', tolerance: '1e−6 relative',
+  formula: 'EVM = √(N·N0/(2·Es))', source: 'Methods §1', tolerance: tolerances.evm,
   lines: v => [`N = ${shown(v.dimensions, 'integer')}, Es/N0 = ${shown(v.requiredEsN0Db)} dB: ${shown(v.evmPercent)} %`],
 })
 

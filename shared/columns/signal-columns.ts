@@ -1,3 +1,4 @@
+import { tolerances } from '../methods/tolerances'
 import type { InputColumn } from './column'
 import { parsePoints, parseSnrRange, pointsText, snrRangeText } from './entry-lists'
 import { choiceInput, numberInput, shown, unusedParameter, valueColumn } from './make'
@@ -34,22 +35,22 @@ export const spacing = numberInput('spacing', {
 }, { width: 22, unused: inputs => inputs.normalisation === 'minimumDistance' ? null : 'Spacing is used with normalisation to minimum distance only.' })
 
 export const meanEnergy = valueColumn('meanEnergy', '0.000', {
-  id: 'meanEnergy', title: 'Mean energy Es', unit: 'signal units²', group, width: 22,
+  id: 'meanEnergy', method: 'model', title: 'Mean energy Es', unit: 'signal units²', group, width: 22,
   meaning: 'Mean energy of the points about the origin, after normalisation.',
-  formula: 'Es = Σ pᵢ |sᵢ|²', source: 'Methods §0', tolerance: '1e−12 relative',
+  formula: 'Es = Σ pᵢ |sᵢ|²', source: 'Methods §0', tolerance: tolerances.closedForm,
   lines: v => [`Es = ${shown(v.meanEnergy, 'plain')} over ${shown(v.order, 'integer')} points`],
 })
 
 export const peakEnergy = valueColumn('peakEnergy', '0.000', {
-  id: 'peakEnergy', title: 'Peak energy Epk', unit: 'signal units²', group, width: 23,
+  id: 'peakEnergy', method: 'model', title: 'Peak energy Epk', unit: 'signal units²', group, width: 23,
   meaning: 'Energy of the outermost point, after normalisation.',
-  formula: 'Epk = max |sᵢ|²', source: 'Methods §0', tolerance: '1e−12 relative',
+  formula: 'Epk = max |sᵢ|²', source: 'Methods §0', tolerance: tolerances.closedForm,
   lines: v => [`Epk = ${shown(v.peakEnergy, 'plain')}`],
 })
 
 export const signalDistance = valueColumn('spacing', '0.000', {
-  id: 'signalDistance', title: 'Minimum distance', unit: 'signal units', group, width: 23,
+  id: 'signalDistance', method: 'distances', title: 'Minimum distance', unit: 'signal units', group, width: 23,
   meaning: 'Smallest distance of two points in signal units, after normalisation.',
-  formula: 'd_min = min |sᵢ − sⱼ|', source: 'Methods §1', tolerance: '1e−12 relative',
+  formula: 'd_min = min |sᵢ − sⱼ|', source: 'Methods §1', tolerance: tolerances.closedForm,
   lines: v => [`d_min = ${shown(v.spacing, 'plain')}`],
 })

@@ -1,0 +1,21 @@
+/** How exact each kind of number is: said once, for columns, the Methods page and exports. Each is held by tests. */
+export const tolerances = {
+  closedForm: '1e−12 relative',
+  count: 'exact count',
+  neighbours: 'identical sets',
+  symbolError: '1e−9 relative from 0.9 to 1e−30',
+  bitError: '1e−8 relative from 0.5 to 1e−20',
+  requiredDb: '1e−6 dB',
+  differenceDb: '2e−6 dB',
+  evm: '1e−6 relative',
+  rate: '1e−5 bit',
+  thresholdDb: '1e−4 dB',
+  channel: '1e−7 relative',
+  interval: '95 % interval shown',
+  simulated: 'an estimate itself',
+  backOff: 'simulated: the standard error shown; else as entered or 1e−12',
+  linkDb: '1e−9 dB, beside the back-off\'s own',
+  marginDb: '1e−6 dB, beside the back-off\'s own',
+  comparison: 'none: a comparison of unrounded numbers',
+  entered: 'as entered',
+} as const
