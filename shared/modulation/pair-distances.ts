@@ -1,7 +1,8 @@
 import type { Constellation } from './constellation'
 import { minimumDistanceOf } from './distance'
+import { onesIn } from './labels/words'
 
-/** Squared distances of all pairs of points, in no order, with what the pairs of each weigh: Σ (p_i + p_j). */
+/** Squared distances of all pairs of points, in no order, with what the pairs of each weigh: Σ (p_i + p_j), times the wrong bits of the two where labels count. */
 export interface PairDistances {
   /** d_min² */
   least: number
@@ -30,22 +31,24 @@ const sameDistance = 1e-9
  * Distances of all pairs of points. Of many pairs, in any number of dimensions, near ones are put together: they become one distance
  * where they repeat, as in a grid, and at most two a bin where they do not.
  * @param constellation M points
+ * @param labels as numbers, where wrong bits weigh
  * @see Golub and Welsch 1969: two nodes carry the moments up to the third
  */
-export function pairDistancesOf(constellation: Constellation): PairDistances {
+export function pairDistancesOf(constellation: Constellation, labels: Uint16Array | null = null): PairDistances {
   const least = minimumDistanceOf(constellation) ** 2
   const pairs = constellation.order * (constellation.order - 1) / 2
-  return { least, ...(pairs <= fewPairs ? listed(constellation, pairs) : together(binned(constellation, least))) }
+  return { least, ...(pairs <= fewPairs ? listed(constellation, labels, pairs) : together(binned(constellation, labels, least))) }
 }
 
-function listed({ order, dimensions, points, probabilities }: Constellation, pairs: number) {
+function listed({ order, dimensions, points, probabilities }: Constellation, labels: Uint16Array | null, pairs: number) {
   const square = new Float64Array(pairs)
   const weight = new Float64Array(pairs)
   let at = 0
   for (let i = 1; i < order; i++) {
     for (let j = 0; j < i; j++) {
       square[at] = squareOf(points, i * dimensions, j * dimensions, dimensions)
-      weight[at++] = probabilities ? probabilities[i]! + probabilities[j]! : 2 / order
+      const bits = labels ? onesIn[labels[i]! ^ labels[j]!]! : 1
+      weight[at++] = bits * (probabilities ? probabilities[i]! + probabilities[j]! : 2 / order)
     }
   }
   return { square, weight }
@@ -81,7 +84,7 @@ const binOf = (square: number): number => {
 /** By bin from the first on, four each: Σ w·uⁿ for n = 0 … 3, u from −1 to 1 across the bin. */
 interface Bins { first: number, moments: Float64Array }
 
-function binned({ order, dimensions, points, peakEnergy, ...constellation }: Constellation, least: number): Bins {
+function binned({ order, dimensions, points, peakEnergy, ...constellation }: Constellation, labels: Uint16Array | null, least: number): Bins {
   const first = binOf(least) - 1
   const moments = new Float64Array(4 * (binOf(4 * peakEnergy) + 2 - first))
   const p = constellation.probabilities ?? new Float64Array(order).fill(1 / order)
@@ -90,7 +93,7 @@ function binned({ order, dimensions, points, peakEnergy, ...constellation }: Con
       const at = 4 * (binOf(squareOf(points, i * dimensions, j * dimensions, dimensions)) - first)
       // How far into the bin: the mantissa's other bits.
       const u = ((words[upper]! & rest) * lowerWord + words[1 - upper]!) / halfBin - 1
-      const weight = p[i]! + p[j]!
+      const weight = (p[i]! + p[j]!) * (labels ? onesIn[labels[i]! ^ labels[j]!]! : 1)
       moments[at]! += weight
       moments[at + 1]! += weight * u
       moments[at + 2]! += weight * u * u

@@ -54,7 +54,11 @@ function pairsOf(constellation: Constellation): PairDistances {
  */
 export function serAllPairs(constellation: Constellation, n0: number): number {
   requireNoiseDensity(n0)
-  const { least, square, weight } = pairsOf(constellation)
+  return sumOverPairs(pairsOf(constellation), n0)
+}
+
+/** Σ w·Q(d/√(2·N0)) over pairs. */
+export function sumOverPairs({ least, square, weight }: PairDistances, n0: number): number {
   const farthest = least + 4 * n0 * negligibleExponent
   let sum = 0
   for (let n = 0; n < square.length; n++) {
