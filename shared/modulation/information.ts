@@ -1,5 +1,5 @@
 import type { Constellation } from './constellation'
-import { ModulationError } from './errors'
+import { ModulationError, requireNoiseDensity } from './errors'
 import type { Estimate } from './estimate'
 import { highOf, isInterval, lowOf, valueOf } from './estimate'
 import { planeEquivocation } from './information-plane'
@@ -64,7 +64,7 @@ export function ratesOf(
   }
   const sources = informationSources(constellation, withBits)
   return Array.from(n0s, (n0) => {
-    if (!(n0 > 0 && n0 < Infinity)) throw new ModulationError('A noise density is a number above 0.', ['n0'])
+    requireNoiseDensity(n0)
     return remaining(constellation.entropy, sources.map(source => equivocation(source, n0, withBits, simulation)))
   })
 }

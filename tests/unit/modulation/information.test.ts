@@ -93,7 +93,7 @@ describe('mutual information', () => {
     expect(valueOf(mutualInformation(constellation, 0.01))).toBeCloseTo(2, 8)
   })
   it('refuses a noise density of 0', () => {
-    expect(() => mutualInformation(generate('psk', { order: 4 }), 0)).toThrow('A noise density is a number above 0.')
+    expect(() => mutualInformation(generate('psk', { order: 4 }), 0)).toThrow('The noise density N0 is a finite number above 0.')
   })
 })
 
