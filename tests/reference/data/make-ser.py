@@ -130,6 +130,22 @@ def unequal(seed, count):
     return [w / sum(weights) for w in weights]
 
 
+def hexagonal(rows, step):
+    return [[step * (2 * a + b % 2) / 2, step * b * math.sqrt(3) / 2] for b in range(len(rows)) for a in range(rows[b])]
+
+
+def cocircular(seed, count):
+    rng = random.Random(seed)
+    angles = sorted(rng.uniform(0, 2 * math.pi) for _ in range(count))
+    return [[math.cos(angle), math.sin(angle)] for angle in angles]
+
+
+def clustered(seed, clusters, each, spread):
+    rng = random.Random(seed)
+    centres = [[rng.uniform(-1, 1), rng.uniform(-1, 1)] for _ in range(clusters)]
+    return [[x + rng.gauss(0, spread), y + rng.gauss(0, spread)] for x, y in centres for _ in range(each)]
+
+
 SETS = [
     ('binary on a line', [[-1.0], [1.0]], None),
     ('five unequal gaps on a line', [[0.3], [-2.0], [1.1], [5.0], [-0.25]], [0.1, 0.2, 0.3, 0.15, 0.25]),
@@ -151,6 +167,28 @@ SETS = [
     ('a nearly coincident pair', scattered(5, 6) + [[0.5, 0.5], [0.5 + 1e-7, 0.5 + 2e-7]], None),
     ('far from the origin', [[x + 1e5, y - 3e5] for x, y in scattered(6, 8)], None),
     ('a thin rectangle', [[0.0, 0.0], [4.0, 0.0], [4.0, 0.01], [0.0, 0.01]], None),
+    ('two on a line, unequal probabilities', [[0.1], [0.7]], [0.9, 0.1]),
+    ('sixteen equal gaps on a line', [[2 * i - 15.0] for i in range(16)], None),
+    ('gaps that double on a line', [[float(2 ** i)] for i in range(10)], None),
+    ('three points, obtuse', [[0.0, 0.0], [2.0, 0.3], [4.0, 0.0]], None),
+    ('three points, right-angled', [[0.0, 0.0], [3.0, 0.0], [0.0, 4.0]], None),
+    ('a kite', [[0.0, 1.0], [-0.7, 0.0], [0.7, 0.0], [0.0, -3.0]], None),
+    ('a parallelogram', [[0.0, 0.0], [2.0, 0.1], [2.7, 1.3], [0.7, 1.2]], None),
+    ('nine cocircular at random angles', cocircular(9, 9), None),
+    ('twelve cocircular and their centre', cocircular(10, 12) + [[0.0, 0.0]], None),
+    ('collinear on the horizontal', [[0.5 * k, 2.0] for k in range(9)], unequal(7, 9)),
+    ('collinear on the vertical', [[-1.0, k ** 1.5] for k in range(7)], None),
+    ('hexagonal, three rows', hexagonal([4, 5, 4], 1.0), None),
+    ('hexagonal, five rows, turned', turned(hexagonal([4, 4, 4, 4, 4], 0.4), 0.3), None),
+    ('5 x 5 grid', grid(5, 5, 0.5), None),
+    ('6 x 3 grid, unequal probabilities', grid(6, 3, 0.25), unequal(8, 18)),
+    ('two rings in phase', circle(6, 1, 0) + circle(6, 2.1, 0), None),
+    ('4+12+16 at 2.84, 5.27', circle(4, 1, math.pi / 4) + circle(12, 2.84, math.pi / 12) + circle(16, 5.27, 0), None),
+    ('three clusters', clustered(11, 3, 5, 0.05), None),
+    ('an offset mean', [[x + 40, y + 9] for x, y in grid(4, 4, 0.5)], None),
+    ('two nearly coincident pairs', scattered(12, 5) + [[0.2, 0.2], [0.2 + 3e-6, 0.2], [-0.4, 0.1], [-0.4, 0.1 + 2e-6]], None),
+    ('an outlier on an axis', grid(3, 3, 0.3) + [[-3e5, 0.0]], None),
+    ('thirty at random', scattered(13, 30), None),
 ]
 # d_min/sqrt(2 N0): from error rates near 1 to about 1e-30.
 ARGUMENTS = [0.02, 0.3, 2.0, 6.0, 11.4]

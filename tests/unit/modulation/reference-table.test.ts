@@ -17,9 +17,9 @@ const tolerance = 1e-9
 const relativeError = (value: number, digits: string) => Math.abs(value / Number(digits) - 1)
 
 describe('the committed table of 30-digit error rates', () => {
-  it('has at least 60 cases, from above 0.9 to below 1e-29', () => {
+  it('has at least 200 cases, from above 0.9 to below 1e-29', () => {
     const rates = table.flatMap(entry => entry.rates.map(rate => Number(rate.serExact)))
-    expect(rates.length).toBeGreaterThanOrEqual(60)
+    expect(rates.length).toBeGreaterThanOrEqual(200)
     expect(Math.max(...rates)).toBeGreaterThan(0.9)
     expect(Math.min(...rates)).toBeLessThan(1e-29)
   })
