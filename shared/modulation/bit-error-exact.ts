@@ -19,8 +19,7 @@ const negligible = 1e-10
  */
 export function berExactCurve(geometry: Geometry, n0s: ArrayLike<number>): Float64Array {
   const { constellation } = geometry
-  const words = labelWords(constellation)
-  if (constellation.dimensions > 2) throw new ModulationError('The exact bit error rate is offered for one and two dimensions.', ['dimensions'])
+  const words = requireExactBits(geometry)
   const falling = Int32Array.from({ length: n0s.length }, (_, s) => s).sort((a, b) => n0s[b]! - n0s[a]!)
   falling.forEach(s => requireNoiseDensity(n0s[s]!))
   const densities = Float64Array.from(falling, s => n0s[s]!)
@@ -33,6 +32,16 @@ export function berExactCurve(geometry: Geometry, n0s: ArrayLike<number>): Float
   const result = new Float64Array(n0s.length)
   falling.forEach((s, n) => result[s] = sums[n]! / bits)
   return result
+}
+
+/**
+ * The labels as numbers of a constellation that has an exact bit error rate.
+ * @throws ModulationError with path ['labels'] when there are none, ['dimensions'] for more than two
+ */
+export function requireExactBits({ constellation }: Geometry): Uint16Array {
+  const words = labelWords(constellation)
+  if (constellation.dimensions <= 2) return words
+  throw new ModulationError('The exact bit error rate is offered for one and two dimensions: use the bound over all pairs.', ['dimensions'])
 }
 
 /**

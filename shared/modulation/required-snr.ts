@@ -1,3 +1,7 @@
+import { bracketedRoot } from './bracketed-root'
+import { bitErrorRates } from './bit-error'
+import type { BitErrorKind } from './bit-error'
+import { berExactCurve, requireExactBits } from './bit-error-exact'
 import { fromDecibels } from './decibels'
 import { ModulationError } from './errors'
 import { qInverse } from './gaussian'
@@ -7,52 +11,122 @@ import type { SymbolErrorKind } from './symbol-error'
 
 /** An error rate to invert: one of the core's, or any function of N0 with the energy its SNR axis refers to. */
 export type ErrorCurve
-  = | { geometry: Geometry, kind: SymbolErrorKind }
-    | {
-    /** error rate at noise density N0 */
-      rate: (n0: number) => number
-      /** Es, signal units squared */
-      meanEnergy: number
-      /** whether the rate is known never to rise with the SNR; otherwise the axis is searched from above */
-      monotone?: boolean
-    }
+  = | { geometry: Geometry, kind: SymbolErrorKind | BitErrorKind }
+    | GivenCurve
+
+interface GivenCurve {
+  /** error rate at noise density N0 */
+  rate: (n0: number) => number
+  /** Es, signal units squared */
+  meanEnergy: number
+  /** whether the rate is known never to rise with the SNR; otherwise the axis is searched from above */
+  monotone?: boolean
+}
+
+/** What an error rate needs to meet a target. */
+export interface RequiredSnr {
+  /** the smallest Es/N0 above which the rate stays at or below the target, dB */
+  esN0Db: number
+  /** how often the curve crosses the target, up or down, as far as the steps of the search tell; 1 for a curve that falls throughout */
+  crossings: number
+  /** the rate that is left at the highest SNR, where the curve no longer falls; null without such a floor */
+  floor: number | null
+}
+
+const rates = { ...symbolErrorRates, ...bitErrorRates }
 
 /** Range of the search, dB. */
 const lowest = -30
 const highest = 90
-/** Step of the search from above for curves that may rise again, dB. */
+/** Step of the search for curves that may rise again, dB; wider ranges of a bit error rate take this many steps. */
 const scanStep = 0.25
-/** Half of what the answer may be wrong by, dB. */
-const tolerance = 2e-10
+const scanSteps = 48
+/** Room about a range that bounds give, so that rounding does not push the crossing out of it, dB. */
+const room = 0.01
+/** A curve that falls by less than this factor over the last decibels has a floor. */
+const flat = 1.01
+const flatSpan = 6
 
 /**
- * The smallest Es/N0 above which an error rate stays at or below a target.
- * The logarithm of an error rate is nearly a straight line over the SNR itself (not in dB), so that secants there,
- * kept inside a bracket, need few steps.
- * @param curve what error rate
- * @param target above 0 and below 1
+ * The smallest Es/N0 above which an error rate stays at or below a target; as requiredSnr.
  * @returns Es/N0 in dB, to 1e-9 dB, from −30 to 90
- * @throws ModulationError with path ['target'] when the curve misses the target at 90 dB or meets it from −30 dB on
- * @see methods §4
  */
 export function requiredEsN0Db(curve: ErrorCurve, target: number): number {
+  return solve(curve, target, false).esN0Db
+}
+
+/**
+ * The smallest Es/N0 above which an error rate stays at or below a target, how often the curve crosses it, and its floor.
+ * @param curve what error rate
+ * @param target above 0 and below 1
+ * @returns Es/N0 to 1e-9 dB, from −30 to 90
+ * @throws ModulationError with path ['target'] when the curve misses the target at 90 dB or meets it from −30 dB on;
+ * ['labels'] when a bit error rate is asked for without labels
+ * @see methods §4
+ */
+export function requiredSnr(curve: ErrorCurve, target: number): RequiredSnr {
+  return solve(curve, target, true)
+}
+
+function solve(curve: ErrorCurve, target: number, counted: boolean): RequiredSnr {
   if (!(target > 0 && target < 1)) throw new ModulationError('A target error rate is above 0 and below 1.', ['target'])
+  if ('geometry' in curve && curve.kind === 'berExact') return solveExactBits(curve.geometry, target)
   const { rate, meanEnergy, monotone, guess } = described(curve, target)
   const excess = (db: number) => Math.log(rate(meanEnergy / fromDecibels(db)) / target)
-  if (excess(highest) > 0) {
-    throw new ModulationError('The error rate stays above this target up to 90 dB Es/N0: enter a larger target.', ['target'])
+  const floor = counted && !('geometry' in curve) ? floorOf(curve) : null
+  if (excess(highest) > 0) throw missed('geometry' in curve ? null : floorOf(curve))
+  if (monotone) {
+    if (!(excess(lowest) > 0)) throw alwaysMet()
+    return { esN0Db: bracketedRoot(excess, lowest, highest, guess), crossings: 1, floor }
   }
-  let low = lowest
-  let high = highest
-  if (!monotone) {
-    low = highest - scanStep
-    while (low > lowest && excess(low) <= 0) low -= scanStep
-    high = low + scanStep
+  let last = NaN
+  let crossings = 0
+  for (let db = highest - scanStep, met = true; db >= lowest && (counted || crossings === 0); db -= scanStep) {
+    if ((excess(db) <= 0) === met) continue
+    if (crossings === 0) last = db
+    crossings++
+    met = !met
   }
-  if (!(excess(low) > 0)) {
-    throw new ModulationError('The error rate meets this target from −30 dB Es/N0 on: enter a smaller target.', ['target'])
-  }
-  return bracketed(excess, low, high, guess)
+  if (crossings === 0) throw alwaysMet()
+  return { esN0Db: bracketedRoot(excess, last, last + scanStep, NaN), crossings, floor }
+}
+
+/**
+ * A symbol in error has from one to k wrong bits: the exact bit error rate lies between 1/k of the symbol error rate and all of it, which
+ * falls throughout. So it crosses the target only between the places where those two do, and there it may rise.
+ */
+function solveExactBits(geometry: Geometry, target: number): RequiredSnr {
+  requireExactBits(geometry)
+  const { meanEnergy, bitsPerSymbol } = geometry.constellation
+  const curve = { geometry, kind: 'serExact' } as const
+  const rateAt = (db: number) => symbolErrorRates.serExact(geometry, meanEnergy / fromDecibels(db))
+  const bitRates = (dbs: number[]) => berExactCurve(geometry, dbs.map(db => meanEnergy / fromDecibels(db)))
+  const end = rateAt(highest) > target ? highest : rateAt(lowest) <= target ? lowest : requiredEsN0Db(curve, target) + room
+  const most = target * bitsPerSymbol
+  const begin = most >= 1 || rateAt(lowest) <= most ? lowest : rateAt(highest) > most ? highest : requiredEsN0Db(curve, most) - room
+  const steps = Math.max(1, Math.min(scanSteps, Math.ceil((end - begin) / scanStep)))
+  const places = Array.from({ length: steps + 1 }, (_, n) => begin + (end - begin) * n / steps)
+  const met = [...bitRates(places)].map(rate => rate <= target)
+  if (!met[steps]) throw missed(null)
+  const crossings = met.filter((now, n) => n > 0 && now !== met[n - 1]).length
+  if (crossings === 0) throw alwaysMet()
+  const last = met.lastIndexOf(false)
+  const excess = (db: number) => Math.log(bitRates([db])[0]! / target)
+  return { esN0Db: bracketedRoot(excess, places[last]!, places[last + 1]!, NaN), crossings, floor: null }
+}
+
+function missed(floor: number | null): ModulationError {
+  const left = floor === null ? '' : ` It has a floor at ${floor.toExponential(2)}.`
+  return new ModulationError(`The error rate stays above this target up to 90 dB Es/N0: enter a larger target.${left}`, ['target'])
+}
+
+function alwaysMet(): ModulationError {
+  return new ModulationError('The error rate meets this target from −30 dB Es/N0 on: enter a smaller target.', ['target'])
+}
+
+function floorOf({ rate, meanEnergy }: GivenCurve): number | null {
+  const left = rate(meanEnergy / fromDecibels(highest))
+  return left > 0 && rate(meanEnergy / fromDecibels(highest - flatSpan)) < flat * left ? left : null
 }
 
 function described(curve: ErrorCurve, target: number) {
@@ -62,29 +136,5 @@ function described(curve: ErrorCurve, target: number) {
   // Minimum-distance decisions: every term falls with the SNR. The approximation's own answer is close to all of them.
   const x = target < nearestMean / 2 ? qInverse(target / nearestMean) : 0.1
   const guess = 10 * Math.log10(2 * meanEnergy * x * x / (minimumDistance * minimumDistance))
-  return { rate: (n0: number) => symbolErrorRates[kind](geometry, n0), meanEnergy, monotone: true, guess }
-}
-
-/** Root of a function that is positive at `low` and not at `high`. */
-function bracketed(excess: (db: number) => number, low: number, high: number, guess: number): number {
-  let db = guess > low && guess < high ? guess : (low + high) / 2
-  let before: { snr: number, value: number } | null = null
-  for (let step = 0; step < 200; step++) {
-    const value = excess(db)
-    if (value === 0) return db
-    if (value > 0) low = db
-    else high = db
-    if (high - low <= tolerance) break
-    const snr = fromDecibels(db)
-    let following = NaN
-    if (before && Number.isFinite(value)) {
-      following = 10 * Math.log10(snr - value * (snr - before.snr) / (value - before.value))
-    } else if (Number.isFinite(value)) {
-      following = db + 1e-3 * Math.sign(value)
-    }
-    before = Number.isFinite(value) ? { snr, value } : null
-    if (Math.abs(following - db) <= tolerance) return following
-    db = following > low && following < high ? following : (low + high) / 2
-  }
-  return (low + high) / 2
+  return { rate: (n0: number) => rates[kind](geometry, n0), meanEnergy, monotone: true, guess }
 }
