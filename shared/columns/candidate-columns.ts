@@ -1,5 +1,6 @@
 import { parseFraction, numberEntry } from './entry'
 import { parseNumberList, numberListText, ringsText } from './entry-lists'
+import type { CandidateInputs } from '../schemas/candidates'
 import type { InputColumn } from './column'
 import { choiceInput, numberInput, textInput, unusedParameter } from './make'
 import { formatNumber } from './format'
@@ -20,13 +21,13 @@ export const family = choiceInput('family', familyChoices, {
 export const order: InputColumn = {
   ...numberInput('order', {
     id: 'order', title: 'M', group,
-    meaning: 'Order: number of points of the constellation; APSK and custom sets count theirs.',
+    meaning: 'Order: number of points of the constellation; APSK sets, products and custom points count theirs.',
   }, { firstOpening: true, width: 8, format: 'integer' }),
   unused: inputs => inputs.family === 'entered' ? null : unusedParameter('order', 'an order of its own; its points are counted')(inputs),
   value: ({ inputs, values }) => countsItsPoints(inputs.family) ? values?.order ?? null : inputs.order,
 }
 
-const countsItsPoints = (id: string) => id === 'apsk' || id === 'custom'
+const countsItsPoints = (id: CandidateInputs['family']) => id === 'apsk' || id === 'custom' || id === 'product'
 
 export const rings: InputColumn = {
   id: 'rings', title: 'Rings/ratios', group, kind: 'input', type: 'list', fields: ['rings', 'ratios'],
@@ -59,8 +60,8 @@ export const codeRate: InputColumn = {
 
 export const basis = choiceInput('basis', basisChoices, {
   id: 'basis', title: 'Basis', group,
-  meaning: 'What the required SNR rests on: uncoded (from the exact error rate), or entered with its source.',
-}, { firstOpening: true, width: 11 })
+  meaning: 'What the required SNR rests on: uncoded (from the error rate), a rate threshold with the decoder\'s gap, or entered with its source.',
+}, { firstOpening: true, width: 15 })
 
 export const note = textInput('note', { id: 'note', title: 'Note', group, meaning: 'Anything worth keeping with the row.' }, { firstOpening: true, width: 30 })
 

@@ -14,7 +14,8 @@ export type CellValue = number | string | null
 
 /** Headings under which columns are chosen, in the order in which they are offered. */
 export const columnGroups = [
-  'Candidate', 'Verdict', 'Required SNR', 'Amplifier and link', 'Rate and bandwidth', 'Geometry', 'Error rates', 'Signal and model',
+  'Candidate', 'Verdict', 'Required SNR', 'Amplifier and link', 'Rate and bandwidth', 'Geometry', 'Error rates', 'Information rates',
+  'Labels, probabilities, decisions', 'Channel and imperfections', 'More dimensions', 'Signal and model',
 ] as const
 export type ColumnGroup = (typeof columnGroups)[number]
 

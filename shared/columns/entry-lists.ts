@@ -60,7 +60,7 @@ export function parseSnrRange(text: string): Entry {
 }
 
 /** A list of numbers, such as ring phases; nothing typed leaves it to the family. */
-export const parseNumberList = (field: 'phasesDeg' | 'ratios') => (text: string): Entry => {
+export const parseNumberList = (field: 'phasesDeg' | 'ratios' | 'offset') => (text: string): Entry => {
   if (text.trim() === '') return { change: { [field]: null } }
   const numbers = pieces(text).map(parseNumber)
   return numbers.some(n => n === null)

@@ -1,9 +1,13 @@
 import * as candidate from './candidate-columns'
+import * as channel from './channel-columns'
+import * as dimension from './dimension-columns'
 import * as error from './error-columns'
 import * as geometry from './geometry-columns'
+import * as label from './label-columns'
 import * as link from './link-columns'
 import * as rate from './rate-columns'
 import * as required from './required-columns'
+import * as threshold from './threshold-columns'
 import * as signal from './signal-columns'
 import * as verdict from './verdict-columns'
 import type { Column } from './column'
@@ -57,6 +61,9 @@ export const columns: readonly Column[] = [
   required.requiredNearest,
   required.gapToCapacity,
   required.evm,
+  threshold.rateKind,
+  threshold.decoderGap,
+  threshold.decoderGapSource,
   required.enteredEsN0,
   required.enteredNetBits,
   required.enteredSource,
@@ -74,6 +81,21 @@ export const columns: readonly Column[] = [
   geometry.asymptoticEfficiency,
   geometry.dimensions,
   error.serAllPairs,
+  label.labelling,
+  label.labels,
+  label.probabilityRule,
+  label.shapedEntropy,
+  label.probabilities,
+  label.decision,
+  channel.channel,
+  channel.ricianK,
+  channel.nakagamiM,
+  channel.branches,
+  channel.phaseError,
+  channel.frameSymbols,
+  dimension.lattice,
+  dimension.offset,
+  dimension.factors,
   signal.normalisation,
   signal.spacing,
   signal.points,

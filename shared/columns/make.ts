@@ -1,5 +1,7 @@
 import type { Candidate, CandidateField, CandidateInputs } from '../schemas/candidates'
 import type { CandidateValues } from '../schemas/values'
+import { valueOf } from '../modulation/estimate'
+import type { Estimate } from '../modulation/estimate'
 import { familyOf } from '../modulation/families'
 import type { FamilyParameter } from '../modulation/families'
 import type { CellValue, ColumnContext, ComputedColumn, InputColumn } from './column'
@@ -51,6 +53,10 @@ export const unusedParameter = (parameter: FamilyParameter, what: string) => ({ 
   return familyOf(family).parameters.includes(parameter) ? null : `${titleIn(familyChoices, family)} does not use ${what}.`
 }
 
+/** Says that an entered scheme has no points which an input could be about. */
+export const unusedByEntered = (what: string) => ({ family }: Pick<CandidateInputs, 'family'>): string | null =>
+  family === 'entered' ? `An entered scheme has no ${what}.` : null
+
 type Computed = Pick<ComputedColumn, Shared | 'method' | 'formula' | 'source' | 'tolerance'>
   & Partial<Pick<ComputedColumn, 'firstOpening' | 'width' | 'round' | 'format' | 'value' | 'type'>>
   & { lines?: (values: CandidateValues, row: Candidate, context: ColumnContext) => string[] }
@@ -62,14 +68,14 @@ export const computed = (about: Computed & Pick<ComputedColumn, 'value' | 'forma
   lines: (row, context) => row.values && about.lines ? about.lines(row.values, row, context) : [],
 })
 
-type NumberKey = { [K in keyof CandidateValues]: CandidateValues[K] extends number | null ? K : never }[keyof CandidateValues]
+type NumberKey = { [K in keyof CandidateValues]: CandidateValues[K] extends Estimate | null ? K : never }[keyof CandidateValues]
 
 /** A computed column that shows one of the row's values, divided by `per` to reach the column's unit. */
 export const valueColumn = (key: NumberKey, format: NumberFormat, about: Computed, per = 1): ComputedColumn =>
   computed({ format, ...about, value: row => scaled(row.values?.[key] ?? null, per) })
 
-const scaled = (value: CellValue, per: number) => typeof value === 'number' ? value / per : value
+const scaled = (value: Estimate | null, per: number): CellValue => value === null ? null : valueOf(value) / per
 
 /** Numbers inside the lines of an explanation: a dash where the row has none. */
-export const shown = (value: number | null | undefined, format: NumberFormat = '0.00', round: 'nearest' | 'down' = 'nearest') =>
-  value === null || value === undefined ? '—' : formatNumber(value, format, round)
+export const shown = (value: Estimate | null | undefined, format: NumberFormat = '0.00', round: 'nearest' | 'down' = 'nearest') =>
+  value === null || value === undefined ? '—' : formatNumber(valueOf(value), format, round)
