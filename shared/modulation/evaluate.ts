@@ -2,15 +2,17 @@ import type { Constellation } from './constellation'
 import { paprDb } from './constellation'
 import { fromDecibels } from './decibels'
 import { ModulationError } from './errors'
+import { evaluationCurves } from './evaluation-curves'
+import type { EvaluationCurves, EvaluationQuantity } from './evaluation-curves'
 import { familyOf, generate } from './families'
 import type { FamilyParameters } from './families'
 import { analyse } from './geometry'
+import type { Geometry } from './geometry'
 import { requiredEsN0Db } from './required-snr'
 import { symbolErrorRates } from './symbol-error'
 import type { SymbolErrorKind } from './symbol-error'
-import { serExactCurve } from './symbol-error-exact'
 
-export const evaluationQuantities = Object.keys(symbolErrorRates) as SymbolErrorKind[]
+export const evaluationQuantities = Object.keys(evaluationCurves) as EvaluationQuantity[]
 
 /** What to compute of one constellation, without a study around it. */
 export interface EvaluationRequest {
@@ -34,14 +36,15 @@ export interface Evaluation {
   paprDb: number
   minimumDistance: number
   neighbours: { relevantMean: number, nearestMean: number, relevant: number[][] }
-  curves: { esN0Db: number[] } & Partial<Record<SymbolErrorKind, number[]>>
+  curves: { esN0Db: number[] } & Partial<EvaluationCurves>
+  /** of the error rates among the quantities */
   requiredEsN0Db?: Partial<Record<SymbolErrorKind, number>>
 }
 
 const defaultQuantities: SymbolErrorKind[] = ['serUnion', 'serNearest', 'serExact']
 
 /**
- * Evaluates a constellation: geometry, error-rate curves and required Es/N0.
+ * Evaluates a constellation: geometry, curves of error and information rates, and required Es/N0.
  * @throws ModulationError for every input that is not allowed, with its path in the request
  */
 export function evaluate(request: EvaluationRequest): Evaluation {
@@ -57,9 +60,10 @@ export function evaluate(request: EvaluationRequest): Evaluation {
 
   const curves: Evaluation['curves'] = { esN0Db: [...request.esN0Db] }
   const required: Partial<Record<SymbolErrorKind, number>> = {}
-  for (const kind of quantities) {
-    curves[kind] = kind === 'serExact' ? [...serExactCurve(geometry, n0s)] : n0s.map(n0 => symbolErrorRates[kind](geometry, n0))
-    if (target) required[kind] = within(() => ['target', 'value'], () => requiredEsN0Db({ geometry, kind }, target.value))
+  for (const quantity of quantities) {
+    within(path => ['constellation', ...path], () => addCurve(curves, quantity, geometry, n0s))
+    if (!target || !isErrorRate(quantity)) continue
+    required[quantity] = within(() => ['target', 'value'], () => requiredEsN0Db({ geometry, kind: quantity }, target.value))
   }
   const { offsets, neighbours, relevantMean, nearestMean, minimumDistance } = geometry
   const { order, dimensions, bitsPerSymbol, meanEnergy, peakEnergy } = constellation
@@ -74,7 +78,13 @@ export function evaluate(request: EvaluationRequest): Evaluation {
   }
 }
 
-function checkedQuantities(quantities: readonly string[]): SymbolErrorKind[] {
+function addCurve<Q extends EvaluationQuantity>(curves: Partial<EvaluationCurves>, quantity: Q, geometry: Geometry, n0s: readonly number[]): void {
+  curves[quantity] = evaluationCurves[quantity](geometry, n0s)
+}
+
+const isErrorRate = (quantity: EvaluationQuantity): quantity is SymbolErrorKind => quantity in symbolErrorRates
+
+function checkedQuantities(quantities: readonly string[]): EvaluationQuantity[] {
   return quantities.map((quantity, n) => {
     const known = evaluationQuantities.find(kind => kind === quantity)
     if (!known) throw new ModulationError(`A quantity is one of ${evaluationQuantities.join(', ')}.`, ['quantities', n])

@@ -25,6 +25,12 @@ describe('an evaluation', () => {
     expect(Object.keys(evaluate({ ...request, quantities: undefined }).curves)).toEqual(['esN0Db', 'serUnion', 'serNearest', 'serExact'])
   })
   it('has no required Es/N0 without a target', () => expect('requiredEsN0Db' in evaluate({ ...request, target: undefined })).toBe(false))
+  it('has information rates, which need no target', () => {
+    const rates = evaluate({ ...request, quantities: ['mutualInformation', 'bitMetricRate', 'serExact'] })
+    expect(rates.curves.mutualInformation!.every(rate => typeof rate === 'number' && rate > 1.99 && rate <= 2)).toBe(true)
+    expect(rates.curves.bitMetricRate).toHaveLength(2)
+    expect(Object.keys(rates.requiredEsN0Db!)).toEqual(['serExact'])
+  })
   it('gives families unit mean energy', () => {
     expect(evaluate({ constellation: { family: 'apsk', rings: [4, 12], ratios: [3.15] }, esN0Db: [10] }).meanEnergy).toBeCloseTo(1, 14)
   })
@@ -39,6 +45,7 @@ describe('a refused evaluation names the field', () => {
     ['three dimensions', { constellation: { family: 'custom', points: [[0, 1, 2], [0, 1, 3]] } }, ['constellation', 'points']],
     ['quantity', { quantities: ['serExact', 'berExact'] }, ['quantities', 1]],
     ['SNR', { esN0Db: [1, NaN] }, ['esN0Db', 1]],
+    ['labels', { constellation: { family: 'custom', points }, quantities: ['bitMetricRate'] }, ['constellation', 'labels']],
     ['target', { target: { quantity: 'ser', value: 0.95 } }, ['target', 'value']],
   ]
   it.each(cases)('%s', (_, change, path) => {

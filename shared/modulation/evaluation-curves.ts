@@ -1,0 +1,26 @@
+import type { Estimate } from './estimate'
+import type { Geometry } from './geometry'
+import { ratesOf } from './information'
+import type { InformationRateKind } from './information'
+import { symbolErrorRates } from './symbol-error'
+import type { SymbolErrorKind } from './symbol-error'
+import { serExactCurve } from './symbol-error-exact'
+
+/** Curves by the names of the evaluation's quantities: a value for each noise density. */
+export type EvaluationCurves = Record<SymbolErrorKind, number[]> & Record<InformationRateKind, Estimate[]>
+export type EvaluationQuantity = keyof EvaluationCurves
+
+type CurveOf<Values> = (geometry: Geometry, n0s: readonly number[]) => Values
+
+const errorRate = (kind: SymbolErrorKind): CurveOf<number[]> => (geometry, n0s) => n0s.map(n0 => symbolErrorRates[kind](geometry, n0))
+const informationRate = (kind: InformationRateKind): CurveOf<Estimate[]> => (geometry, n0s) => ratesOf(geometry.constellation, kind, n0s)
+
+/** All that can be asked of a constellation as a function of the SNR. A new quantity is an entry here. */
+export const evaluationCurves: { readonly [Q in EvaluationQuantity]: CurveOf<EvaluationCurves[Q]> } = {
+  serUnion: errorRate('serUnion'),
+  serAllPairs: errorRate('serAllPairs'),
+  serNearest: errorRate('serNearest'),
+  serExact: (geometry, n0s) => [...serExactCurve(geometry, n0s)],
+  mutualInformation: informationRate('mutualInformation'),
+  bitMetricRate: informationRate('bitMetricRate'),
+}
