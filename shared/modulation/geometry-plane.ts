@@ -14,7 +14,7 @@ const rounding = 8 * Number.EPSILON
  * A triangle no higher than this part of the largest coordinate has its apex on its longest side, as far as the coordinates
  * can say: rows of a turned lattice are straight only to rounding. The longest side would be a facet that begins some 1e15 away.
  */
-const flatness = 8 * Number.EPSILON
+export const flatness = 8 * Number.EPSILON
 
 /**
  * Facets of the Voronoi cells of planar points: the Delaunay edges whose dual edge is longer than 1e-9 of d_min.
