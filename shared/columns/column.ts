@@ -1,6 +1,8 @@
 import type { MethodId } from '../methods'
+import type { Interval } from '../modulation/estimate'
 import type { Candidate, CandidateChange, CandidateField, CandidateInputs } from '../schemas/candidates'
 import type { Requirements } from '../schemas/requirements'
+import { formatEnds } from './format'
 import type { NumberFormat, Rounding } from './format'
 
 /** What a column may look at beside its row. */
@@ -71,6 +73,8 @@ export interface ComputedColumn extends Base {
   formula: string
   source: string
   tolerance: string
+  /** where only an interval is known, in the column's unit: `value` is then its most likely number; null where the number is exact */
+  interval?: (row: Candidate, context: ColumnContext) => Interval | null
   /** the formula with the row's values put in, a line at a time */
   lines: (row: Candidate, context: ColumnContext) => string[]
 }
@@ -80,8 +84,15 @@ export type Column = InputColumn | ComputedColumn
 /** Title with its unit, as headers of the grid and of exports read. */
 export const headerOf = (column: Pick<Column, 'title' | 'unit'>) => column.unit ? `${column.title}, ${column.unit}` : column.title
 
+/** How exact a number is of which only an interval is known. */
+const estimated = 'an estimate, by seeded simulation between the bounds; its 95 % interval'
+
 /** Why a computed cell holds what it holds; null while there is nothing to explain. */
 export function whyOf(column: Column, row: Candidate, context: ColumnContext): Why | null {
   if (column.kind === 'input' || row.values === null) return null
-  return { formula: column.formula, lines: column.lines(row, context), source: column.source, tolerance: column.tolerance }
+  const interval = column.interval?.(row, context) ?? null
+  return {
+    formula: column.formula, lines: column.lines(row, context), source: column.source,
+    tolerance: interval ? `${estimated}: ${formatEnds(interval, column.format)}${column.unit ? ` ${column.unit}` : ''}` : column.tolerance,
+  }
 }

@@ -1,11 +1,12 @@
 import { tolerances } from '../methods/tolerances'
+import type { Estimate } from '../modulation/estimate'
 import type { CandidateValues } from '../schemas/values'
 import { shown, valueColumn } from './make'
 
 const group = 'Error rates' as const
 const tolerance = tolerances.symbolError
 
-const at = (v: CandidateValues, value: number | null) => [
+const at = (v: CandidateValues, value: Estimate | null) => [
   `at the available Es/N0 of ${shown(v.availableEsN0Db)} dB: ${shown(value, '0.00e-0')}`,
 ]
 

@@ -1,3 +1,4 @@
+import type { Interval } from '../modulation/estimate'
 import { ceilToDigits, floorToDigits } from '../modulation/rounding'
 
 /**
@@ -12,9 +13,13 @@ const trueMinus = (text: string) => text.replace(/-/g, '−')
 
 const decimals: Partial<Record<NumberFormat, number>> = { '0.00': 2, '+0.00': 2, '0.0': 1, '0.000': 3, 'integer': 0 }
 
-const exponent = (value: number) => {
-  const [digits = '0', power = '0'] = value.toExponential(2).split('e')
-  return trueMinus(`${digits}e${Number(power)}`)
+const directed = (value: number, digits: number, round: Rounding) =>
+  round === 'down' ? floorToDigits(value, digits) : round === 'up' ? ceilToDigits(value, digits) : value
+
+const exponent = (value: number, round: Rounding) => {
+  const [before = '0', power = '0'] = value.toExponential(15).split('e')
+  const [digits = '0', carried = '0'] = directed(Number(before), 2, round).toExponential(2).split('e')
+  return trueMinus(`${digits}e${Number(power) + Number(carried)}`)
 }
 
 /** A fraction of small whole numbers where the value is one within 1e-9, such as 3/4 or 9/10; else its decimals. */
@@ -39,12 +44,23 @@ export function plain(value: number): string {
 export function formatNumber(value: number, format: NumberFormat, round: Rounding = 'nearest'): string {
   if (Number.isNaN(value)) return ''
   if (!Number.isFinite(value)) return value > 0 ? '∞' : '−∞'
-  if (format === '0.00e-0') return exponent(value)
+  if (format === '0.00e-0') return exponent(value, round)
   if (format === 'fraction') return fraction(value)
   const digits = decimals[format]
   if (digits === undefined) return plain(value)
-  const rounded = round === 'down' ? floorToDigits(value, digits) : round === 'up' ? ceilToDigits(value, digits) : value
+  const rounded = directed(value, digits, round)
   const text = Math.abs(rounded).toFixed(digits)
   const negative = rounded < 0 && Number(text) !== 0
   return `${negative ? '−' : format.startsWith('+') ? '+' : ''}${text}`
 }
+
+/** An interval's ends as a cell shows them, rounded away from its value so that it is never shown too narrow: 20.79…20.91. */
+export const formatEnds = ({ low, high }: Pick<Interval, 'low' | 'high'>, format: NumberFormat): string =>
+  `${formatNumber(low, format, 'down')}…${formatNumber(high, format, 'up')}`
+
+/** An estimate in a cell: its interval comes first, so that the digits of a column stand below each other. */
+export const formatEstimate = (interval: Interval, format: NumberFormat, round: Rounding = 'nearest'): string =>
+  `(${formatEnds(interval, format)}) ${formatNumber(interval.value, format, round)}`
+
+/** An estimate with all its digits: what copying gives. */
+export const plainEstimate = ({ value, low, high }: Interval): string => `${plain(value)} (${plain(low)}…${plain(high)})`

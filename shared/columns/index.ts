@@ -14,7 +14,7 @@ import type { Column } from './column'
 
 export { columnGroups, headerOf, whyOf } from './column'
 export type { CellValue, Column, ColumnContext, ColumnGroup, ComputedColumn, Entry, InputColumn, Preset, Why } from './column'
-export { formatNumber, plain } from './format'
+export { formatEstimate, formatNumber, plain, plainEstimate } from './format'
 export type { NumberFormat, Rounding } from './format'
 
 /**

@@ -1,12 +1,12 @@
 import type { Candidate, CandidateField, CandidateInputs } from '../schemas/candidates'
 import type { CandidateValues } from '../schemas/values'
-import { valueOf } from '../modulation/estimate'
-import type { Estimate } from '../modulation/estimate'
+import { isInterval, mapEstimate, valueOf } from '../modulation/estimate'
+import type { Estimate, Interval } from '../modulation/estimate'
 import { familyOf } from '../modulation/families'
 import type { FamilyParameter } from '../modulation/families'
 import type { CellValue, ColumnContext, ComputedColumn, InputColumn } from './column'
 import { choiceEntry, numberEntry, numberOf, numberText, textEntry, titleIn } from './entry'
-import { formatNumber } from './format'
+import { formatEnds, formatNumber } from './format'
 import type { NumberFormat } from './format'
 import { familyChoices } from './words'
 import type { Choice } from './words'
@@ -58,7 +58,7 @@ export const unusedByEntered = (what: string) => ({ family }: Pick<CandidateInpu
   family === 'entered' ? `An entered scheme has no ${what}.` : null
 
 type Computed = Pick<ComputedColumn, Shared | 'method' | 'formula' | 'source' | 'tolerance'>
-  & Partial<Pick<ComputedColumn, 'firstOpening' | 'width' | 'round' | 'format' | 'value' | 'type'>>
+  & Partial<Pick<ComputedColumn, 'firstOpening' | 'width' | 'round' | 'format' | 'value' | 'type' | 'interval'>>
   & { lines?: (values: CandidateValues, row: Candidate, context: ColumnContext) => string[] }
 
 /** A computed column; its lines are asked for only where the row has values. */
@@ -70,12 +70,30 @@ export const computed = (about: Computed & Pick<ComputedColumn, 'value' | 'forma
 
 type NumberKey = { [K in keyof CandidateValues]: CandidateValues[K] extends Estimate | null ? K : never }[keyof CandidateValues]
 
+/** A computed column of a number or an interval of the row. */
+export const estimateColumn = (
+  estimate: (row: Candidate, context: ColumnContext) => Estimate | null, about: Computed & Pick<ComputedColumn, 'format'>,
+): ComputedColumn => computed({
+  ...about,
+  value: (row, context): CellValue => {
+    const known = estimate(row, context)
+    return known === null ? null : valueOf(known)
+  },
+  interval: (row, context): Interval | null => {
+    const known = estimate(row, context)
+    return known !== null && isInterval(known) ? known : null
+  },
+})
+
 /** A computed column that shows one of the row's values, divided by `per` to reach the column's unit. */
 export const valueColumn = (key: NumberKey, format: NumberFormat, about: Computed, per = 1): ComputedColumn =>
-  computed({ format, ...about, value: row => scaled(row.values?.[key] ?? null, per) })
+  estimateColumn(({ values }) => {
+    const known = values?.[key] ?? null
+    return known === null || per === 1 ? known : mapEstimate(known, x => x / per)
+  }, { format, ...about })
 
-const scaled = (value: Estimate | null, per: number): CellValue => value === null ? null : valueOf(value) / per
-
-/** Numbers inside the lines of an explanation: a dash where the row has none. */
-export const shown = (value: Estimate | null | undefined, format: NumberFormat = '0.00', round: 'nearest' | 'down' = 'nearest') =>
-  value === null || value === undefined ? '—' : formatNumber(valueOf(value), format, round)
+/** Numbers inside the lines of an explanation: a dash where the row has none, the ends behind one of which only an interval is known. */
+export const shown = (value: Estimate | null | undefined, format: NumberFormat = '0.00', round: 'nearest' | 'down' = 'nearest') => {
+  if (value === null || value === undefined) return '—'
+  return formatNumber(valueOf(value), format, round) + (isInterval(value) ? ` (${formatEnds(value, format)})` : '')
+}

@@ -1,7 +1,9 @@
 import { tolerances } from '../methods/tolerances'
+import { highOf, isInterval, lowOf, valueOf } from '../modulation/estimate'
+import type { Estimate } from '../modulation/estimate'
 import type { CandidateValues } from '../schemas/values'
 import type { ColumnContext } from './column'
-import { computed, numberInput, shown, textInput, valueColumn } from './make'
+import { estimateColumn, numberInput, shown, textInput, valueColumn } from './make'
 import type { Candidate } from '../schemas/candidates'
 
 const group = 'Required SNR' as const
@@ -23,16 +25,17 @@ export const requiredEsN0 = valueColumn('requiredEsN0Db', '0.00', {
   lines: requiredLines,
 })
 
-const difference = (row: Candidate, { reference }: ColumnContext) => {
-  const [own, other] = [row.values?.requiredEsN0Db, reference?.values?.requiredEsN0Db]
-  return typeof own === 'number' && typeof other === 'number' ? own - other : null
+const difference = (row: Candidate, { reference }: ColumnContext): Estimate | null => {
+  const [own, other] = [row.values?.requiredEsN0Db ?? null, reference?.values?.requiredEsN0Db ?? null]
+  if (own === null || other === null) return null
+  const value = valueOf(own) - valueOf(other)
+  return isInterval(own) || isInterval(other) ? { value, low: lowOf(own) - highOf(other), high: highOf(own) - lowOf(other) } : value
 }
 
-export const delta = computed({
+export const delta = estimateColumn(difference, {
   id: 'delta', method: 'requiredSnr', title: 'Δ to reference', unit: 'dB', group, format: '+0.00', firstOpening: true, width: 19,
   meaning: 'Required Es/N0 minus that of the reference row; negative needs less.',
   formula: 'Δ = required Es/N0 − required Es/N0 of the reference', source: 'Methods §4', tolerance: tolerances.differenceDb,
-  value: difference,
   lines: (v, row, context) => context.reference
     ? [`${shown(v.requiredEsN0Db)} dB − ${shown(context.reference.values?.requiredEsN0Db)} dB (${context.reference.inputs.name}) = ${shown(difference(row, context), '+0.00')} dB`]
     : ['no row has the role of reference'],
@@ -86,7 +89,7 @@ export const gapToCapacity = valueColumn('gapToCapacityDb', '0.00', {
   id: 'gapToCapacity', method: 'capacity', title: 'Gap to capacity', unit: 'dB', group, width: 20,
   meaning: 'Required Es/N0 minus the one at which capacity equals the net bits per symbol.',
   formula: 'required − 10·log10((N/2)·(2^(2R/N) − 1))', source: 'Methods §5; Shannon 1948', tolerance,
-  lines: v => [`N = ${shown(v.dimensions, 'integer')}, R = ${shown(v.netBits, '0.000')}: ${shown(v.requiredEsN0Db)} dB − ${shown(v.requiredEsN0Db !== null && v.gapToCapacityDb !== null ? v.requiredEsN0Db - v.gapToCapacityDb : null)} dB = ${shown(v.gapToCapacityDb)} dB`],
+  lines: v => [`N = ${shown(v.dimensions, 'integer')}, R = ${shown(v.netBits, '0.000')}: ${shown(v.requiredEsN0Db)} dB − ${shown(v.requiredEsN0Db !== null && v.gapToCapacityDb !== null ? valueOf(v.requiredEsN0Db) - valueOf(v.gapToCapacityDb) : null)} dB = ${shown(v.gapToCapacityDb)} dB`],
 })
 
 export const evm = valueColumn('evmPercent', '0.00', {

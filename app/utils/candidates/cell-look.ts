@@ -1,7 +1,9 @@
 import type { Candidate } from '#shared/schemas/candidates'
 import type { CandidateValues } from '#shared/schemas/values'
-import { formatNumber, plain } from '#shared/columns'
+import { formatEstimate, formatNumber, plain, plainEstimate } from '#shared/columns'
 import type { Column, ColumnContext } from '#shared/columns'
+import { lowOf } from '#shared/modulation/estimate'
+import type { Interval } from '#shared/modulation/estimate'
 import type { CellSave } from './cell-saves'
 
 /** What a cell is drawn from. */
@@ -21,6 +23,10 @@ const lacking = ({ row, column, stale }: CellView): 'computing' | 'failed' | nul
   return stale || row.state === 'computing' ? 'computing' : row.state === 'failed' ? 'failed' : null
 }
 
+/** Where only an interval of the cell's number is known: that. */
+export const intervalOf = ({ row, column, context }: Pick<CellView, 'row' | 'column' | 'context'>): Interval | null =>
+  column.kind === 'computed' ? column.interval?.(row, context) ?? null : null
+
 /** What the cell says: its number as shown, the text typed but not saved, or in words why there is none. */
 export function cellText(view: CellView): string {
   const { row, column, context, save } = view
@@ -28,6 +34,8 @@ export function cellText(view: CellView): string {
   const without = lacking(view)
   if (without === 'failed' && column.id === 'verdict') return `cannot be computed: ${failure(row)}`
   if (without) return without
+  const interval = intervalOf(view)
+  if (interval) return formatEstimate(interval, column.format, column.round)
   const value = column.value(row, context)
   if (value === null) return ''
   return typeof value === 'number' ? formatNumber(value, column.format, column.round) : value
@@ -38,6 +46,8 @@ export function fullText(view: CellView): string {
   const { row, column, context, save } = view
   if (save || lacking(view)) return cellText(view)
   if (column.kind === 'input') return column.text(row.inputs)
+  const interval = intervalOf(view)
+  if (interval) return plainEstimate(interval)
   const value = column.value(row, context)
   return typeof value === 'number' ? plain(value) : value ?? ''
 }
@@ -60,13 +70,15 @@ export function cellSentence(view: CellView): string | null {
 /** A text that its cell may cut off is worth repeating in full. */
 const longText = (text: string) => text.length > 24 ? text : null
 
+const estimateHint = (view: CellView) => intervalOf(view) && `An estimate: ${cellText(view)}`
+
 /** What a cell says when the pointer rests on it. */
-export const cellHint = (view: CellView): string | null => cellSentence(view) ?? longText(cellText(view))
+export const cellHint = (view: CellView): string | null => cellSentence(view) ?? estimateHint(view) ?? longText(cellText(view))
 
 /** Whether a judged cell stands on the right side: the row by its must-haves, a surplus by its own sign. */
 const judged: Record<string, (values: CandidateValues) => boolean | null> = {
   verdict: values => values.passes,
-  surplus: values => values.surplusDb === null ? null : values.surplusDb >= 0,
+  surplus: values => values.surplusDb === null ? null : lowOf(values.surplusDb) >= 0,
 }
 
 /** Classes of a cell: what it is, and what state it is in. */

@@ -2,7 +2,7 @@ import { apskPresets } from '#shared/modulation/families'
 import { presetFields } from '#shared/schemas/sweeps'
 import type { SweepAxis, SweepField } from '#shared/schemas/sweeps'
 import { presetSource } from '#shared/study/apsk-presets'
-import { commaAmong, parseNumber } from '#shared/columns/entry'
+import { commaAmong, parseFraction, parseNumber } from '#shared/columns/entry'
 import { backOffChoices, familyChoices, normalisationChoices } from '#shared/columns/words'
 import type { Choice } from '#shared/columns/words'
 
@@ -20,7 +20,7 @@ export interface SweepParameter {
   choices?: readonly Choice[]
   /** several of the list that are ticked together */
   sets?: readonly { title: string, values: readonly string[] }[]
-  /** what its words stand for, where they do not say */
+  /** what its words stand for, or in which rows it counts */
   hint?: string
 }
 
@@ -41,6 +41,11 @@ export const sweepParameters: readonly SweepParameter[] = [
   { value: 'implementationLossDb', title: 'Implementation loss, dB', example: '0 to 3 step 0.5' },
   { value: 'normalisation', title: 'Normalisation', example: '', choices: normalisationChoices },
   { value: 'spacing', title: 'Spacing, signal units', example: '0.5, 1, 2' },
+  { value: 'codeRate', title: 'Code rate r', example: '1/2, 2/3, 3/4, 5/6', hint: 'Rates below 1 count in rows whose basis is a rate threshold or entered.' },
+  { value: 'decoderGapDb', title: 'Decoder gap, dB', example: '0.5 to 1.5 step 0.25', hint: 'Counts in rows whose basis is a rate threshold.' },
+  { value: 'shapedEntropy', title: 'Wanted entropy H, bit/symbol', example: '3 to 4 step 0.1', hint: 'Counts in rows of shaped probabilities.' },
+  { value: 'branches', title: 'Branches L', example: '1, 2, 4', hint: 'Counts in rows of a fading channel.' },
+  { value: 'phaseErrorDeg', title: 'Carrier phase error, °', example: '0 to 6 step 1' },
 ]
 
 export type AxisEntry = { field: SweepField, text: string }
@@ -59,7 +64,7 @@ const commaIn = (field: SweepField, text: string): string | null => field === 'o
 
 const listOf = (field: SweepField, text: string): SweepAxis | { refused: string } => {
   const pieces = text.split(/[;,\s]+/).filter(piece => piece !== '')
-  const values = pieces.map(parseNumber)
+  const values = pieces.map(field === 'codeRate' ? parseFraction : parseNumber)
   const bad = values.indexOf(null)
   return bad >= 0 ? { refused: `“${pieces[bad]}” is not a number.` } : { field, values: values as number[] }
 }

@@ -1,6 +1,6 @@
 import { describe, expect, it } from 'vitest'
 import { columnOf } from '#shared/columns'
-import { cellClasses, cellSentence, cellText, fullText, isEditable } from '~/utils/candidates/cell-look'
+import { cellClasses, cellHint, cellSentence, cellText, fullText, isEditable } from '~/utils/candidates/cell-look'
 import type { CellView } from '~/utils/candidates/cell-look'
 import { sampleRow } from '../columns/sample-row'
 
@@ -17,6 +17,14 @@ describe('what a cell says', () => {
   it('is the refused text', () => expect(cellText(view('order', { save: { state: 'refused', text: 'ten', sentence: '' } }))).toBe('ten'))
   it('is the reason of a failure in the verdict', () =>
     expect(cellText(view('verdict', { row: failed }))).toBe('cannot be computed: QAM has a power of two of points from 4 to 4096.'))
+})
+
+describe('a cell of an estimate', () => {
+  const row = sampleRow({ requiredEsN0Db: { value: 20.8449, low: 20.7911, high: 20.9011 }, surplusDb: { value: 0.02, low: -0.04, high: 0.08 } })
+  it('says its interval', () => expect(cellText(view('requiredEsN0', { row }))).toBe('(20.79…20.91) 20.84'))
+  it('is copied in full', () => expect(fullText(view('requiredEsN0', { row }))).toBe('20.8449 (20.7911…20.9011)'))
+  it('is on the wrong side when its unfavourable end is', () => expect(cellClasses(view('surplus', { row }))).toContain('cell-wrong-side'))
+  it('says that it is an estimate', () => expect(cellHint(view('requiredEsN0', { row }))).toBe('An estimate: (20.79…20.91) 20.84'))
 })
 
 describe('marks of a cell', () => {

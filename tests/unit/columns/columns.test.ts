@@ -45,5 +45,15 @@ describe('values of columns', () => {
   it('put the row\'s numbers into the margin', () => {
     expect(whyOf(columnOf('margin')!, row, context)?.lines).toEqual(['23.28 dB − 20.92 dB − 1.50 dB = +0.86 dB'])
   })
+  it('take both intervals into Δ', () => {
+    const [own, other] = [sampleRow({ requiredEsN0Db: { value: 21, low: 20.9, high: 21.1 } }), sampleRow({ requiredEsN0Db: { value: 20, low: 19.8, high: 20.2 } })]
+    const delta = columnOf('delta')!
+    const interval = delta.kind === 'computed' ? delta.interval!(own, { ...context, reference: other }) : null
+    expect([interval!.low, interval!.high].map(end => end.toFixed(6))).toEqual(['0.700000', '1.300000'])
+  })
+  it('tell that a number is an estimate', () => {
+    const estimated = sampleRow({ requiredEsN0Db: { value: 21, low: 20.9, high: 21.1 } })
+    expect(whyOf(columnOf('requiredEsN0')!, estimated, context)?.tolerance).toBe('an estimate, by seeded simulation between the bounds; its 95 % interval: 20.90…21.10 dB')
+  })
   it('explain nothing while a row is computed', () => expect(whyOf(columnOf('margin')!, { ...row, values: null }, context)).toBeNull())
 })

@@ -1,5 +1,5 @@
 import { describe, expect, it } from 'vitest'
-import { formatNumber, plain } from '../../../shared/columns/format'
+import { formatEnds, formatEstimate, formatNumber, plain, plainEstimate } from '../../../shared/columns/format'
 
 describe('numbers as cells show them', () => {
   it('writes a true minus sign', () => expect(formatNumber(-1.76, '0.00')).toBe('−1.76'))
@@ -17,4 +17,14 @@ describe('numbers as cells show them', () => {
   it('writes infinity as a sign', () => expect(formatNumber(-Infinity, '0.00')).toBe('−∞'))
   it('writes nothing for what is no number', () => expect(formatNumber(NaN, '0.00')).toBe(''))
   it('keeps every digit of a copied value', () => expect(plain(-20.918273645)).toBe('−20.918273645'))
+  it('rounds a probability down in its last digit', () => expect(formatNumber(1.239e-6, '0.00e-0', 'down')).toBe('1.23e−6'))
+  it('carries a probability that rounds up to the next power', () => expect(formatNumber(9.991e-7, '0.00e-0', 'up')).toBe('1.00e−6'))
+})
+
+describe('an estimate', () => {
+  const interval = { value: 20.8449, low: 20.7911, high: 20.9011 }
+  it('has ends that are rounded outwards', () => expect(formatEnds(interval, '0.00')).toBe('20.79…20.91'))
+  it('has its number last, below those of exact cells', () => expect(formatEstimate(interval, '0.00')).toBe('(20.79…20.91) 20.84'))
+  it('rounds a margin down at both of its ends that could flatter', () => expect(formatEstimate({ value: 1.087, low: 1.029, high: 1.131 }, '+0.00', 'down')).toBe('(+1.02…+1.14) +1.08'))
+  it('is copied with all digits', () => expect(plainEstimate(interval)).toBe('20.8449 (20.7911…20.9011)'))
 })
