@@ -1,6 +1,6 @@
 import { decisionCells } from '#shared/modulation'
 import type { CandidateConstellation } from '#shared/schemas/values'
-import type { CanonicalInputs } from '#shared/study/canonical-inputs'
+import type { CanonicalPoints } from '#shared/study/canonical-inputs'
 import { geometryOf } from './points'
 
 /** Free space around the outermost point, as a part of its distance from the axes. */
@@ -10,7 +10,7 @@ const space = 0.35
  * What the close-up of a row draws, at unit mean energy: points [x, y] (y = 0 for one dimension), decision cells cut to
  * a box of half the side `box`, relevant neighbours with their distances.
  */
-export function drawConstellation(constellation: NonNullable<CanonicalInputs['constellation']>): CandidateConstellation {
+export function drawConstellation(constellation: CanonicalPoints): CandidateConstellation {
   const geometry = geometryOf(constellation)
   const { offsets, neighbours, distances, minimumDistance } = geometry
   const { order, dimensions, points, meanEnergy } = geometry.constellation

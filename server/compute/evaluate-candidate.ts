@@ -1,11 +1,16 @@
-import { asymptoticEfficiencyDb, ModulationError, normalise, paprDb } from '#shared/modulation'
+import { asymptoticEfficiencyDb, lowOf, mapEstimate, ModulationError, normalise, paprDb as paprOf, valueOf } from '#shared/modulation'
+import type { Estimate, SymbolErrorKind } from '#shared/modulation'
 import { ebN0Db, epkN0Db, evmPercentAt, gapToCapacityDb, netBitsPerSymbol, ratesOf } from '#shared/modulation/efficiency'
 import { verdict } from '#shared/modulation/verdict'
 import type { Issue } from '#shared/schemas/common'
 import type { CandidateCurves, CandidateValues } from '#shared/schemas/values'
 import type { CanonicalInputs } from '#shared/study/canonical-inputs'
 import { linkValues } from './link-values'
-import { backOffOf, curvesOf, errorRatesAt, geometryOf, requiredOf } from './points'
+import { symbolErrorCurves } from './curves'
+import { errorRateOf, modelOf } from './error-rates'
+import { backOffOf, geometryOf, noiseDensityAt } from './points'
+import { requiredValues } from './required'
+import { rowPath } from './row-path'
 
 /** What is stored of a row's computation; values and curves are null when it has errors. */
 export interface Evaluated {
@@ -35,7 +40,7 @@ function pointValues(points: Points): PointValues {
   const { order, dimensions, bitsPerSymbol } = constellation
   const { meanEnergy, peakEnergy } = normalise(constellation, points.normalisation)
   return {
-    order, dimensions, bitsPerSymbol, meanEnergy, peakEnergy, paprDb: paprDb(constellation),
+    order, dimensions, bitsPerSymbol, meanEnergy, peakEnergy, paprDb: paprOf(constellation),
     minimumDistance: minimumDistance / Math.sqrt(constellation.meanEnergy),
     spacing: minimumDistance * Math.sqrt(meanEnergy / constellation.meanEnergy),
     nearestMean, relevantMean,
@@ -44,23 +49,9 @@ function pointValues(points: Points): PointValues {
 
 function backOffValues({ backOff, constellation, rollOff }: CanonicalInputs): Pick<CandidateValues, 'backOffDb' | 'backOffErrorDb'> {
   if (backOff.by === 'entered' || !constellation) return { backOffDb: backOff.by === 'entered' ? backOff.db : 0, backOffErrorDb: null }
-  if (backOff.by === 'papr') return { backOffDb: paprDb(geometryOf(constellation).constellation), backOffErrorDb: null }
+  if (backOff.by === 'papr') return { backOffDb: paprOf(geometryOf(constellation).constellation), backOffErrorDb: null }
   const { backOffDb, standardErrorDb } = backOffOf(constellation, rollOff, backOff.exceedance)
   return { backOffDb, backOffErrorDb: standardErrorDb }
-}
-
-type RequiredValues = Pick<CandidateValues,
-  'requiredUnionEsN0Db' | 'requiredAllPairsEsN0Db' | 'requiredNearestEsN0Db' | 'boundPenaltyDb'> & { requiredEsN0Db: number }
-
-function requiredValues({ constellation, requiredEsN0Db, study }: CanonicalInputs): RequiredValues {
-  if (requiredEsN0Db !== null || !constellation) {
-    return { requiredEsN0Db: requiredEsN0Db!, requiredUnionEsN0Db: null, requiredAllPairsEsN0Db: null, requiredNearestEsN0Db: null, boundPenaltyDb: null }
-  }
-  const { serExact, serUnion, serAllPairs, serNearest } = requiredOf(constellation, study.target.value)
-  return {
-    requiredEsN0Db: serExact, requiredUnionEsN0Db: serUnion, requiredAllPairsEsN0Db: serAllPairs, requiredNearestEsN0Db: serNearest,
-    boundPenaltyDb: serUnion === null ? null : serUnion - serExact,
-  }
 }
 
 function netBitsOf({ netBits, constellation, codeRate }: CanonicalInputs): number {
@@ -74,30 +65,30 @@ function compute(inputs: CanonicalInputs): CandidateValues {
   const points = constellation ? pointValues(constellation) : noPoints
   const dimensions = points.dimensions ?? enteredDimensions
   const netBits = netBitsOf(inputs)
-  const required = requiredValues(inputs)
+  const required = requiredValues(inputs, netBits)
   const { requiredEsN0Db } = required
+  const { paprDb } = points
   const backOff = backOffValues(inputs)
   const { overhead, dimensionsPerInterval, heldConstant } = study
   const { symbolRateHz, occupiedBandwidthHz, netBitRateBps: netBitRate, spectralEfficiency } = ratesOf(
     { heldConstant: heldConstant.kind, value: heldConstant.value }, { netBits, dimensions, rollOff, overhead, dimensionsPerInterval },
   )
   const link = linkValues(inputs, { requiredEsN0Db, backOffDb: backOff.backOffDb, symbolRateHz, meanEnergy: points.meanEnergy ?? 1 })
-  const rates = constellation
-    ? errorRatesAt(constellation, link.availableEsN0Db)
-    : { serUnion: null, serAllPairs: null, serNearest: null, serExact: null }
+  const rates = errorRatesAt(inputs, link.availableEsN0Db)
   const judged = verdict({
-    margin: link.marginDb, requiredMargin: link.requiredMarginDb, decidingCase: link.decidingCase,
-    netBitRate: netBitRate / 1e6, occupiedBandwidth: occupiedBandwidthHz / 1e6, spectralEfficiency, papr: points.paprDb,
+    // At the unfavourable end of what is known.
+    margin: lowOf(link.marginDb), requiredMargin: link.requiredMarginDb, decidingCase: link.decidingCase,
+    netBitRate: netBitRate / 1e6, occupiedBandwidth: occupiedBandwidthHz / 1e6, spectralEfficiency, papr: paprDb,
   }, study.mustHaves.map(mustHave => ({ ...mustHave, reason: '' })))
   return {
     ...points, netBits, ...required,
     asymptoticEfficiencyDb: constellation
       ? asymptoticEfficiencyDb(geometryOf(constellation).constellation, geometryOf(constellation).minimumDistance, netBits)
       : null,
-    requiredEbN0Db: ebN0Db(requiredEsN0Db, netBits),
-    requiredEpkN0Db: points.paprDb === null ? null : epkN0Db(requiredEsN0Db, points.paprDb),
-    gapToCapacityDb: constellation ? gapToCapacityDb(requiredEsN0Db, netBits, dimensions) : null,
-    evmPercent: constellation ? evmPercentAt(requiredEsN0Db, dimensions) : null,
+    requiredEbN0Db: mapEstimate(requiredEsN0Db, db => ebN0Db(db, netBits)),
+    requiredEpkN0Db: paprDb === null ? null : mapEstimate(requiredEsN0Db, db => epkN0Db(db, paprDb)),
+    gapToCapacityDb: constellation ? mapEstimate(requiredEsN0Db, db => gapToCapacityDb(db, netBits, dimensions)) : null,
+    evmPercent: constellation ? mapEstimate(requiredEsN0Db, db => evmPercentAt(db, dimensions)) : null,
     ...backOff, symbolRateHz, occupiedBandwidthHz, netBitRate, spectralEfficiency,
     ...link, availableEbN0Db: ebN0Db(link.availableEsN0Db, netBits),
     implementationLossDb, rollOff, ...rates,
@@ -105,9 +96,15 @@ function compute(inputs: CanonicalInputs): CandidateValues {
   }
 }
 
-/** Where the core's refusals belong in a row: the target is the study's. */
-const pathOf = ([field, ...rest]: (string | number)[]) =>
-  field === 'target' ? 'requirements.target.value' : [field ?? 'family', ...rest].join('.')
+/** SER at the available Es/N0 by each way; null where the row has no such way. */
+function errorRatesAt(inputs: CanonicalInputs, esN0Db: number): Pick<CandidateValues, 'serUnion' | 'serAllPairs' | 'serNearest' | 'serExact'> {
+  const model = modelOf(inputs)
+  if (!model) return { serUnion: null, serAllPairs: null, serNearest: null, serExact: null }
+  const n0 = noiseDensityAt(geometryOf(model.points).constellation, esN0Db)
+  const at = (kind: SymbolErrorKind) => errorRateOf(model, kind)?.rates([n0])[0] ?? null
+  const plain = (estimate: Estimate | null) => estimate === null ? null : valueOf(estimate)
+  return { serUnion: plain(at('serUnion')), serAllPairs: plain(at('serAllPairs')), serNearest: plain(at('serNearest')), serExact: at('serExact') }
+}
 
 /**
  * Computed cells and curves of one row.
@@ -118,9 +115,10 @@ const pathOf = ([field, ...rest]: (string | number)[]) =>
 export function evaluateCandidate(inputs: CanonicalInputs): Evaluated {
   try {
     const values = compute(inputs)
-    return { values, curves: inputs.constellation ? curvesOf(inputs.constellation, inputs.range) : null, errors: [] }
+    const model = modelOf(inputs)
+    return { values, curves: model && symbolErrorCurves(model, inputs.range), errors: [] }
   } catch (error) {
     if (!(error instanceof ModulationError)) throw error
-    return { values: null, curves: null, errors: [{ path: pathOf(error.path), message: error.message }] }
+    return { values: null, curves: null, errors: [{ path: rowPath(error.path), message: error.message }] }
   }
 }

@@ -1,11 +1,13 @@
 import { sql } from 'drizzle-orm'
 import { bigint, double, foreignKey, index, int, json, mysqlEnum, mysqlTable, primaryKey, text, uniqueIndex, varchar } from 'drizzle-orm/mysql-core'
-import type { CandidateCurves, CandidateValues } from '#shared/schemas/values'
+import type { BitErrorCurves, CandidateCurves, CandidateValues, InformationCurves } from '#shared/schemas/values'
 import type { Issue } from '#shared/schemas/common'
+import type { PartValues, StoredPart } from '#shared/schemas/parts'
 import type { SweepCreation } from '#shared/schemas/sweeps'
 // By their paths: drizzle-kit reads this file and knows no aliases.
 import { completeInputs } from '../../shared/schemas/candidates'
 import { studyRoles } from '../../shared/schemas/members'
+import { partStates } from '../../shared/schemas/parts'
 import { completeRequirements } from '../../shared/schemas/requirements'
 import { accountRoles } from '../../shared/schemas/session'
 import { completedJson, instant, now, uuid } from './columns'
@@ -79,14 +81,27 @@ export const results = mysqlTable('results', {
   values: json('values').$type<CandidateValues>(),
   curves: json('curves').$type<CandidateCurves>(),
   errors: json('errors').$type<Issue[]>().notNull(),
-  /** taken out of `values`, so that lists of studies need not parse thousands of them */
+  /** taken out of `values`, so that lists of studies need not parse thousands of them; of an interval its unfavourable end */
   passes: int('passes').generatedAlwaysAs(sql`json_value(\`values\`, '$.passes')`, { mode: 'stored' }),
-  surplusDb: double('surplus_db').generatedAlwaysAs(sql`json_value(\`values\`, '$.surplusDb')`, { mode: 'stored' }),
+  surplusDb: double('surplus_db').generatedAlwaysAs(sql`coalesce(json_value(\`values\`, '$.surplusDb.low'), json_value(\`values\`, '$.surplusDb'))`, { mode: 'stored' }),
   computedAt: instant('computed_at').notNull().default(now),
 }, t => [
   // Holds all that the list of studies needs, so that it never reads the wide rows themselves.
   index('results_summary').on(t.key, t.passes, t.surplusDb),
 ])
+
+/**
+ * Columns and curves of a result that need heavy work: made when they are asked for. A part that is being computed stands here without
+ * values, so that a restart takes it up again.
+ */
+export const resultParts = mysqlTable('result_parts', {
+  key: varchar('key', { length: 64 }).notNull(),
+  part: varchar('part', { length: 20 }).$type<StoredPart>().notNull(),
+  state: mysqlEnum('state', partStates).notNull().default('computing'),
+  values: json('values').$type<PartValues | BitErrorCurves | InformationCurves>(),
+  errors: json('errors').$type<Issue[]>().notNull(),
+  askedAt: instant('asked_at').notNull().default(now),
+}, t => [primaryKey({ columns: [t.key, t.part] }), index('result_parts_state').on(t.state, t.askedAt)])
 
 export const sweeps = mysqlTable('sweeps', {
   id: uuid('id').primaryKey(),

@@ -1,7 +1,9 @@
 import { and, eq, isNull } from 'drizzle-orm'
 import type { CandidateConstellation, CandidateCurves } from '#shared/schemas/values'
-import { familyOfRow, familyParameters } from '#shared/study/family-parameters'
-import { inputIssues } from '#shared/study/input-issues'
+import { canonicalPoints } from '#shared/study/canonical-inputs'
+import { familyOfRow } from '#shared/study/family-parameters'
+import { constellationIssues } from '#shared/study/input-issues'
+import { labelIssues, probabilityIssues } from '#shared/study/option-issues'
 import { compute } from '../compute/pool'
 import { useDatabase } from '../database/client'
 import { candidates } from '../database/schema'
@@ -27,10 +29,10 @@ export async function candidateConstellation(id: string, signal: AbortSignal): P
   const { inputs } = await rowOf(id)
   const family = familyOfRow(inputs)
   if (!family) return problem(404, 'An entered scheme has no points to draw.')
-  const [issue] = inputIssues(inputs).filter(({ path }) => family.parameters.some(parameter => path.startsWith(parameter)))
+  const [issue] = [...constellationIssues(inputs), ...labelIssues(inputs), ...probabilityIssues(inputs)]
   if (issue) return problem(404, `This row has no points to draw. ${issue.message}`)
   return compute(
-    { kind: 'constellation', asked: { family: family.id, parameters: familyParameters(inputs), normalisation: { normalisation: 'meanEnergy' } } },
+    { kind: 'constellation', asked: { ...canonicalPoints(inputs)!, normalisation: { normalisation: 'meanEnergy' } } },
     { priority: 'interactive', signal },
   )
 }

@@ -1,7 +1,9 @@
 import { and, asc, eq, gt, gte, inArray, isNull, or } from 'drizzle-orm'
 import type { Candidate } from '#shared/schemas/candidates'
+import type { CandidateParts } from '#shared/schemas/parts'
 import type { Database, Transaction } from '../database/client'
 import { candidates, results } from '../database/schema'
+import { partsOfKeys } from './stored-parts'
 
 /** Columns of a row with its result's values; the curves stay unread. */
 const columns = {
@@ -30,13 +32,19 @@ function outcome({ row, values, resultErrors }: JoinedRow): Pick<Candidate, 'sta
 }
 
 /** One row of the grid as the API sends it. */
-export function toCandidate(joined: JoinedRow): Candidate {
+function toCandidate(joined: JoinedRow, parts: CandidateParts): Candidate {
   const { row } = joined
   return {
     id: row.id, studyId: row.studyId, version: row.version, position: row.position, pin: row.pin, sweepId: row.sweepId,
     createdAt: row.createdAt.toISOString(), updatedAt: row.updatedAt.toISOString(),
-    inputs: row.inputs, ...outcome(joined),
+    inputs: row.inputs, ...outcome(joined), parts,
   }
+}
+
+/** Rows with the parts that have been asked for. */
+async function withParts(db: Database | Transaction, rows: readonly JoinedRow[]): Promise<Candidate[]> {
+  const parts = await partsOfKeys(db, rows.flatMap(({ row }) => row.resultKey ?? []))
+  return rows.map(joined => toCandidate(joined, parts.get(joined.row.resultKey ?? '') ?? {}))
 }
 
 /** Rows of the given ids that are not deleted, in the order of the grid. */
@@ -46,7 +54,7 @@ export async function rowsOf(db: Database | Transaction, ids: readonly string[])
     .leftJoin(results, eq(results.key, candidates.resultKey))
     .where(and(inArray(candidates.id, [...ids]), isNull(candidates.deletedAt)))
     .orderBy(asc(candidates.position), asc(candidates.id))
-  return rows.map(toCandidate)
+  return withParts(db, rows)
 }
 
 /**
@@ -65,5 +73,5 @@ export async function rowsAfter(
     ))
     .orderBy(asc(candidates.position), asc(candidates.id))
     .limit(limit)
-  return rows.map(toCandidate)
+  return withParts(db, rows)
 }

@@ -1,8 +1,9 @@
 import { and, asc, count, desc, eq, inArray, isNotNull, isNull, or, sql } from 'drizzle-orm'
-import { coreVersion, generate, normalise } from '#shared/modulation'
+import { coreVersion, normalise } from '#shared/modulation'
 import type { Candidate } from '#shared/schemas/candidates'
 import { canonicalInputs } from '#shared/study/canonical-inputs'
 import type { Requirements } from '#shared/schemas/requirements'
+import { constellationOf } from '../compute/points'
 import { useDatabase } from '../database/client'
 import { candidates, results } from '../database/schema'
 import type { StudyExport } from '../exports/study-export'
@@ -18,13 +19,12 @@ const pageRows = 1000
 const leadingRows = 10
 
 const live = (studyId: string) => and(eq(candidates.studyId, studyId), isNull(candidates.deletedAt))
-const passes = sql`json_value(${results.values}, '$.passes') = 1`
 const roleOf = sql`json_value(${candidates.inputs}, '$.role')`
 
 async function countRows(studyId: string): Promise<StudyExport['counts']> {
   const [row] = await useDatabase().select({
     candidates: count(),
-    passing: sql<number>`count(case when ${passes} then 1 end)`.mapWith(Number),
+    passing: sql<number>`count(case when ${results.passes} = 1 then 1 end)`.mapWith(Number),
     failed: sql<number>`count(case when ${candidates.resultKey} is null or json_length(${results.errors}) > 0 then 1 end)`.mapWith(Number),
     computing: sql<number>`count(case when ${candidates.resultKey} is not null and ${results.key} is null then 1 end)`.mapWith(Number),
   }).from(candidates).leftJoin(results, eq(results.key, candidates.resultKey)).where(live(studyId))
@@ -35,8 +35,8 @@ async function countRows(studyId: string): Promise<StudyExport['counts']> {
 async function leadingOf(studyId: string): Promise<Candidate[]> {
   const db = useDatabase()
   const best = await db.select({ id: candidates.id }).from(candidates).innerJoin(results, eq(results.key, candidates.resultKey))
-    .where(and(live(studyId), sql`json_value(${results.values}, '$.surplusDb') is not null`))
-    .orderBy(desc(passes), desc(sql`cast(json_value(${results.values}, '$.surplusDb') as double)`), asc(candidates.position))
+    .where(and(live(studyId), isNotNull(results.surplusDb)))
+    .orderBy(desc(results.passes), desc(results.surplusDb), asc(candidates.position))
     .limit(leadingRows)
   const rows = new Map((await rowsOf(db, best.map(row => row.id))).map(row => [row.id, row]))
   return best.flatMap(({ id }) => rows.get(id) ?? [])
@@ -67,7 +67,7 @@ function pointsOf(row: Candidate, requirements: Requirements): number[][] | null
   if (row.state !== 'computed') return null
   const { constellation } = canonicalInputs(row.inputs, requirements)
   if (!constellation) return null
-  const { order, dimensions, points } = normalise(generate(constellation.family, constellation.parameters), constellation.normalisation)
+  const { order, dimensions, points } = normalise(constellationOf(constellation), constellation.normalisation)
   return Array.from({ length: order }, (_, i) => [...points.subarray(i * dimensions, (i + 1) * dimensions)])
 }
 

@@ -1,5 +1,6 @@
 import { z } from 'zod'
 import { id, issue, name, numberBetween, text, wholeBetween } from './common'
+import { candidateParts } from './parts'
 import { candidateValues } from './values'
 import { families } from '../modulation'
 
@@ -172,5 +173,7 @@ export const candidate = z.object({
   /** why the row failed: where, and what is allowed */
   errors: z.array(issue),
   values: candidateValues.nullable(),
+  /** columns that need heavy work, as far as somebody has asked for them */
+  parts: candidateParts,
 })
 export type Candidate = z.infer<typeof candidate>

@@ -4,6 +4,12 @@ import type { MustHaveKind } from './requirements'
 
 const n = z.number().nullable()
 
+/** A number that is known within an interval only: simulated, or held between two bounds. */
+export const interval = z.object({ value: z.number(), low: z.number(), high: z.number() })
+/** A number, exact within its tolerance, or an interval where only that is known. */
+export const estimate = z.union([z.number(), interval])
+const e = estimate.nullable()
+
 /** A must-have judged on unrounded numbers. */
 export const check = z.object({
   id: z.string(), kind: z.enum(Object.keys(mustHaveKinds) as MustHaveKind[]),
@@ -16,8 +22,15 @@ export const check = z.object({
 /** One link case of a row, in dB. */
 export const caseValues = z.object({
   id: z.string(), name: z.string(),
-  availableEsN0Db: z.number(), marginDb: n, requiredMarginDb: z.number(), surplusDb: n,
+  availableEsN0Db: z.number(), marginDb: e, requiredMarginDb: z.number(), surplusDb: e,
 })
+
+/**
+ * What a row's required SNR rests on: the exact SER or BER, the union bound where nothing better is known, a rate threshold with the
+ * decoder's gap, or a value entered.
+ */
+export const requiredWays = ['serExact', 'serUnion', 'berExact', 'bitMetricRate', 'mutualInformation', 'entered'] as const
+export type RequiredWay = (typeof requiredWays)[number]
 
 /**
  * Computed cells of a row. SNR in dB, rates in Hz and bit/s, probabilities plain.
@@ -31,30 +44,52 @@ export const candidateValues = z.object({
   /** in signal units after the row's normalisation */
   spacing: n,
   nearestMean: n, relevantMean: n, asymptoticEfficiencyDb: n,
-  requiredEsN0Db: n, requiredEbN0Db: n, requiredEpkN0Db: n,
+  /** what the required SNR rests on */
+  requiredBy: z.enum(requiredWays),
+  requiredEsN0Db: e, requiredEbN0Db: e, requiredEpkN0Db: e,
+  /** whether the error rate crosses the target more than once, and the rate below which it never falls, if there is one */
+  crossedMoreThanOnce: z.boolean(), errorFloor: n,
   requiredUnionEsN0Db: n, requiredAllPairsEsN0Db: n, requiredNearestEsN0Db: n,
-  boundPenaltyDb: n, gapToCapacityDb: n, evmPercent: n,
+  boundPenaltyDb: e, gapToCapacityDb: e, evmPercent: e,
   backOffDb: z.number(), backOffErrorDb: n,
   symbolRateHz: z.number(), occupiedBandwidthHz: z.number(), netBitRate: z.number(), spectralEfficiency: z.number(),
   cases: z.array(caseValues),
   /** of the case that decides */
   decidingCase: z.string().nullable(),
-  availableEsN0Db: z.number(), availableEbN0Db: z.number(), marginDb: n, requiredMarginDb: z.number(), surplusDb: n,
+  availableEsN0Db: z.number(), availableEbN0Db: z.number(), marginDb: e, requiredMarginDb: z.number(), surplusDb: e,
   implementationLossDb: z.number(), rollOff: z.number(),
-  receiverThresholdDbm: n,
-  serUnion: n, serAllPairs: n, serNearest: n, serExact: n,
+  receiverThresholdDbm: e,
+  serUnion: n, serAllPairs: n, serNearest: n, serExact: e,
   passes: z.boolean(),
   verdict: z.string(),
   checks: z.array(check),
 })
 export type CandidateValues = z.infer<typeof candidateValues>
 
-/** GET /api/candidates/{id}/curves: SER of one row over its SNR range. */
-export const candidateCurves = z.object({
-  esN0Db: z.array(z.number()),
-  serUnion: z.array(z.number()), serNearest: z.array(z.number()), serExact: z.array(z.number()),
-})
+const series = z.array(z.number())
+const band = series.optional()
+
+/**
+ * SER of one row over its SNR range: empty where the row has no curve of that way.
+ * Where only an interval is known, serExact holds the estimate and serLow and serHigh its ends.
+ */
+export const candidateCurves = z.object({ esN0Db: series, serUnion: series, serNearest: series, serExact: series, serLow: band, serHigh: band })
 export type CandidateCurves = z.infer<typeof candidateCurves>
+
+/** BER of one row over its SNR range: empty where the row has no curve of that way. */
+export const bitErrorCurves = z.object({ esN0Db: series, berAllPairs: series, berNearest: series, berExact: series })
+export type BitErrorCurves = z.infer<typeof bitErrorCurves>
+
+/** Information rates of one row over its SNR range, bit per symbol; the bit-metric rate is empty without labels. */
+export const informationCurves = z.object({
+  esN0Db: series, mutualInformation: series, bitMetricRate: series,
+  mutualInformationLow: band, mutualInformationHigh: band, bitMetricRateLow: band, bitMetricRateHigh: band,
+})
+export type InformationCurves = z.infer<typeof informationCurves>
+
+/** GET /api/candidates/{id}/curves?quantity= */
+export const curvesQuery = z.strictObject({ quantity: z.enum(['ser', 'ber', 'rate'], { error: 'The quantity is ser, ber or rate.' }).default('ser') })
+export type CurveQuantity = z.infer<typeof curvesQuery>['quantity']
 
 /** GET /api/candidates/{id}/constellation: what the close-up draws, at unit mean energy. */
 export const candidateConstellation = z.object({

@@ -1,10 +1,13 @@
 import { columns } from '#shared/columns'
 import type { CellValue, Column, ColumnContext, NumberFormat } from '#shared/columns'
+import { highOf, lowOf } from '#shared/modulation/estimate'
+import type { Estimate } from '#shared/modulation/estimate'
 import { ceilToDigits, floorToDigits } from '#shared/modulation/rounding'
 import { verdictKinds } from '#shared/modulation/verdict'
 import type { Candidate } from '#shared/schemas/candidates'
 import { mustHaveKinds } from '#shared/schemas/requirements'
 import type { MustHave, Requirements } from '#shared/schemas/requirements'
+import type { CandidateValues } from '#shared/schemas/values'
 import { verdictText } from '../verdict-text'
 import { columnLetters } from './addresses'
 
@@ -38,11 +41,25 @@ export const roundedColumns = columns.filter(c => c.round !== 'nearest').map(c =
 export const exactId = (id: string) => `${id}Exact`
 export const byId = (mustHave: Pick<MustHave, 'kind'>) => `${mustHave.kind}By`
 
+const unfavourable = (estimate: Estimate | null | undefined, end: (estimate: Estimate) => number) => estimate === null || estimate === undefined ? null : end(estimate)
+
+/** Columns on which a row is judged stand at the unfavourable end of an interval, from which the sheet's formulas go on. */
+const judged: Partial<Record<string, (values: CandidateValues) => CellValue>> = {
+  margin: values => unfavourable(values.marginDb, lowOf),
+  surplus: values => unfavourable(values.surplusDb, lowOf),
+  receiverThreshold: values => unfavourable(values.receiverThresholdDbm, highOf),
+}
+
+const exactValue = (column: Column): SheetColumn['value'] => {
+  const own = judged[column.id]
+  return own ? ({ values }) => values && own(values) : column.value
+}
+
 const rounded = (column: Column): SheetColumn['value'] => {
   const round = column.round === 'down' ? floorToDigits : ceilToDigits
   const digits = digitsOf(column)
   return (row, context) => {
-    const value = column.value(row, context)
+    const value = exactValue(column)(row, context)
     return typeof value === 'number' ? round(value, digits) : value
   }
 }
@@ -60,14 +77,15 @@ const rowNumber = (): SheetColumn => {
   return { id: 'rowNumber', title: 'Row', unit: '—', format: 'integer', width: 6, value: () => ++count }
 }
 
-/** What the row was computed with: its own or the study's. */
+/** What the row was computed with: its own or the study's; of an interval the end at which the row is judged. */
 const usedColumns: SheetColumn[] = [
+  { id: 'requiredUsed', title: 'Required Es/N0 used', unit: 'dB', format: 'plain', width: 20, value: ({ values }) => unfavourable(values?.requiredEsN0Db, highOf) },
   { id: 'lossUsed', title: 'Implementation loss used', unit: 'dB', format: '0.00', width: 14, value: row => row.values?.implementationLossDb ?? null },
   { id: 'rollOffUsed', title: 'Roll-off used', unit: '—', format: 'plain', width: 11, value: row => row.values?.rollOff ?? null },
 ]
 
 const exactColumns: SheetColumn[] = columns.filter(c => c.round !== 'nearest').map(column => ({
-  id: exactId(column.id), title: `${column.title}, exact`, unit: column.unit ?? '—', format: 'plain', width: 20, value: column.value,
+  id: exactId(column.id), title: `${column.title}, exact`, unit: column.unit ?? '—', format: 'plain', width: 20, value: exactValue(column),
 }))
 
 /** How far a row is on the right side of a must-have (negative: on the wrong one). The margin's is the exact surplus. */

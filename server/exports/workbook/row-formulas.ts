@@ -1,3 +1,4 @@
+import { isInterval } from '#shared/modulation/estimate'
 import type { Candidate } from '#shared/schemas/candidates'
 import type { Requirements } from '#shared/schemas/requirements'
 import type { CandidateValues } from '#shared/schemas/values'
@@ -46,12 +47,12 @@ function available(values: CandidateValues, cell: Cell, { summary, link }: Study
 
 function exact(values: CandidateValues, cell: Cell, cells: StudyCells): Formulas {
   const availableCell = cell(exactId('availableEsN0'))
-  const threshold = cells.link.from === 'link' && `${cells.link.noiseDensity}+10*LOG10(${cell('symbolRate')}*1E6)+${cell('requiredEsN0')}+${cell('lossUsed')}`
+  const threshold = cells.link.from === 'link' && `${cells.link.noiseDensity}+10*LOG10(${cell('symbolRate')}*1E6)+${cell('requiredUsed')}+${cell('lossUsed')}`
   return {
     [exactId('availableEsN0')]: available(values, cell, cells),
     [exactId('availableEbN0')]: `${availableCell}-10*LOG10(${cell('netBits')})`,
     [exactId('receiverThreshold')]: threshold || null,
-    [exactId('margin')]: `${availableCell}-${cell('requiredEsN0')}-${cell('lossUsed')}`,
+    [exactId('margin')]: `${availableCell}-${cell('requiredUsed')}-${cell('lossUsed')}`,
     [exactId('surplus')]: `${cell(exactId('margin'))}-${cell('requiredMargin')}`,
   }
 }
@@ -84,6 +85,8 @@ export function rowFormulas({ values }: Candidate, number: number, { letters }: 
   const { summary, link, requirements } = cells
   const cell = (id: string) => `${letters(id)}${number}`
   return {
+    // An interval counts at its unfavourable end, which stays the number that the core found.
+    requiredUsed: isInterval(values.requiredEsN0Db) ? null : cell('requiredEsN0'),
     lossUsed: ownOr(cell('implementationLossDb'), summary.implementationLoss),
     rollOffUsed: ownOr(cell('rollOff'), summary.rollOff),
     ...rates(values, cell, cells),

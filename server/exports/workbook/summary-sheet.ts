@@ -1,4 +1,5 @@
 import type ExcelJS from 'exceljs'
+import { lowOf, valueOf } from '#shared/modulation/estimate'
 import { floorToDigits } from '#shared/modulation/rounding'
 import type { MustHaveKind } from '#shared/schemas/requirements'
 import { heldConstantKinds, mustHaveKinds } from '#shared/schemas/requirements'
@@ -80,8 +81,8 @@ function writeLeading(sheet: ExcelJS.Worksheet, { leading }: StudyExport, { lett
     last = row.number
     const live = (of: string, result: number | string | null): ExcelJS.CellValue =>
       result === null ? null : { formula: `INDEX(${column(of)},MATCH($F${last},${column('identifier')},0))`, result }
-    row.getCell(2).value = live('surplus', values.surplusDb === null ? null : floorToDigits(values.surplusDb, 2))
-    row.getCell(3).value = live('requiredEsN0', values.requiredEsN0Db)
+    row.getCell(2).value = live('surplus', values.surplusDb === null ? null : floorToDigits(lowOf(values.surplusDb), 2))
+    row.getCell(3).value = live('requiredEsN0', values.requiredEsN0Db === null ? null : valueOf(values.requiredEsN0Db))
     row.getCell(4).value = live('netRate', values.netBitRate / 1e6)
     row.getCell(5).value = live('verdict', values.verdict)
     row.getCell(6).value = id

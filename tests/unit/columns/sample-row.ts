@@ -5,7 +5,7 @@ import type { CandidateValues } from '../../../shared/schemas/values'
 const values: CandidateValues = {
   order: 16, dimensions: 2, bitsPerSymbol: 4, netBits: 4, meanEnergy: 1, peakEnergy: 1.8, paprDb: 2.55, minimumDistance: 0.632, spacing: 0.632,
   nearestMean: 3, relevantMean: 3, asymptoticEfficiencyDb: -3.98,
-  requiredEsN0Db: 20.92, requiredEbN0Db: 14.9, requiredEpkN0Db: 23.47,
+  requiredBy: 'serExact', requiredEsN0Db: 20.92, crossedMoreThanOnce: false, errorFloor: null, requiredEbN0Db: 14.9, requiredEpkN0Db: 23.47,
   requiredUnionEsN0Db: 20.921, requiredAllPairsEsN0Db: 20.922, requiredNearestEsN0Db: 20.92,
   boundPenaltyDb: 0.001, gapToCapacityDb: 9.16, evmPercent: 8.99, backOffDb: 5.47, backOffErrorDb: 0.01,
   symbolRateHz: 5.6e6, occupiedBandwidthHz: 7e6, netBitRate: 21.28e6, spectralEfficiency: 3.04,
@@ -22,6 +22,6 @@ export function sampleRow(replaced: Partial<CandidateValues>, inputs: Partial<Ca
   return {
     id: '0190f0f0-0000-7000-8000-000000000001', studyId: '0190f0f0-0000-7000-8000-000000000000', version: 1, position: 1,
     pin: null, sweepId: null, createdAt: '2026-01-01T00:00:00.000Z', updatedAt: '2026-01-01T00:00:00.000Z',
-    inputs: { ...defaultInputs, ...inputs }, state: 'computed', errors: [], values: { ...values, ...replaced },
+    inputs: { ...defaultInputs, ...inputs }, state: 'computed', errors: [], values: { ...values, ...replaced }, parts: {},
   }
 }
