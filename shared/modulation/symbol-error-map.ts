@@ -3,6 +3,7 @@ import { probabilityOf } from './constellation'
 import { edgeFlow } from './edge-flow'
 import { q } from './gaussian'
 import { mapCells } from './power-diagram'
+import type { MapCells } from './power-diagram'
 
 /**
  * Exact mean symbol error rate of maximum a posteriori decisions, for one or two dimensions and any probabilities.
@@ -14,7 +15,12 @@ import { mapCells } from './power-diagram'
  * @see methods §2
  */
 export function serMap(constellation: Constellation, n0: number): number {
-  return weighted(constellation, serMapByPoint(constellation, n0))
+  return serMapOf(mapCells(constellation, n0))
+}
+
+/** The same for cells that are there already. */
+export function serMapOf(cells: MapCells): number {
+  return weighted(cells.constellation, errorsOf(cells))
 }
 
 /**
@@ -25,7 +31,10 @@ export function serMap(constellation: Constellation, n0: number): number {
  * @throws ModulationError as serMap
  */
 export function serMapByPoint(constellation: Constellation, n0: number): Float64Array {
-  const { offsets, edges, outside, vanished } = mapCells(constellation, n0)
+  return errorsOf(mapCells(constellation, n0))
+}
+
+function errorsOf({ n0, offsets, edges, outside, vanished }: MapCells): Float64Array {
   return Float64Array.from(outside, (isOutside, i) => {
     if (vanished[i]) return 1
     // Noise brings an outside point home through the near edges and carries it past the far ones.
