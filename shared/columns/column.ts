@@ -1,5 +1,6 @@
 import type { MethodId } from '../methods'
 import type { Interval } from '../modulation/estimate'
+import type { PartName } from '../schemas/parts'
 import type { Candidate, CandidateChange, CandidateField, CandidateInputs } from '../schemas/candidates'
 import type { Requirements } from '../schemas/requirements'
 import { formatEnds } from './format'
@@ -68,6 +69,8 @@ export interface InputColumn extends Base {
 export interface ComputedColumn extends Base {
   kind: 'computed'
   type: 'text' | 'number'
+  /** the part of a row that the number belongs to, which is computed when somebody shows the column; left out: always computed */
+  part?: PartName
   /** how the number comes about, on the Methods page */
   method: MethodId
   formula: string
@@ -90,6 +93,7 @@ const estimated = 'an estimate, by seeded simulation between the bounds; its 95 
 /** Why a computed cell holds what it holds; null while there is nothing to explain. */
 export function whyOf(column: Column, row: Candidate, context: ColumnContext): Why | null {
   if (column.kind === 'input' || row.values === null) return null
+  if (column.part && !row.parts[column.part]?.values) return null
   const interval = column.interval?.(row, context) ?? null
   return {
     formula: column.formula, lines: column.lines(row, context), source: column.source,

@@ -1,13 +1,16 @@
+import * as bits from './bit-error-columns'
 import * as candidate from './candidate-columns'
 import * as channel from './channel-columns'
 import * as dimension from './dimension-columns'
 import * as error from './error-columns'
 import * as geometry from './geometry-columns'
+import * as information from './information-columns'
 import * as label from './label-columns'
 import * as link from './link-columns'
 import * as rate from './rate-columns'
 import * as required from './required-columns'
 import * as threshold from './threshold-columns'
+import * as tolerance from './tolerance-columns'
 import * as signal from './signal-columns'
 import * as verdict from './verdict-columns'
 import type { Column } from './column'
@@ -59,6 +62,8 @@ export const columns: readonly Column[] = [
   required.requiredUnion,
   required.requiredAllPairs,
   required.requiredNearest,
+  bits.requiredBer,
+  tolerance.requiredMap,
   required.gapToCapacity,
   required.evm,
   threshold.rateKind,
@@ -80,13 +85,28 @@ export const columns: readonly Column[] = [
   rate.rollOff,
   geometry.asymptoticEfficiency,
   geometry.dimensions,
+  tolerance.largestRotation,
+  tolerance.largestGain,
   error.serAllPairs,
+  bits.serLower,
+  bits.serDirectional,
+  bits.berExact,
+  bits.berAllPairs,
+  bits.berNearest,
+  bits.frameErrorRate,
+  information.mutualInformation,
+  information.bitMetricRate,
+  information.thresholdMutualInformation,
+  information.thresholdBitMetric,
   label.labelling,
   label.labels,
   label.probabilityRule,
   label.shapedEntropy,
   label.probabilities,
   label.decision,
+  tolerance.serMap,
+  tolerance.mapOutside,
+  tolerance.mapVanished,
   channel.channel,
   channel.ricianK,
   channel.nakagamiM,

@@ -1,27 +1,50 @@
 import { tolerances } from '../methods/tolerances'
-import { highOf, isInterval, lowOf, valueOf } from '../modulation/estimate'
+import { highOf, isInterval, lowOf, mapEstimate, valueOf } from '../modulation/estimate'
 import type { Estimate } from '../modulation/estimate'
 import type { CandidateValues } from '../schemas/values'
 import type { ColumnContext } from './column'
 import { estimateColumn, numberInput, shown, textInput, valueColumn } from './make'
-import type { Candidate } from '../schemas/candidates'
+import type { Candidate, CandidateInputs } from '../schemas/candidates'
 
 const group = 'Required SNR' as const
 const tolerance = tolerances.requiredDb
 
 const target = (context: ColumnContext) => shown(context.requirements?.target.value, '0.00e-0')
 
-const requiredLines = (v: CandidateValues, row: Candidate, context: ColumnContext) => row.inputs.basis === 'entered'
-  ? [`entered: ${shown(v.requiredEsN0Db)} dB`, row.inputs.enteredSource ? `source given: ${row.inputs.enteredSource}` : 'no source given']
-  : [
-      `smallest Es/N0 with exact SER ≤ ${target(context)}: ${shown(v.requiredEsN0Db)} dB`,
-      `M = ${shown(v.order, 'integer')}, d_min = ${shown(v.minimumDistance, '0.000')} at Es = 1, ${shown(v.relevantMean)} relevant and ${shown(v.nearestMean)} nearest neighbours on average`,
+const rateNames = { bitMetricRate: 'bit-metric rate', mutualInformation: 'mutual information' } as const
+const errorNames = { serExact: 'exact SER', serUnion: 'SER by the union bound', berExact: 'exact BER' } as const
+
+/** Of a rate threshold: the threshold with the decoder's gap, and what the target asks before decoding. */
+const thresholdLines = (v: CandidateValues, kind: keyof typeof rateNames, { decoderGapDb }: CandidateInputs, { requirements }: ColumnContext) => requirements?.target.stage === 'beforeDecoding'
+  ? [
+      `the ${rateNames[kind]} reaches R = ${shown(v.netBits, '0.000')} bit/symbol, ${shown(decoderGapDb)} dB of decoder gap are added`,
+      `the target holds before decoding: the greater of that and the Es/N0 at which the error rate meets it counts, ${shown(v.requiredEsN0Db)} dB`,
     ]
+  : [
+      `the ${rateNames[kind]} reaches R = ${shown(v.netBits, '0.000')} bit/symbol at ${shown(v.requiredEsN0Db === null ? null : mapEstimate(v.requiredEsN0Db, db => db - (decoderGapDb ?? 0)))} dB`,
+      `with the decoder gap of ${shown(decoderGapDb)} dB: ${shown(v.requiredEsN0Db)} dB`,
+    ]
+
+const errorLines = (v: CandidateValues, kind: keyof typeof errorNames, context: ColumnContext) => [
+  `smallest Es/N0 with ${errorNames[kind]} ≤ ${target(context)}: ${shown(v.requiredEsN0Db)} dB`,
+  ...v.crossedMoreThanOnce ? ['the error rate crosses the target more than once: the largest such Es/N0 counts, above which it stays at or below'] : [],
+  ...v.errorFloor === null ? [] : [`the error rate never falls below its floor of ${shown(v.errorFloor, '0.00e-0')}`],
+  `M = ${shown(v.order, 'integer')}, d_min = ${shown(v.minimumDistance, '0.000')} at Es = 1, ${shown(v.relevantMean)} relevant and ${shown(v.nearestMean)} nearest neighbours on average`,
+]
+
+const requiredLines = (v: CandidateValues, { inputs }: Candidate, context: ColumnContext) => {
+  switch (v.requiredBy) {
+    case 'entered': return [`entered: ${shown(v.requiredEsN0Db)} dB`, inputs.enteredSource ? `source given: ${inputs.enteredSource}` : 'no source given']
+    case 'bitMetricRate':
+    case 'mutualInformation': return thresholdLines(v, v.requiredBy, inputs, context)
+    default: return errorLines(v, v.requiredBy, context)
+  }
+}
 
 export const requiredEsN0 = valueColumn('requiredEsN0Db', '0.00', {
   id: 'requiredEsN0', method: 'requiredSnr', title: 'Required Es/N0', unit: 'dB', group, firstOpening: true, width: 19,
   meaning: 'Smallest Es/N0 above which the error rate stays at or below the study\'s target, on the row\'s basis.',
-  formula: 'smallest Es/N0 with SER(Es/N0) ≤ target', source: 'Methods §4; exact SER by Craig 1991', tolerance,
+  formula: 'smallest Es/N0 with SER or BER ≤ target; or rate threshold + decoder gap; or as entered', source: 'Methods §4; exact SER by Craig 1991', tolerance,
   lines: requiredLines,
 })
 

@@ -1,4 +1,5 @@
 import type { Candidate } from '#shared/schemas/candidates'
+import type { PartName } from '#shared/schemas/parts'
 import type { CandidateValues } from '#shared/schemas/values'
 import { formatEstimate, formatNumber, plain, plainEstimate } from '#shared/columns'
 import type { Column, ColumnContext } from '#shared/columns'
@@ -15,12 +16,24 @@ export function errorAt(row: Candidate, column: Column): string | null {
   return row.errors.find(error => column.fields.some(field => error.path.split('.')[0] === field))?.message ?? null
 }
 
-const failure = (row: Candidate) => row.errors[0]?.message ?? 'This row cannot be computed.'
+const failure = (row: Candidate, column: Column) => {
+  const errors = row.state === 'failed' || column.kind === 'input' || !column.part ? row.errors : row.parts[column.part]?.errors ?? []
+  return errors[0]?.message ?? 'This row cannot be computed.'
+}
+
+/** Of a column that is computed when it is shown: a row without points has none, another one computes it as soon as it is asked. */
+const partLacking = (row: Candidate, part: PartName): 'computing' | 'failed' | null => {
+  if (row.inputs.family === 'entered') return null
+  const state = row.parts[part]?.state ?? 'computing'
+  return state === 'computed' ? null : state
+}
 
 /** Whether a computed cell has no fresh number, and why. */
 const lacking = ({ row, column, stale }: CellView): 'computing' | 'failed' | null => {
   if (column.kind === 'input') return null
-  return stale || row.state === 'computing' ? 'computing' : row.state === 'failed' ? 'failed' : null
+  if (stale || row.state === 'computing') return 'computing'
+  if (row.state === 'failed') return 'failed'
+  return column.part ? partLacking(row, column.part) : null
 }
 
 /** Where only an interval of the cell's number is known: that. */
@@ -32,7 +45,7 @@ export function cellText(view: CellView): string {
   const { row, column, context, save } = view
   if (save) return save.text
   const without = lacking(view)
-  if (without === 'failed' && column.id === 'verdict') return `cannot be computed: ${failure(row)}`
+  if (without === 'failed' && column.id === 'verdict') return `cannot be computed: ${failure(row, column)}`
   if (without) return without
   const interval = intervalOf(view)
   if (interval) return formatEstimate(interval, column.format, column.round)
@@ -62,7 +75,7 @@ export function cellSentence(view: CellView): string | null {
   if (save?.state === 'refused') return save.sentence + kept(row, column)
   if (save) return save.state === 'saving' ? 'Being saved.' : save.sentence
   const without = lacking(view)
-  if (without === 'failed') return failure(row)
+  if (without === 'failed') return failure(row, column)
   if (without === 'computing') return 'Being computed.'
   return errorAt(row, column) ?? (column.kind === 'input' ? column.unused?.(row.inputs) ?? null : null)
 }

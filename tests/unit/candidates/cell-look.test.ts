@@ -27,6 +27,17 @@ describe('a cell of an estimate', () => {
   it('says that it is an estimate', () => expect(cellHint(view('requiredEsN0', { row }))).toBe('An estimate: (20.79…20.91) 20.84'))
 })
 
+describe('a cell that is computed when it is shown', () => {
+  const row = sampleRow({})
+  const failing = { state: 'failed' as const, values: null, errors: [{ path: 'labels', message: 'A bit error rate needs labels.' }] }
+  it('is its number once computed', () => expect(cellText(view('berExact', { row }))).toBe('2.50e−10'))
+  it('says computing before anybody has asked', () => expect(cellText(view('berExact', { row: { ...row, parts: {} } }))).toBe('computing'))
+  it('fails alone', () => expect(cellText(view('berExact', { row: { ...row, parts: { bits: failing } } }))).toBe('failed'))
+  it('says why it failed', () => expect(cellSentence(view('berExact', { row: { ...row, parts: { bits: failing } } }))).toBe('A bit error rate needs labels.'))
+  it('leaves other cells of its row alone', () => expect(cellText(view('papr', { row: { ...row, parts: { bits: failing } } }))).toBe('2.55'))
+  it('is blank in an entered row', () => expect(cellText(view('berExact', { row: { ...sampleRow({}, { family: 'entered' }), parts: {} } }))).toBe(''))
+})
+
 describe('marks of a cell', () => {
   it('tell an input from a computed cell', () => expect([cellClasses(view('name'))[0], cellClasses(view('papr'))[0]]).toEqual(['cell-input', 'cell-computed']))
   it('do not look saved while saving', () => expect(cellClasses(view('order', { save: { state: 'saving', text: '64' } }))).toContain('cell-saving'))
