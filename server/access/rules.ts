@@ -82,6 +82,9 @@ export const rules = {
   'GET /api/studies/:id/export.json': reads('study'),
 
   'POST /api/evaluate': 'signedIn',
+
+  'GET /api/methods': 'signedIn',
+  'GET /api/methods/checks': 'signedIn',
 } satisfies Record<string, Rule>
 
 /** Key of a route: its method and its path. */

@@ -1,7 +1,9 @@
+import { checkOutcomes } from '#shared/methods/checks'
 import { evaluate, ModulationError } from '#shared/modulation'
 import type { EvaluationRequest } from '#shared/modulation'
 import { drawConstellation } from './draw-constellation'
 import { evaluateCandidate } from './evaluate-candidate'
+import { evaluatePart } from './evaluate-part'
 import type { Task, Tasks } from './tasks'
 
 function evaluation(request: EvaluationRequest): Tasks['evaluation']['answer'] {
@@ -17,7 +19,9 @@ function evaluation(request: EvaluationRequest): Tasks['evaluation']['answer'] {
 export default function work(task: Task): Tasks[Task['kind']]['answer'] {
   switch (task.kind) {
     case 'rows': return task.asked.map(evaluateCandidate)
+    case 'part': return task.asked.rows.map(inputs => evaluatePart(task.asked.part, inputs))
     case 'evaluation': return evaluation(task.asked)
+    case 'checks': return checkOutcomes()
     case 'constellation': return drawConstellation(task.asked)
   }
 }

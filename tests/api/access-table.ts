@@ -60,6 +60,8 @@ export const expected: Record<Route, Answers> = {
   'GET /api/studies/:id/export.csv': reads,
   'GET /api/studies/:id/export.json': reads,
   'POST /api/evaluate': signedIn,
+  'GET /api/methods': signedIn,
+  'GET /api/methods/checks': signedIn,
 }
 
 /** What the framework answers beside the API and the pages' shell: its error page, and server-rendered islands, of which there are none. */
