@@ -98,7 +98,7 @@ export class PieceIntegral {
 }
 
 /** Length in v of a piece, from the sinh of the difference of its ends, without subtracting them. */
-function spanOf(h: number, a: number, b: number): number {
+export function spanOf(h: number, a: number, b: number): number {
   return Math.asinh((b - a) * (b + a) / (b * Math.hypot(h, a) + a * Math.hypot(h, b)))
 }
 

@@ -1,0 +1,73 @@
+import { ModulationError, requireNoiseDensity } from './errors'
+import { fadingOf } from './fading'
+import type { Channel, Fading } from './fading'
+import { fadedPiece } from './fading-edge'
+import { FadedPairwise } from './fading-pairwise'
+import type { Geometry } from './geometry'
+import { pairDistancesOf } from './pair-distances'
+import type { PairDistances } from './pair-distances'
+import { symbolErrorRates } from './symbol-error'
+import type { SymbolErrorKind } from './symbol-error'
+import { serExactCurve } from './symbol-error-exact'
+
+/**
+ * Mean symbol error rates of minimum-distance decisions over many noise densities on a fading channel: the bounds and the approximation
+ * in any dimension, the exact rate in one or two.
+ * @param geometry decision regions, from analyse
+ * @param kind bound, approximation or exact
+ * @param n0s noise densities N0 above 0, signal units squared; Es/N0 is the mean SNR of a branch
+ * @param channel fading, or AWGN
+ * @returns one for each of n0s, to 1e-9 relative; bounds may exceed 1
+ * @throws ModulationError with path ['n0'], ['dimensions'] for the exact rate of more than two, or the field of the channel that is wrong
+ * @see methods §6; Simon and Alouini, Digital Communication over Fading Channels, ch. 8
+ */
+export function serFadingCurve(geometry: Geometry, kind: SymbolErrorKind, n0s: ArrayLike<number>, channel: Channel): Float64Array {
+  for (let s = 0; s < n0s.length; s++) requireNoiseDensity(n0s[s]!)
+  if (channel.kind === 'awgn') {
+    return kind === 'serExact' ? serExactCurve(geometry, n0s) : Float64Array.from(n0s, n0 => symbolErrorRates[kind](geometry, n0))
+  }
+  const fading = fadingOf(channel)
+  const pairwise = new FadedPairwise(fading)
+  switch (kind) {
+    case 'serExact': return exact(geometry, n0s, fading, pairwise)
+    case 'serNearest': return Float64Array.from(n0s, n0 => geometry.nearestMean * pairwise.at(geometry.minimumDistance ** 2 / (4 * n0)))
+    case 'serUnion': return sumsOverPairs(neighboursOf(geometry), n0s, pairwise)
+    case 'serAllPairs': return sumsOverPairs(pairDistancesOf(geometry.constellation), n0s, pairwise)
+  }
+}
+
+/**
+ * Mean symbol error rate at one noise density on a fading channel; as serFadingCurve.
+ * @param n0 noise density N0 above 0, signal units squared
+ */
+export function serFading(geometry: Geometry, kind: SymbolErrorKind, n0: number, channel: Channel): number {
+  return serFadingCurve(geometry, kind, [n0], channel)[0]!
+}
+
+/** Σ w·E Q(d/√(2·N0)) over pairs for each noise density. */
+export function sumsOverPairs({ square, weight }: PairDistances, n0s: ArrayLike<number>, pairwise: FadedPairwise): Float64Array {
+  return Float64Array.from(n0s, (n0) => {
+    let sum = 0
+    for (let n = 0; n < square.length; n++) sum += weight[n]! * pairwise.at(square[n]! / (4 * n0))
+    return sum
+  })
+}
+
+function neighboursOf({ distanceClasses: { distance, weight }, minimumDistance }: Geometry): PairDistances {
+  return { least: minimumDistance ** 2, square: distance.map(d => d * d), weight }
+}
+
+/** Cells' edges, congruent ones once: no piece is too far away, as a fade may always be deep enough. */
+function exact({ constellation, pieces: { h, a, b, weight } }: Geometry, n0s: ArrayLike<number>, fading: Fading, pairwise: FadedPairwise) {
+  if (constellation.dimensions > 2) {
+    throw new ModulationError('The exact symbol error rate with fading is offered for one and two dimensions: use the bound.', ['dimensions'])
+  }
+  return Float64Array.from(n0s, (n0) => {
+    let sum = 0
+    for (let n = 0; n < h.length; n++) {
+      const wedge = a[n] === 0 && b[n] === Infinity ? pairwise.at(h[n]! * h[n]! / n0) / 2 : fadedPiece(fading, h[n]!, a[n]!, b[n]!, n0)
+      sum += weight[n]! * wedge
+    }
+    return sum
+  })
+}
