@@ -34,7 +34,7 @@ interface Near { offsets: Int32Array, neighbours: Int32Array, weights: Float64Ar
 export function nearGrayWords(points: readonly ArrayLike<number>[], starts: readonly (readonly number[])[]): Uint16Array {
   const near = nearPairs(points)
   const random = seededRandom(points.length)
-  let best = new Uint16Array()
+  let best: Uint16Array = new Uint16Array()
   let least = Infinity
   const consider = (words: Uint16Array) => {
     improve(words, near)
@@ -43,7 +43,7 @@ export function nearGrayWords(points: readonly ArrayLike<number>[], starts: read
   }
   for (const start of starts) consider(Uint16Array.from(start))
   const shakes = Math.min(mostShakes, Math.floor(shaking / points.length ** 2))
-  for (let n = 0; n < shakes; n++) consider(shake(best, random))
+  for (let n = 0; n < shakes; n++) consider(shaken(best, random))
   return best
 }
 
@@ -142,7 +142,7 @@ function improve(words: Uint16Array, near: Near): void {
 }
 
 /** A copy with a few labels, an eighth of them and at least three, passed on in a ring. */
-function shake(words: Uint16Array, random: Random): Uint16Array {
+export function shaken(words: Uint16Array, random: Random): Uint16Array {
   const copy = words.slice()
   const count = Math.min(words.length, Math.max(3, words.length >> 3))
   const chosen = Array.from({ length: count }, () => Math.floor(random() * words.length))
