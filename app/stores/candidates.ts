@@ -1,5 +1,6 @@
 import type { Candidate, CandidateChange } from '#shared/schemas/candidates'
 import type { StudyEvent } from '#shared/schemas/events'
+import type { PartName, PartsRequest } from '#shared/schemas/parts'
 import type { Sweep, SweepCreation } from '#shared/schemas/sweeps'
 import type { ColumnContext } from '#shared/columns'
 import { RowList, isNewer } from '~/utils/candidates/row-list'
@@ -195,6 +196,11 @@ export const useCandidatesStore = defineStore('candidates', () => {
     tell({ structure: false, ids: [id] })
   }
 
+  /** Has a part of rows computed where it is missing; the rows follow as events. */
+  const askParts = async (part: PartName, ids: string[]) => {
+    await api.post(`/api/studies/${studyId.value}/parts`, { part, ids } satisfies PartsRequest)
+  }
+
   const startSweep = async (definition: SweepCreation) => {
     takeSweep(await api.post<Sweep>(`/api/studies/${studyId.value}/sweeps`, definition))
   }
@@ -204,6 +210,6 @@ export const useCandidatesStore = defineStore('candidates', () => {
 
   return {
     studyId, rows, loading, loadError, loaded, sweeps, runningSweeps, selectedId, selected, pinned, reference, context,
-    byId, rowNow, placeOf, pinOf, onRows, begin, load, applyEvent, adopt, change, create, duplicate, remove, restore, move, setPinned, startSweep, cancelSweep,
+    byId, rowNow, placeOf, pinOf, onRows, begin, load, applyEvent, adopt, change, create, duplicate, remove, restore, move, setPinned, askParts, startSweep, cancelSweep,
   }
 })

@@ -5,6 +5,7 @@ import type { Column } from '#shared/columns'
 import { isEditable } from './cell-look'
 import type { CellView } from './cell-look'
 import type { CellLook } from './cell-looks'
+import { characterPx, paddingPx } from './cell-size'
 import type { ColumnSet } from './column-set'
 import { GridEditor } from './grid-editor'
 import { GridHeader } from './grid-header'
@@ -23,8 +24,6 @@ export type GridSeams = Pick<HeaderParams, 'sort' | 'onSort'> & {
 
 /** Id of the row numbers' column; it is no column of the study. */
 export const placeColumn = 'place'
-const characterPx = 7.3
-const paddingPx = 18
 /** a number with its sign, or its row's state in a word */
 const shortestNumber = 9
 
