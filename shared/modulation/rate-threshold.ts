@@ -6,6 +6,7 @@ import type { Estimate } from './estimate'
 import { highOf, isInterval, lowOf, valueOf } from './estimate'
 import { ratesOf } from './information'
 import type { InformationRateKind } from './information'
+import { defaultDraws } from './information-simulated'
 import type { InformationSimulation } from './information-simulated'
 
 /** Range of the search, dB. */
@@ -15,6 +16,10 @@ const highest = 90
 const tolerance = 1e-6
 /** Either side of a simulated threshold, dB, from which the rate's slope is taken. */
 const slopeSpan = 0.25
+/** A simulated threshold is found with so many times fewer draws, and then refined with all of them, until it moves by less, in dB. */
+const fewer = 16
+const moved = 1e-4
+const refinements = 3
 /** R this close to H, relative to it, is H: it was rounded. */
 const rounding = 1e-12
 
@@ -33,21 +38,28 @@ const rounding = 1e-12
 export function rateThresholdDb(
   constellation: Constellation, kind: InformationRateKind, netBits: number, simulation?: InformationSimulation,
 ): Estimate {
-  const { entropy, meanEnergy, dimensions } = constellation
+  const { order, entropy, meanEnergy, dimensions } = constellation
   if (!(netBits > 0)) throw new ModulationError('Net bits per symbol are a number above 0.', ['netBits'])
   if (netBits >= entropy * (1 - rounding)) {
     throw new ModulationError(
       'A rate threshold needs a code rate below 1: only without noise does a symbol carry all bits that the points hold.', ['netBits'])
   }
-  const lost = (db: number, part: (estimate: Estimate) => number) =>
-    Math.log((entropy - part(ratesOf(constellation, kind, [meanEnergy / fromDecibels(db)], simulation)[0]!)) / (entropy - netBits))
-  const excess = (db: number) => lost(db, valueOf)
-  const db = root(excess, ...bracket(excess, decibels(esN0ForCapacity(netBits, dimensions))))
+  const estimate = (db: number, how = simulation) => ratesOf(constellation, kind, [meanEnergy / fromDecibels(db)], how)[0]!
+  const excess = (rate: number) => Math.log((entropy - rate) / (entropy - netBits))
+  // Few draws find the place and the slope; where the rate is a number they do not matter.
+  const few = { ...simulation, draws: Math.round((simulation?.draws ?? defaultDraws(order)) / fewer) }
+  const roughly = (db: number) => excess(valueOf(estimate(db, few)))
+  let db = root(roughly, ...bracket(roughly, decibels(esN0ForCapacity(netBits, dimensions))))
+  let rate = estimate(db)
+  if (!isInterval(rate)) return db
 
-  if (!isInterval(ratesOf(constellation, kind, [meanEnergy / fromDecibels(db)], simulation)[0]!)) return db
-  const slope = (excess(db + slopeSpan) - excess(db - slopeSpan)) / (2 * slopeSpan)
-  const within = (end: number) => Math.min(highest, Math.max(lowest, end))
-  return { value: db, low: within(db - lost(db, highOf) / slope), high: within(db - lost(db, lowOf) / slope) }
+  const slope = (roughly(db + slopeSpan) - roughly(db - slopeSpan)) / (2 * slopeSpan)
+  for (let step = 0; step < refinements && Math.abs(excess(valueOf(rate)) / slope) > moved; step++) {
+    db -= excess(valueOf(rate)) / slope
+    rate = estimate(db)
+  }
+  const at = (end: number) => Math.min(highest, Math.max(lowest, db - excess(end) / slope))
+  return { value: at(valueOf(rate)), low: at(highOf(rate)), high: at(lowOf(rate)) }
 }
 
 /** Two SNR values in dB between which the excess falls through 0, from a lower bound on. */
