@@ -1,5 +1,6 @@
 import type { MethodId } from '../index'
 import { bitErrorChecks } from './bit-error'
+import { channelChecks } from './channels'
 import type { Check } from './check'
 import { allowedOf, publishedOf } from './check'
 import { energyChecks } from './energies'
@@ -14,7 +15,7 @@ export type { Check } from './check'
 
 /** Every published value that the build is held against. A new one is an entry in the file of its subject. */
 const all: readonly Check[] = [
-  ...energyChecks, ...gaussianChecks, ...geometryChecks, ...symbolErrorChecks, ...bitErrorChecks, ...informationChecks, ...linkChecks,
+  ...energyChecks, ...gaussianChecks, ...geometryChecks, ...symbolErrorChecks, ...bitErrorChecks, ...informationChecks, ...channelChecks, ...linkChecks,
 ]
 
 /** The checks with ids of their own: the method, and a number within it. */
