@@ -1,13 +1,16 @@
+import { bitErrorRates } from './bit-error'
+import type { BitErrorKind } from './bit-error'
 import type { Constellation } from './constellation'
 import { paprDb } from './constellation'
 import { fromDecibels } from './decibels'
 import { ModulationError } from './errors'
-import { evaluationCurves } from './evaluation-curves'
+import { evaluationCurves, needsLabels } from './evaluation-curves'
 import type { EvaluationCurves, EvaluationQuantity } from './evaluation-curves'
 import { familyOf, generate } from './families'
 import type { FamilyParameters } from './families'
 import { analyse } from './geometry'
 import type { Geometry } from './geometry'
+import { familyLabels } from './labels'
 import { requiredEsN0Db } from './required-snr'
 import { symbolErrorRates } from './symbol-error'
 import type { SymbolErrorKind } from './symbol-error'
@@ -16,11 +19,14 @@ export const evaluationQuantities = Object.keys(evaluationCurves) as EvaluationQ
 
 /** What to compute of one constellation, without a study around it. */
 export interface EvaluationRequest {
-  /** a family with its parameters (unit mean energy), or family 'custom' with points, taken as given */
+  /**
+   * a family with its parameters (unit mean energy), or family 'custom' with points, taken as given; without labels those of the family
+   * count, where a quantity needs some
+   */
   constellation: FamilyParameters & { family: string, labels?: string[] | null, probabilities?: number[] | null }
   /** SNR values, dB */
   esN0Db: readonly number[]
-  /** left out: no required Es/N0 */
+  /** a symbol error rate ('ser') or a bit error rate ('ber'); left out: no required Es/N0 */
   target?: { quantity: string, value: number } | null
   /** left out: union bound, nearest-neighbour approximation and exact SER */
   quantities?: readonly string[] | null
@@ -37,10 +43,13 @@ export interface Evaluation {
   minimumDistance: number
   neighbours: { relevantMean: number, nearestMean: number, relevant: number[][] }
   curves: { esN0Db: number[] } & Partial<EvaluationCurves>
-  /** of the error rates among the quantities */
-  requiredEsN0Db?: Partial<Record<SymbolErrorKind, number>>
+  /** of the quantities that are error rates of the target's kind */
+  requiredEsN0Db?: Partial<Record<ErrorKind, number>>
 }
 
+type ErrorKind = SymbolErrorKind | BitErrorKind
+
+const targetRates = { ser: symbolErrorRates, ber: bitErrorRates }
 const defaultQuantities: SymbolErrorKind[] = ['serUnion', 'serNearest', 'serExact']
 
 /**
@@ -53,17 +62,18 @@ export function evaluate(request: EvaluationRequest): Evaluation {
     if (!(Math.abs(db) <= 300)) throw new ModulationError('An Es/N0 value is from −300 to 300 dB.', ['esN0Db', n])
   })
   const { target } = request
-  if (target && target.quantity !== 'ser') throw new ModulationError('The target is a symbol error rate (ser).', ['target', 'quantity'])
-  const constellation = within(path => ['constellation', ...path], () => requestedConstellation(request.constellation))
+  const targeted = target ? targetedKinds(target.quantity, quantities) : []
+  const constellation = within(path => ['constellation', ...path], () => requestedConstellation(request.constellation, quantities.some(needsLabels)))
   const geometry = within(() => ['constellation', 'points'], () => analyse(constellation))
   const n0s = request.esN0Db.map(db => constellation.meanEnergy / fromDecibels(db))
 
   const curves: Evaluation['curves'] = { esN0Db: [...request.esN0Db] }
-  const required: Partial<Record<SymbolErrorKind, number>> = {}
-  for (const quantity of quantities) {
-    within(path => ['constellation', ...path], () => addCurve(curves, quantity, geometry, n0s))
-    if (!target || !isErrorRate(quantity)) continue
-    required[quantity] = within(() => ['target', 'value'], () => requiredEsN0Db({ geometry, kind: quantity }, target.value))
+  const required: Partial<Record<ErrorKind, number>> = {}
+  quantities.forEach((quantity, n) => {
+    within(path => path[0] === 'dimensions' ? ['quantities', n] : ['constellation', ...path], () => addCurve(curves, quantity, geometry, n0s))
+  })
+  for (const kind of targeted) {
+    required[kind] = within(() => ['target', 'value'], () => requiredEsN0Db({ geometry, kind }, target!.value))
   }
   const { offsets, neighbours, relevantMean, nearestMean, minimumDistance } = geometry
   const { order, dimensions, bitsPerSymbol, meanEnergy, peakEnergy } = constellation
@@ -82,7 +92,17 @@ function addCurve<Q extends EvaluationQuantity>(curves: Partial<EvaluationCurves
   curves[quantity] = evaluationCurves[quantity](geometry, n0s)
 }
 
-const isErrorRate = (quantity: EvaluationQuantity): quantity is SymbolErrorKind => quantity in symbolErrorRates
+/** The quantities that the target speaks of. */
+function targetedKinds(targetQuantity: string, quantities: readonly EvaluationQuantity[]): ErrorKind[] {
+  if (targetQuantity !== 'ser' && targetQuantity !== 'ber') {
+    throw new ModulationError('The target is a symbol error rate (ser) or a bit error rate (ber).', ['target', 'quantity'])
+  }
+  const kinds = quantities.filter((quantity): quantity is ErrorKind => quantity in targetRates[targetQuantity])
+  if (targetQuantity === 'ber' && kinds.length === 0) {
+    throw new ModulationError(`A bit error rate as target needs one among the quantities: ${Object.keys(bitErrorRates).join(', ')}.`, ['target', 'quantity'])
+  }
+  return kinds
+}
 
 function checkedQuantities(quantities: readonly string[]): EvaluationQuantity[] {
   return quantities.map((quantity, n) => {
@@ -92,8 +112,9 @@ function checkedQuantities(quantities: readonly string[]): EvaluationQuantity[] 
   })
 }
 
-function requestedConstellation({ family, labels, probabilities, ...parameters }: EvaluationRequest['constellation']): Constellation {
-  return generate(familyOf(family).id, parameters, { labels, probabilities })
+function requestedConstellation({ family, labels, probabilities, ...parameters }: EvaluationRequest['constellation'], labelled: boolean): Constellation {
+  const { id } = familyOf(family)
+  return generate(id, parameters, { labels: labels ?? (labelled ? familyLabels(id, parameters) : null), probabilities })
 }
 
 /** Runs a part of the work; a refusal's path becomes one of the request. */

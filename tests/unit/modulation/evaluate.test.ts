@@ -38,13 +38,32 @@ describe('an evaluation', () => {
   it('survives JSON', () => expect(JSON.parse(JSON.stringify(answer))).toEqual(answer))
 })
 
+describe('an evaluation of bit error rates', () => {
+  const kinds = ['berAllPairs', 'berNearest', 'berExact']
+  const qpsk = evaluate({ constellation: { family: 'psk', order: 4 }, esN0Db: [10], target: { quantity: 'ber', value: 1e-5 }, quantities: ['serExact', ...kinds] })
+  it('has their curves beside others', () => expect(Object.keys(qpsk.curves)).toEqual(['esN0Db', 'serExact', ...kinds]))
+  // Q(√10)
+  it('gives a family its own labels', () => expect(qpsk.curves.berExact![0]).toBeCloseTo(7.82701129001e-4, 12))
+  it('requires Es/N0 of them alone when the target is one', () => expect(Object.keys(qpsk.requiredEsN0Db!)).toEqual(kinds))
+  // Binary PSK at 9.588 dB, and two bits a symbol
+  it('finds it', () => expect(qpsk.requiredEsN0Db!.berExact).toBeCloseTo(9.588 + 3.010, 3))
+  it('prefers labels that are given', () => {
+    const natural = evaluate({ constellation: { family: 'psk', order: 4, labels: ['00', '01', '10', '11'] }, esN0Db: [10], quantities: ['berNearest'] })
+    expect(natural.curves.berNearest![0]! / evaluate({ constellation: { family: 'psk', order: 4 }, esN0Db: [10], quantities: ['berNearest'] }).curves.berNearest![0]!).toBeCloseTo(1.5, 12)
+  })
+})
+
 describe('a refused evaluation names the field', () => {
   const cases: [string, Partial<EvaluationRequest>, (string | number)[]][] = [
     ['family', { constellation: { family: 'spiral' } }, ['constellation', 'family']],
     ['order', { constellation: { family: 'psk', order: 1 } }, ['constellation', 'order']],
     ['coincident points', { constellation: { family: 'custom', points: [[0, 1], [0, 1]] } }, ['constellation', 'points', 1]],
     ['three dimensions', { constellation: { family: 'custom', points: [[0, 1, 2], [0, 1, 3]] } }, ['constellation', 'points']],
-    ['quantity', { quantities: ['serExact', 'berExact'] }, ['quantities', 1]],
+    ['quantity', { quantities: ['serExact', 'berGuessed'] }, ['quantities', 1]],
+    ['labels for a bit error rate', { constellation: { family: 'custom', points }, quantities: ['berExact'] }, ['constellation', 'labels']],
+    ['labels for six points', { constellation: { family: 'psk', order: 6 }, quantities: ['berNearest'] }, ['constellation', 'labels']],
+    ['target of neither kind', { target: { quantity: 'fer', value: 1e-3 } }, ['target', 'quantity']],
+    ['target of a bit error rate without one', { target: { quantity: 'ber', value: 1e-3 } }, ['target', 'quantity']],
     ['SNR', { esN0Db: [1, NaN] }, ['esN0Db', 1]],
     ['labels', { constellation: { family: 'custom', points }, quantities: ['bitMetricRate'] }, ['constellation', 'labels']],
     ['target', { target: { quantity: 'ser', value: 0.95 } }, ['target', 'value']],
