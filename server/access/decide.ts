@@ -9,7 +9,7 @@ const list = new Intl.ListFormat('en-GB', { type: 'conjunction' })
 const plural: Record<StudyRole, string> = { owner: 'owners', editor: 'editors', reviewer: 'reviewers', observer: 'observers' }
 
 /** Calls of a token that may only read: reading, and computing without saving. */
-const readsOnly = (route: string) => route.startsWith('GET ') || route === 'POST /api/evaluate'
+const readsOnly = (route: string) => route.startsWith('GET ') || route === 'POST /api/evaluate' || route === 'POST /api/studies/:id/parts'
 
 /**
  * Decides whether a caller may have a route.

@@ -66,6 +66,8 @@ export const rules = {
   'POST /api/studies/:id/candidates/restore': edits('study'),
   'POST /api/studies/:id/candidates/duplicate': edits('study'),
   'POST /api/studies/:id/candidates/move': edits('study'),
+  // Whoever reads a column has it computed: nothing of the study changes.
+  'POST /api/studies/:id/parts': reads('study'),
   'PUT /api/studies/:id/pins': edits('study'),
   'GET /api/candidates/:id': reads('candidate'),
   'PATCH /api/candidates/:id': edits('candidate'),

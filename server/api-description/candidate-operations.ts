@@ -3,7 +3,8 @@ import { candidate, candidateChange, candidateMove, candidateSelection, candidat
 import { listOf, pageQuery } from '#shared/schemas/common'
 import { evaluation, evaluationAnswer } from '#shared/schemas/evaluate'
 import { startedSweep, sweep, sweepCancellation, sweepCreation } from '#shared/schemas/sweeps'
-import { candidateConstellation, candidateCurves } from '#shared/schemas/values'
+import { partsAnswer, partsRequest } from '#shared/schemas/parts'
+import { bitErrorCurves, candidateConstellation, candidateCurves, curvesQuery, informationCurves } from '#shared/schemas/values'
 import { tagged } from './operation'
 
 const stale = 'The row has another version now; `current` is the row as it is, `sent` the change.'
@@ -26,8 +27,15 @@ export const candidateOperations = tagged('Candidates', {
     body: candidateChange, answer: candidate, versioned: true, refusals: { 409: stale },
   },
   'DELETE /api/candidates/:id': { summary: 'Deletes a row; it can be restored.', status: 204, versioned: true, refusals: { 409: stale } },
-  'GET /api/candidates/:id/curves': { summary: 'SER of a row over its SNR range.', answer: candidateCurves },
-  'GET /api/candidates/:id/constellation': { summary: 'Points, decision cells and neighbours of a row at unit mean energy.', answer: candidateConstellation },
+  'POST /api/studies/:id/parts': {
+    summary: 'Has columns that need heavy work (bit error rates, information rates, tolerances, frames, lower bounds, MAP) computed for rows that lack them; rows carry what there is of them in `parts`, and follow as events.',
+    body: partsRequest, status: 202, answer: partsAnswer,
+  },
+  'GET /api/candidates/:id/curves': {
+    summary: 'Curves of a row over its SNR range: SER, BER, or information rates. A row that lacks labels has no BER: 422 names the remedy.',
+    query: curvesQuery, answer: z.union([candidateCurves, bitErrorCurves, informationCurves]), refusals: { 422: 'The row lacks what the curves need, such as labels.' },
+  },
+  'GET /api/candidates/:id/constellation': { summary: 'Points, labels, decision cells, and neighbours with their shares of the bound, of a row at unit mean energy; with each point\'s error probability at the available Es/N0.', answer: candidateConstellation },
 })
 
 export const sweepOperations = tagged('Sweeps', {

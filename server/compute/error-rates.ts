@@ -1,6 +1,6 @@
-import { berExactCurve, bitErrorRates, requiredEsN0Db, serExactCurve } from '#shared/modulation'
+import { berExactCurve, berMap, bitErrorRates, requiredSnr, serExactCurve, serMap, serMapUnion } from '#shared/modulation'
+import type { BitErrorKind, Constellation, Estimate, Geometry, RequiredSnr, SymbolErrorKind } from '#shared/modulation'
 import { symbolErrorRates } from '#shared/modulation/symbol-error'
-import type { BitErrorKind, Estimate, Geometry, SymbolErrorKind } from '#shared/modulation'
 import type { CanonicalInputs, CanonicalPoints } from '#shared/study/canonical-inputs'
 import { geometryOf, labelledGeometryOf, pointsKey } from './points'
 
@@ -29,25 +29,38 @@ export interface ErrorRate {
 
 const isBitError = (kind: ErrorKind): kind is BitErrorKind => kind in bitErrorRates
 
-const once = (esN0Db: Estimate): Required => ({ esN0Db, crossedMoreThanOnce: false, floor: null })
+const noted = ({ esN0Db, crossings, floor }: RequiredSnr): Required => ({ esN0Db, crossedMoreThanOnce: crossings > 1, floor })
 
 /** White Gaussian noise alone, decisions by minimum distance. */
 function plainRate(geometry: Geometry, kind: ErrorKind): ErrorRate {
-  if (isBitError(kind)) {
-    const rate = bitErrorRates[kind]
-    return {
-      rates: n0s => kind === 'berExact' ? [...berExactCurve(geometry, n0s)] : n0s.map(n0 => rate(geometry, n0)),
-      required: target => once(requiredEsN0Db({ rate: n0 => rate(geometry, n0), meanEnergy: geometry.constellation.meanEnergy }, target)),
-    }
-  }
+  const required = (target: number) => noted(requiredSnr({ geometry, kind }, target))
+  if (kind === 'serExact') return { rates: n0s => [...serExactCurve(geometry, n0s)], required }
+  if (kind === 'berExact') return { rates: n0s => [...berExactCurve(geometry, n0s)], required }
+  const rate = isBitError(kind) ? bitErrorRates[kind] : symbolErrorRates[kind]
+  return { rates: n0s => n0s.map(n0 => rate(geometry, n0)), required }
+}
+
+/** Any function of N0. */
+function givenRate({ meanEnergy }: Constellation, rate: (n0: number) => number, monotone: boolean): ErrorRate {
   return {
-    rates: n0s => kind === 'serExact' ? [...serExactCurve(geometry, n0s)] : n0s.map(n0 => symbolErrorRates[kind](geometry, n0)),
-    required: target => once(requiredEsN0Db({ geometry, kind }, target)),
+    rates: n0s => n0s.map(rate),
+    required: target => noted(requiredSnr({ rate, meanEnergy, monotone }, target)),
+  }
+}
+
+/** Maximum a posteriori decisions. */
+function mapRate({ constellation }: Geometry, kind: ErrorKind): ErrorRate | null {
+  switch (kind) {
+    case 'serExact': return givenRate(constellation, n0 => serMap(constellation, n0), true)
+    case 'berExact': return givenRate(constellation, n0 => berMap(constellation, n0), false)
+    case 'serUnion': return givenRate(constellation, n0 => serMapUnion(constellation, n0), false)
+    default: return null
   }
 }
 
 /** An error rate of a row by one way; null where that way does not exist for its decisions and its channel. */
 export function errorRateOf(model: RowModel, kind: ErrorKind): ErrorRate | null {
   const geometry = isBitError(kind) ? labelledGeometryOf(model.points) : geometryOf(model.points)
+  if (model.decision === 'map') return mapRate(geometry, kind)
   return plainRate(geometry, kind)
 }

@@ -1,6 +1,6 @@
 import { asymptoticEfficiencyDb, lowOf, mapEstimate, ModulationError, normalise, paprDb as paprOf, valueOf } from '#shared/modulation'
 import type { Estimate, SymbolErrorKind } from '#shared/modulation'
-import { ebN0Db, epkN0Db, evmPercentAt, gapToCapacityDb, netBitsPerSymbol, ratesOf } from '#shared/modulation/efficiency'
+import { ebN0Db, epkN0Db, evmPercentAt, gapToCapacityDb } from '#shared/modulation/efficiency'
 import { verdict } from '#shared/modulation/verdict'
 import type { Issue } from '#shared/schemas/common'
 import type { CandidateCurves, CandidateValues } from '#shared/schemas/values'
@@ -8,9 +8,10 @@ import type { CanonicalInputs } from '#shared/study/canonical-inputs'
 import { linkValues } from './link-values'
 import { symbolErrorCurves } from './curves'
 import { errorRateOf, modelOf } from './error-rates'
-import { backOffOf, geometryOf, noiseDensityAt } from './points'
+import { geometryOf, noiseDensityAt } from './points'
 import { requiredValues } from './required'
 import { rowPath } from './row-path'
+import { settingOf } from './setting'
 
 /** What is stored of a row's computation; values and curves are null when it has errors. */
 export interface Evaluated {
@@ -31,9 +32,6 @@ const noPoints: PointValues = {
   spacing: null, nearestMean: null, relevantMean: null,
 }
 
-/** An entered scheme counts as one symbol of two real dimensions, as on an I/Q carrier, at unit mean energy. */
-const enteredDimensions = 2
-
 function pointValues(points: Points): PointValues {
   const geometry = geometryOf(points)
   const { constellation, minimumDistance, nearestMean, relevantMean } = geometry
@@ -47,33 +45,15 @@ function pointValues(points: Points): PointValues {
   }
 }
 
-function backOffValues({ backOff, constellation, rollOff }: CanonicalInputs): Pick<CandidateValues, 'backOffDb' | 'backOffErrorDb'> {
-  if (backOff.by === 'entered' || !constellation) return { backOffDb: backOff.by === 'entered' ? backOff.db : 0, backOffErrorDb: null }
-  if (backOff.by === 'papr') return { backOffDb: paprOf(geometryOf(constellation).constellation), backOffErrorDb: null }
-  const { backOffDb, standardErrorDb } = backOffOf(constellation, rollOff, backOff.exceedance)
-  return { backOffDb, backOffErrorDb: standardErrorDb }
-}
-
-function netBitsOf({ netBits, constellation, codeRate }: CanonicalInputs): number {
-  if (netBits !== null || !constellation) return netBits!
-  const { entropy, bitsPerSymbol } = geometryOf(constellation).constellation
-  return netBitsPerSymbol(entropy, bitsPerSymbol, codeRate)
-}
-
 function compute(inputs: CanonicalInputs): CandidateValues {
   const { constellation, rollOff, implementationLossDb, study } = inputs
   const points = constellation ? pointValues(constellation) : noPoints
-  const dimensions = points.dimensions ?? enteredDimensions
-  const netBits = netBitsOf(inputs)
+  const setting = settingOf(inputs)
+  const { netBits, dimensions, backOff, rates: { symbolRateHz, occupiedBandwidthHz, netBitRateBps: netBitRate, spectralEfficiency } } = setting
   const required = requiredValues(inputs, netBits)
   const { requiredEsN0Db } = required
   const { paprDb } = points
-  const backOff = backOffValues(inputs)
-  const { overhead, dimensionsPerInterval, heldConstant } = study
-  const { symbolRateHz, occupiedBandwidthHz, netBitRateBps: netBitRate, spectralEfficiency } = ratesOf(
-    { heldConstant: heldConstant.kind, value: heldConstant.value }, { netBits, dimensions, rollOff, overhead, dimensionsPerInterval },
-  )
-  const link = linkValues(inputs, { requiredEsN0Db, backOffDb: backOff.backOffDb, symbolRateHz, meanEnergy: points.meanEnergy ?? 1 })
+  const link = linkValues(inputs, { requiredEsN0Db, backOffDb: backOff.backOffDb ?? 0, symbolRateHz, meanEnergy: setting.meanEnergy })
   const rates = errorRatesAt(inputs, link.availableEsN0Db)
   const judged = verdict({
     // At the unfavourable end of what is known.

@@ -2,6 +2,7 @@ import { and, isNotNull, lt } from 'drizzle-orm'
 import { useDatabase } from '../database/client'
 import { candidates } from '../database/schema'
 import { requeueRows } from './candidate-keys'
+import { requeueParts } from './parts'
 import { pruneEvents } from './stored-events'
 import { continueSweeps } from './sweeps'
 
@@ -14,12 +15,14 @@ const lookEvery = 60_000
 /** Takes up again what an ended server left behind: rows without results, sweeps that have not ended. */
 export async function recover(): Promise<void> {
   await requeueRows(0)
+  await requeueParts(0)
   await continueSweeps()
 }
 
 async function lookAfter() {
   const db = useDatabase()
   await requeueRows(overdue)
+  await requeueParts(overdue)
   await continueSweeps()
   await pruneEvents(db)
   await db.delete(candidates).where(and(isNotNull(candidates.deletedAt), lt(candidates.deletedAt, new Date(Date.now() - restorable))))

@@ -51,7 +51,8 @@ export const candidateValues = z.object({
   crossedMoreThanOnce: z.boolean(), errorFloor: n,
   requiredUnionEsN0Db: n, requiredAllPairsEsN0Db: n, requiredNearestEsN0Db: n,
   boundPenaltyDb: e, gapToCapacityDb: e, evmPercent: e,
-  backOffDb: z.number(), backOffErrorDb: n,
+  /** null where it is not used and cannot be simulated */
+  backOffDb: n, backOffErrorDb: n,
   symbolRateHz: z.number(), occupiedBandwidthHz: z.number(), netBitRate: z.number(), spectralEfficiency: z.number(),
   cases: z.array(caseValues),
   /** of the case that decides */
@@ -91,13 +92,25 @@ export type InformationCurves = z.infer<typeof informationCurves>
 export const curvesQuery = z.strictObject({ quantity: z.enum(['ser', 'ber', 'rate'], { error: 'The quantity is ser, ber or rate.' }).default('ser') })
 export type CurveQuantity = z.infer<typeof curvesQuery>['quantity']
 
-/** GET /api/candidates/{id}/constellation: what the close-up draws, at unit mean energy. */
+/**
+ * GET /api/candidates/{id}/constellation: what the close-up draws, at unit mean energy. Points of more than two dimensions are drawn by their
+ * first two coordinates, without cells.
+ */
 export const candidateConstellation = z.object({
+  dimensions: z.int(),
   points: z.array(z.array(z.number())),
   /** cell of each point as a polygon, clipped to the box */
   cells: z.array(z.array(z.array(z.number()))),
   box: z.number(),
-  neighbours: z.array(z.array(z.object({ point: z.int(), distance: z.number(), nearest: z.boolean() }))),
+  /** `share`: part of the point's own sum in the union bound at the row's available Es/N0 that this neighbour makes; null while that is not known */
+  neighbours: z.array(z.array(z.object({ point: z.int(), distance: z.number(), nearest: z.boolean(), share: n }))),
   minimumDistance: z.number(),
+  /** null where the points have none */
+  labels: z.array(z.string()).nullable(),
+  /** null: all 1/M */
+  probabilities: z.array(z.number()).nullable(),
+  /** symbol error probability of each point at the available Es/N0; null where it is not known by point */
+  errorByPoint: z.array(z.number()).nullable(),
+  availableEsN0Db: n,
 })
 export type CandidateConstellation = z.infer<typeof candidateConstellation>

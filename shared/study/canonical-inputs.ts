@@ -3,10 +3,10 @@ import type { CandidateInputs } from '../schemas/candidates'
 import type { Requirements, Target } from '../schemas/requirements'
 import { canonicalStudy } from './canonical-study'
 import type { CanonicalStudy } from './canonical-study'
-import { familyParameters } from './family-parameters'
+import { familyParameters, rowSize } from './family-parameters'
 import { decidesByMap } from './option-issues'
 
-export type CanonicalBackOff = { by: 'simulated', exceedance: number } | { by: 'entered', db: number } | { by: 'papr' }
+export type CanonicalBackOff = { by: 'simulated', exceedance: number } | { by: 'entered', db: number } | { by: 'papr' } | { by: 'none' }
 
 /** How the points come about, and what is not as usual about them: labels other than the family's, unequal probabilities. */
 export interface CanonicalPoints {
@@ -50,8 +50,12 @@ export interface CanonicalInputs {
   study: CanonicalStudy
 }
 
-function canonicalBackOff({ backOff, backOffDb, backOffExceedance }: CandidateInputs): CanonicalBackOff {
-  if (backOff === 'simulated') return { by: 'simulated', exceedance: backOffExceedance }
+/** A waveform is simulated for one and two dimensions: a row of more has no back-off where none counts, as mean power is the limit. */
+function canonicalBackOff(inputs: CandidateInputs, { limitedBy }: Requirements): CanonicalBackOff {
+  const { backOff, backOffDb, backOffExceedance } = inputs
+  if (backOff === 'simulated') {
+    return limitedBy === 'meanPower' && (rowSize(inputs).dimensions ?? 0) > 2 ? { by: 'none' } : { by: 'simulated', exceedance: backOffExceedance }
+  }
   return backOff === 'entered' ? { by: 'entered', db: backOffDb! } : { by: 'papr' }
 }
 
@@ -97,7 +101,7 @@ export function canonicalInputs(inputs: CandidateInputs, requirements: Requireme
     ...canonicalOptions(inputs, requirements),
     range: family === 'entered' ? { start: 0, stop: 0, step: 1 } : { start: snrStart, stop: snrStop, step: snrStep },
     rollOff: inputs.rollOff ?? requirements.rollOff,
-    backOff: canonicalBackOff(inputs),
+    backOff: canonicalBackOff(inputs, requirements),
     implementationLossDb: inputs.implementationLossDb ?? requirements.implementationLossDb,
     study: canonicalStudy(requirements),
   }

@@ -47,6 +47,7 @@ export const expected: Record<Route, Answers> = {
   'POST /api/studies/:id/candidates/restore': edits,
   'POST /api/studies/:id/candidates/duplicate': edits,
   'POST /api/studies/:id/candidates/move': edits,
+  'POST /api/studies/:id/parts': reads,
   'PUT /api/studies/:id/pins': edits,
   'GET /api/candidates/:id': reads,
   'PATCH /api/candidates/:id': edits,
