@@ -39,7 +39,8 @@ export function berAllPairs(constellation: Constellation, n0: number): number {
   return sumOverPairs(lastPairs.pairs, n0) / constellation.bitsPerSymbol
 }
 
-function neighboursOf({ constellation, minimumDistance, offsets, neighbours, distances }: Geometry): PairDistances {
+/** Distances of relevant neighbours, weighed with wrong bits. */
+export function neighboursOf({ constellation, minimumDistance, offsets, neighbours, distances }: Geometry): PairDistances {
   const words = labelWords(constellation)
   const weight = new Float64Array(neighbours.length)
   words.forEach((word, i) => {

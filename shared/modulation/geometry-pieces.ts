@@ -25,7 +25,7 @@ export interface Pieces {
 }
 
 /** Lengths that differ by less than this part of d_min are equal: it moves no error rate above 1e-30 by 1e-10. */
-const quantum = 1e-13
+export const quantum = 1e-13
 
 /**
  * Congruence classes of distances and of cut edges.
@@ -50,7 +50,8 @@ export function piecesOf(constellation: Constellation, facets: Facets): { distan
   }
 }
 
-interface Row { h: number, a: number, b: number, weight: number }
+/** A piece of an edge at distance h, from a to b along the line from the foot of the perpendicular. */
+export interface Row { h: number, a: number, b: number, weight: number }
 
 function distanceClassesOf(distance: number[], weights: number[], step: number): DistanceClasses {
   const classes = merged(distance.map((h, f) => ({ h, a: 0, b: 0, weight: weights[f]! })), step)
@@ -58,7 +59,7 @@ function distanceClassesOf(distance: number[], weights: number[], step: number):
 }
 
 /** Rows whose three lengths agree to a step, together; in rising order of h, a and b. */
-function merged(rows: Row[], step: number): Row[] {
+export function merged(rows: Row[], step: number): Row[] {
   const key = (length: number) => length === Infinity ? Infinity : Math.round(length / step)
   const h = Float64Array.from(rows, row => key(row.h))
   const a = Float64Array.from(rows, row => key(row.a))

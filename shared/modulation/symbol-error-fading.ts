@@ -4,6 +4,7 @@ import type { Channel, Fading } from './fading'
 import { fadedPiece } from './fading-edge'
 import { FadedPairwise } from './fading-pairwise'
 import type { Geometry } from './geometry'
+import type { Row } from './geometry-pieces'
 import { pairDistancesOf } from './pair-distances'
 import type { PairDistances } from './pair-distances'
 import { symbolErrorRates } from './symbol-error'
@@ -57,17 +58,22 @@ function neighboursOf({ distanceClasses: { distance, weight }, minimumDistance }
   return { least: minimumDistance ** 2, square: distance.map(d => d * d), weight }
 }
 
-/** Cells' edges, congruent ones once: no piece is too far away, as a fade may always be deep enough. */
+/** Adds Σ w·(the averaged integral over a piece) for each noise density; no piece is too far away, as a fade may always be deep enough. */
+export function addFadedPieces(sums: Float64Array, pieces: readonly Row[], n0s: ArrayLike<number>, fading: Fading, pairwise: FadedPairwise): void {
+  for (const { h, a, b, weight } of pieces) {
+    const half = a === 0 && b === Infinity
+    for (let s = 0; s < sums.length; s++) {
+      const n0 = n0s[s]!
+      sums[s]! += weight * (half ? pairwise.at(h * h / n0) / 2 : fadedPiece(fading, h, a, b, n0))
+    }
+  }
+}
+
 function exact({ constellation, pieces: { h, a, b, weight } }: Geometry, n0s: ArrayLike<number>, fading: Fading, pairwise: FadedPairwise) {
   if (constellation.dimensions > 2) {
     throw new ModulationError('The exact symbol error rate with fading is offered for one and two dimensions: use the bound.', ['dimensions'])
   }
-  return Float64Array.from(n0s, (n0) => {
-    let sum = 0
-    for (let n = 0; n < h.length; n++) {
-      const wedge = a[n] === 0 && b[n] === Infinity ? pairwise.at(h[n]! * h[n]! / n0) / 2 : fadedPiece(fading, h[n]!, a[n]!, b[n]!, n0)
-      sum += weight[n]! * wedge
-    }
-    return sum
-  })
+  const sums = new Float64Array(n0s.length)
+  addFadedPieces(sums, Array.from(h, (distance, n) => ({ h: distance, a: a[n]!, b: b[n]!, weight: weight[n]! })), n0s, fading, pairwise)
+  return sums
 }
