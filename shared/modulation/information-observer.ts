@@ -13,6 +13,8 @@ export interface Observer {
   draw: () => void
   symbol: () => number
   bits: () => number
+  /** the noise's energy in N0 above its mean N/2: 0 on average, and what much of the scatter of the others comes from */
+  excess: () => number
 }
 
 /**
@@ -45,6 +47,7 @@ export function observerOf(source: InformationSource, n0: number, random: Random
   let closeness = 0
   let symbolSum = 0
   let bitSum = 0
+  let energySum = 0
 
   const take = (i: number) => {
     sent = i
@@ -95,6 +98,9 @@ export function observerOf(source: InformationSource, n0: number, random: Random
     }
     const weight = mixed ? 2 / (1 + roots / closeness) : 1
     symbolSum += weight * Math.log1p(others)
+    let energy = 0
+    for (let n = 0; n < dimensions; n++) energy += received[n]! ** 2
+    energySum += weight * (energy - dimensions / 2)
     for (let b = 0; b < width; b++) {
       const different = Math.max(0, bits[sent * width + b]! === 1 ? others - ones[b]! : ones[b]!)
       bitSum += weight * Math.log1p(different / Math.max(1, 1 + others - different))
@@ -104,6 +110,7 @@ export function observerOf(source: InformationSource, n0: number, random: Random
   const draw = () => {
     symbolSum = 0
     bitSum = 0
+    energySum = 0
     if (closeness < negligible) return
     const mixed = closeness < 1
     for (let n = 0; n < dimensions; n++) received[n] = noise[n] = Math.SQRT1_2 * normal()
@@ -114,7 +121,7 @@ export function observerOf(source: InformationSource, n0: number, random: Random
     }
     receive(mixed)
   }
-  return { take, draw, symbol: () => symbolSum / 2 / Math.LN2, bits: () => bitSum / 2 / Math.LN2 }
+  return { take, draw, symbol: () => symbolSum / 2 / Math.LN2, bits: () => bitSum / 2 / Math.LN2, excess: () => energySum / 2 }
 }
 
 /** The bits that count as numbers 0 and 1, point after point. */

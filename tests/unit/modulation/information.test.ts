@@ -146,8 +146,13 @@ describe('rates of any labelled points', () => {
 })
 
 describe('simulated rates', () => {
-  it.each([-10, 5, 12, 18, 24])('hold the exact ones at %d dB within their intervals for at least 89 of 100 seeds', (at) => {
-    const constellation = createConstellation(scattered(16, 2, 8), { labels: words(16) })
+  const unequal = Array.from({ length: 16 }, (_, i) => (i + 1) / 136)
+  it.each([
+    { what: 'equal', probabilities: null, at: -10 }, { what: 'equal', probabilities: null, at: 5 }, { what: 'equal', probabilities: null, at: 12 },
+    { what: 'equal', probabilities: null, at: 18 }, { what: 'equal', probabilities: null, at: 24 },
+    { what: 'unequal', probabilities: unequal, at: -20 }, { what: 'unequal', probabilities: unequal, at: 8 }, { what: 'unequal', probabilities: unequal, at: 20 },
+  ])('of $what probabilities at $at dB hold the exact ones within their intervals for at least 89 of 100 seeds', ({ probabilities, at }) => {
+    const constellation = createConstellation(scattered(16, 2, 8), { labels: words(16), probabilities })
     const source = informationSources(constellation, true)[0]!
     const n0 = n0At(constellation, at)
     const exact = planeEquivocation(source, n0)
@@ -160,6 +165,14 @@ describe('simulated rates', () => {
     }
     expect(symbol).toBeGreaterThanOrEqual(89)
     expect(bits).toBeGreaterThanOrEqual(89)
+  })
+  it('of fewer draws than points are fair as well', () => {
+    const constellation = createConstellation(scattered(128, 2, 8), { labels: words(128) })
+    const source = informationSources(constellation, false)[0]!
+    const exact = planeEquivocation(source, n0At(constellation, 12)).symbol
+    const held = Array.from({ length: 100 }, (_, seed) => simulatedEquivocation(source, n0At(constellation, 12), { seed, draws: 101 }).symbol)
+      .filter(estimate => lowOf(estimate) <= exact && exact <= highOf(estimate))
+    expect(held.length).toBeGreaterThanOrEqual(89)
   })
   it('know what is lost to 5 % even where it is 1e-9 bit', () => {
     const source = informationSources(createConstellation([[1, 0, 0], [-1, 0, 0], [0, 1, 1]]), false)[0]!
