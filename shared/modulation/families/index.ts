@@ -3,20 +3,32 @@ import { createConstellation } from '../constellation'
 import { ModulationError } from '../errors'
 import { normalise } from '../normalise'
 import { apsk } from './apsk'
+import { biorthogonal } from './biorthogonal'
 import { crossQam } from './cross-qam'
 import { custom } from './custom'
 import type { Family, FamilyId, FamilyParameter, FamilyParameters } from './family'
 import { hexagonal } from './hexagonal'
+import { hypercube } from './hypercube'
+import { lattice } from './lattice'
+import { orthogonal } from './orthogonal'
 import { pam } from './pam'
+import { productOf } from './product'
 import { psk } from './psk'
 import { qam } from './qam'
+import { simplex } from './simplex'
 
 export { apskPresets } from './apsk-presets'
 export type { ApskPreset } from './apsk-presets'
-export type { Family, FamilyId, FamilyParameter, FamilyParameters } from './family'
+export type { Family, FamilyId, FamilyParameter, FamilyParameters, LatticeId } from './family'
 
 /** All families. A new one is a file of its own and an entry here. */
-export const families: readonly Family[] = [pam, psk, qam, crossQam, apsk, hexagonal, custom]
+export const families: readonly Family[] = withProduct([
+  pam, psk, qam, crossQam, apsk, hexagonal, orthogonal, biorthogonal, simplex, hypercube, lattice, custom,
+])
+
+function withProduct(single: readonly Family[]): readonly Family[] {
+  return [...single.slice(0, -1), productOf(single), ...single.slice(-1)]
+}
 
 /**
  * The family of an identifier.

@@ -18,6 +18,7 @@ export { naturalLabels } from './words'
  */
 export function familyLabels(id: FamilyId, parameters: FamilyParameters): string[] | null {
   if (id === 'custom' || familyOf(id).validate(parameters).length > 0) return null
+  if (id === 'product') return productLabels(parameters.factors!)
   const order = id === 'apsk' ? parameters.rings!.reduce((sum, n) => sum + n, 0) : parameters.order!
   const bits = labelBits(order)
   if (bits === null) return null
@@ -30,4 +31,12 @@ export function familyLabels(id: FamilyId, parameters: FamilyParameters): string
     case 'hexagonal': return written(searchedWords(id, parameters), bits)
     default: return naturalLabels(order)
   }
+}
+
+/** Words of the factors one behind the other, the first factor's first: null unless each factor has its own. */
+function productLabels(factors: NonNullable<FamilyParameters['factors']>): string[] | null {
+  return factors.reduce<string[] | null>((product, { family, ...parameters }) => {
+    const own = product && familyLabels(family, parameters)
+    return own && product!.flatMap(before => own.map(word => before + word))
+  }, [''])
 }

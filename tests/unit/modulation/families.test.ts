@@ -10,10 +10,12 @@ function energyAtUnitDistance(id: FamilyId, order: number): number {
 const radius = (points: Float64Array, i: number) => Math.hypot(points[2 * i]!, points[2 * i + 1]!)
 
 describe('families', () => {
-  it('are listed in order', () => expect(families.map(({ id }) => id)).toEqual(['pam', 'psk', 'qam', 'cross-qam', 'apsk', 'hexagonal', 'custom']))
+  it('are listed in order', () => expect(families.map(({ id }) => id)).toEqual([
+    'pam', 'psk', 'qam', 'cross-qam', 'apsk', 'hexagonal', 'orthogonal', 'biorthogonal', 'simplex', 'hypercube', 'lattice', 'product', 'custom',
+  ]))
   it('are found by their identifier', () => expect(familyOf('cross-qam').title).toBe('Cross QAM'))
   it('refuse an unknown identifier', () => {
-    expect(() => familyOf('spiral')).toThrow('The family is one of pam, psk, qam, cross-qam, apsk, hexagonal, custom.')
+    expect(() => familyOf('spiral')).toThrow('The family is one of pam, psk, qam, cross-qam, apsk, hexagonal, orthogonal, biorthogonal, simplex, hypercube, lattice, product, custom.')
   })
   const members: [FamilyId, FamilyParameters, number, string][] = [
     ['pam', { order: 3 }, 3, '3-PAM'],
