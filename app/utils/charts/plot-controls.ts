@@ -2,11 +2,13 @@ import { ref } from 'vue'
 import type { Frame } from './along'
 import type { Place } from './curves'
 import type { Plot } from './plot'
+import type { Quantity } from './quantities'
 import { between, including, magnified } from './view'
 import type { View } from './view'
 
 type Controlled = {
   plot: () => Plot
+  quantity: () => Quantity
   view: () => View
   cross: () => Place | null
   setView: (view: View) => void
@@ -16,14 +18,14 @@ type Controlled = {
   moved: () => void
 }
 
-/** Steps of the arrow keys, and how much longer they are with Shift */
-const step = { snrDb: 0.1, decades: 0.1, shift: 10 }
+/** Steps of the arrow keys, in decades and bit per symbol upwards, and how much longer they are with Shift */
+const step = { snrDb: 0.1, decades: 0.1, bits: 0.02, shift: 10 }
 const keyFactor = 1.5
 /** A press that moves less than this is a click, in pixels. */
 const slack = 6
 
 /** Cross-hair and zoom of a plot, by pointer and by keyboard. */
-export function usePlotControls({ plot, view, cross, setView, setCross, whole, moved }: Controlled) {
+export function usePlotControls({ plot, quantity, view, cross, setView, setCross, whole, moved }: Controlled) {
   /** box that is being drawn, in pixels */
   const band = ref<Frame | null>(null)
   let start: Place | null = null
@@ -53,7 +55,7 @@ export function usePlotControls({ plot, view, cross, setView, setCross, whole, m
     const box = band.value
     start = null
     band.value = null
-    if (box) setView(between(placeOf([box.left, box.top]), placeOf([box.right, box.bottom])))
+    if (box) setView(between(quantity(), placeOf([box.left, box.top]), placeOf([box.right, box.bottom])))
   }
   const cancel = () => {
     start = null
@@ -63,16 +65,16 @@ export function usePlotControls({ plot, view, cross, setView, setCross, whole, m
   const wheel = (event: WheelEvent) => {
     if (!event.ctrlKey && document.activeElement !== event.currentTarget) return
     event.preventDefault()
-    setView(magnified(view(), placeOf(pixelOf(event)), Math.exp(-Math.max(-60, Math.min(60, event.deltaY)) / 200)))
+    setView(magnified(view(), quantity(), placeOf(pixelOf(event)), Math.exp(-Math.max(-60, Math.min(60, event.deltaY)) / 200)))
   }
 
   const middle = (): Place => [(view().x[0] + view().x[1]) / 2, (view().y[0] + view().y[1]) / 2]
-  const zoom = (factor: number) => setView(magnified(view(), cross() ?? middle(), factor))
+  const zoom = (factor: number) => setView(magnified(view(), quantity(), cross() ?? middle(), factor))
   const arrow = (dx: number, dy: number) => {
     const [x, y] = cross() ?? middle()
-    const to: Place = [Math.round((x + dx * step.snrDb) * 1e3) / 1e3, Math.round((y + dy * step.decades) * 1e3) / 1e3]
+    const to: Place = [Math.round((x + dx * step.snrDb) * 1e3) / 1e3, Math.round((y + dy * (quantity().logarithmic ? step.decades : step.bits)) * 1e3) / 1e3]
     setCross(to)
-    const next = including(view(), to)
+    const next = including(view(), quantity(), to)
     if (next.x[0] !== view().x[0] || next.y[0] !== view().y[0]) setView(next)
     moved()
   }
