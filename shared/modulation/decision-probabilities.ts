@@ -3,6 +3,7 @@ import { q } from './gaussian'
 import type { Geometry } from './geometry'
 import { DiagramView } from './diagram-view'
 import { serExact } from './symbol-error-exact'
+import { SeenEdge } from './symbol-error-seen-edge'
 
 /** Edges that carry less than this part of the symbol error rate are left out. */
 const negligible = 1e-12
@@ -30,6 +31,7 @@ type FillRow = (i: number, row: Float64Array, p: number) => void
 
 function planeRows(geometry: Geometry, n0: number, farthest: number): FillRow {
   const diagram = new DiagramView(geometry)
+  const seen = new SeenEdge()
   const density = Float64Array.of(n0)
   const flow = new Float64Array(1)
   return (i, row, p) => {
@@ -38,7 +40,8 @@ function planeRows(geometry: Geometry, n0: number, farthest: number): FillRow {
       const side = diagram.see(i, e, farthest)
       if (side === 0) continue
       flow[0] = 0
-      diagram.seen.addTo(flow, side * p, density, 1)
+      seen.take(diagram.h, diagram.near, diagram.far)
+      seen.addTo(flow, side * p, density, 1)
       row[diagram.a[e]!]! -= flow[0]!
       row[diagram.b[e]!]! += flow[0]!
     }

@@ -1,14 +1,20 @@
 import type { Geometry } from './geometry'
-import { SeenEdge } from './symbol-error-seen-edge'
+
+/** Edges of one shape, on average, from which a set is regular. */
+const sameShape = 4
 
 /** The edges of all decision cells of the plane, each once, between points a, in the order of x, and b; seen from any of the points. */
 export class DiagramView {
   readonly a: Int32Array
   readonly b: Int32Array
-  /** the edge that `see` took up */
-  readonly seen = new SeenEdge()
+  /** the edge as the point that looked last sees it: distance of its line, and its ends along it from the foot, the nearer first */
+  h = 1
+  near = 0
+  far = 1
   /** square of its least distance from the point */
   square = 0
+  /** whether many edges have the same shape, as in a lattice or on a ring */
+  readonly regular: boolean
   private readonly points: Float64Array
   /** unit vectors from a to b */
   private readonly ex: Float64Array
@@ -34,6 +40,8 @@ export class DiagramView {
     this.half = Float64Array.from(sides, ({ entry }) => distances[entry]! / 2)
     this.t1 = Float64Array.from(sides, ({ entry }) => edges.t1[entry]!)
     this.t2 = Float64Array.from(sides, ({ entry }) => edges.t2[entry]!)
+    const shapes = new Set(sides.map(({ entry }) => [distances[entry]!, edges.t1[entry]!, edges.t2[entry]!].map(x => Math.fround(x)).join()))
+    this.regular = shapes.size * sameShape <= sides.length
   }
 
   /**
@@ -48,7 +56,7 @@ export class DiagramView {
   }
 
   /**
-   * Takes up an edge as a point sees it.
+   * Looks at an edge from a point.
    * @param i the point
    * @param e the edge
    * @param farthest square of the distance beyond which an edge does not matter
@@ -66,10 +74,12 @@ export class DiagramView {
     const right = this.t1[e]! - foot
     const mirrored = left + right < 0
     const near = mirrored ? -left : right
+    this.h = h
+    this.near = near
+    this.far = mirrored ? -right : left
     this.square = near > 0 ? h * h + near * near : h * h
     // On the edge's own line nothing flows through it.
     if (this.square > farthest || h === 0) return 0
-    this.seen.take(h, near, mirrored ? -right : left)
     return signed > 0 ? 1 : -1
   }
 
