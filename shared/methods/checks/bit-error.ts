@@ -1,26 +1,34 @@
-import { fromDecibels, q, requiredEsN0Db } from '../../modulation'
-import { berAllPairs, berNearest } from '../../modulation/bit-error-bounds'
-import { berExact } from '../../modulation/bit-error-exact'
+import { berAllPairs, berExact, berFading, berNearest, fromDecibels, q, requiredEsN0Db } from '../../modulation'
 import type { Check } from './check'
 import { geometryOf, n0At, pointsOf, simpson } from './tools'
 
-/** Cho and Yoon's equations 9 and 10: error rate of bit k of L Gray-labelled levels whose argument of Q is (2i + 1)·a. */
-function levelBit(levels: number, k: number, a: number): number {
+/** Cho and Yoon's equations 9 and 10: error rate of bit k of L Gray-labelled levels; `beyond` the probability of noise beyond an odd number of half steps. */
+function levelBit(levels: number, k: number, beyond: (odd: number) => number): number {
   const half = 2 ** (k - 1)
   let sum = 0
   for (let i = 0; i < (1 - 2 ** -k) * levels; i++) {
-    sum += (-1) ** Math.floor(i * half / levels) * (half - Math.floor(i * half / levels + 0.5)) * 2 * q((2 * i + 1) * a)
+    sum += (-1) ** Math.floor(i * half / levels) * (half - Math.floor(i * half / levels + 0.5)) * 2 * beyond(2 * i + 1)
   }
   return sum / levels
 }
 
-/** Bit error rate of a rectangular Gray set of I × J levels; J = 1 is PAM. */
-function rectangular(i: number, j: number, esN0: number): number {
-  const a = Math.sqrt(6 * esN0 / (i * i + j * j - 2))
+/** Bit error rate of a rectangular Gray set of I × J levels (J = 1 is PAM); `beyond` as a function of half the squared argument of Q. */
+function rectangular(i: number, j: number, esN0: number, beyond = (s: number) => q(Math.sqrt(2 * s))): number {
+  const step = 3 * esN0 / (i * i + j * j - 2)
   const [k, l] = [Math.log2(i), Math.log2(j)]
-  const sumOf = (levels: number, bits: number) => Array.from({ length: bits }, (_, b) => levelBit(levels, b + 1, a)).reduce((sum, p) => sum + p, 0)
+  const sumOf = (levels: number, bits: number) =>
+    Array.from({ length: bits }, (_, b) => levelBit(levels, b + 1, odd => beyond(odd * odd * step))).reduce((sum, p) => sum + p, 0)
   return (sumOf(i, k) + sumOf(j, l)) / (k + l)
 }
+
+/** Mean of Q(√(2s)) where s fades as Rayleigh's law has it. */
+const overRayleigh = (s: number) => 0.5 * (1 - Math.sqrt(s / (1 + s)))
+
+const qamOverRayleigh = (order: number, db: number): Check => ({
+  method: 'fading', what: `${order}-QAM, Gray, over Rayleigh fading at ${db} dB: bit error rate, each Q averaged`, source: 'choYoon', within: { relative: 1e-8 },
+  published: () => rectangular(Math.sqrt(order), Math.sqrt(order), fromDecibels(db), overRayleigh),
+  compute: () => berFading(geometryOf('qam', { order }), 'berExact', n0At(db), { kind: 'rayleigh', branches: 1 }),
+})
 
 const qam = (order: number, db: number): Check => ({
   method: 'exactBer', what: `${order}-QAM, Gray, at ${db} dB`, source: 'choYoon', within: { relative: 1e-9 },
@@ -60,6 +68,7 @@ const binary = (esN0: number) => q(Math.sqrt(2 * esN0))
 export const bitErrorChecks: readonly Check[] = [
   qam(16, 10), qam(16, 20), qam(64, 15), qam(64, 26), qam(256, 20), qam(256, 32), qam(32, 18), qam(1024, 10),
   pam(4, 12), pam(8, 20), pam(16, 5),
+  qamOverRayleigh(4, 10), qamOverRayleigh(16, 20), qamOverRayleigh(64, 30),
   psk(8, 5), psk(8, 12), psk(16, 10), psk(32, 12),
   {
     method: 'exactBer', what: 'QPSK, Gray, at 10 dB: Q(√(2·Eb/N0))', published: () => binary(fromDecibels(10) / 2), within: { relative: 1e-10 }, source: 'proakis',
