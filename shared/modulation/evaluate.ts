@@ -1,16 +1,19 @@
 import { bitErrorRates } from './bit-error'
-import type { BitErrorKind } from './bit-error'
 import type { Constellation } from './constellation'
 import { paprDb } from './constellation'
 import { fromDecibels } from './decibels'
 import { ModulationError } from './errors'
+import type { Estimate } from './estimate'
 import { evaluationCurves, needsLabels } from './evaluation-curves'
 import type { EvaluationCurves, EvaluationQuantity } from './evaluation-curves'
 import { familyOf, generate } from './families'
 import type { FamilyParameters } from './families'
 import { analyse } from './geometry'
 import type { Geometry } from './geometry'
+import { informationRates } from './information'
+import type { InformationRateKind } from './information'
 import { familyLabels } from './labels'
+import { rateThresholdDb } from './rate-threshold'
 import { requiredEsN0Db } from './required-snr'
 import { symbolErrorRates } from './symbol-error'
 import type { SymbolErrorKind } from './symbol-error'
@@ -26,7 +29,7 @@ export interface EvaluationRequest {
   constellation: FamilyParameters & { family: string, labels?: string[] | null, probabilities?: number[] | null }
   /** SNR values, dB */
   esN0Db: readonly number[]
-  /** a symbol error rate ('ser') or a bit error rate ('ber'); left out: no required Es/N0 */
+  /** a symbol error rate ('ser'), a bit error rate ('ber') or an information rate in bit per symbol ('rate'); left out: no required Es/N0 */
   target?: { quantity: string, value: number } | null
   /** left out: union bound, nearest-neighbour approximation and exact SER */
   quantities?: readonly string[] | null
@@ -43,13 +46,11 @@ export interface Evaluation {
   minimumDistance: number
   neighbours: { relevantMean: number, nearestMean: number, relevant: number[][] }
   curves: { esN0Db: number[] } & Partial<EvaluationCurves>
-  /** of the quantities that are error rates of the target's kind */
-  requiredEsN0Db?: Partial<Record<ErrorKind, number>>
+  /** of the quantities of the target's kind */
+  requiredEsN0Db?: Partial<Record<EvaluationQuantity, Estimate>>
 }
 
-type ErrorKind = SymbolErrorKind | BitErrorKind
-
-const targetRates = { ser: symbolErrorRates, ber: bitErrorRates }
+const targetRates = { ser: symbolErrorRates, ber: bitErrorRates, rate: informationRates }
 const defaultQuantities: SymbolErrorKind[] = ['serUnion', 'serNearest', 'serExact']
 
 /**
@@ -68,12 +69,12 @@ export function evaluate(request: EvaluationRequest): Evaluation {
   const n0s = request.esN0Db.map(db => constellation.meanEnergy / fromDecibels(db))
 
   const curves: Evaluation['curves'] = { esN0Db: [...request.esN0Db] }
-  const required: Partial<Record<ErrorKind, number>> = {}
+  const required: Partial<Record<EvaluationQuantity, Estimate>> = {}
   quantities.forEach((quantity, n) => {
     within(path => path[0] === 'dimensions' ? ['quantities', n] : ['constellation', ...path], () => addCurve(curves, quantity, geometry, n0s))
   })
   for (const kind of targeted) {
-    required[kind] = within(() => ['target', 'value'], () => requiredEsN0Db({ geometry, kind }, target!.value))
+    required[kind] = within(() => ['target', 'value'], () => requiredFor(geometry, kind, target!.value))
   }
   const { offsets, neighbours, relevantMean, nearestMean, minimumDistance } = geometry
   const { order, dimensions, bitsPerSymbol, meanEnergy, peakEnergy } = constellation
@@ -92,14 +93,23 @@ function addCurve<Q extends EvaluationQuantity>(curves: Partial<EvaluationCurves
   curves[quantity] = evaluationCurves[quantity](geometry, n0s)
 }
 
+const isInformationRate = (quantity: EvaluationQuantity): quantity is InformationRateKind => quantity in informationRates
+
+function requiredFor(geometry: Geometry, quantity: EvaluationQuantity, value: number): Estimate {
+  return isInformationRate(quantity) ? rateThresholdDb(geometry.constellation, quantity, value) : requiredEsN0Db({ geometry, kind: quantity }, value)
+}
+
+const isTarget = (quantity: string): quantity is keyof typeof targetRates => quantity in targetRates
+
 /** The quantities that the target speaks of. */
-function targetedKinds(targetQuantity: string, quantities: readonly EvaluationQuantity[]): ErrorKind[] {
-  if (targetQuantity !== 'ser' && targetQuantity !== 'ber') {
-    throw new ModulationError('The target is a symbol error rate (ser) or a bit error rate (ber).', ['target', 'quantity'])
+function targetedKinds(targetQuantity: string, quantities: readonly EvaluationQuantity[]): EvaluationQuantity[] {
+  if (!isTarget(targetQuantity)) {
+    throw new ModulationError('The target is a symbol error rate (ser), a bit error rate (ber) or an information rate (rate).', ['target', 'quantity'])
   }
-  const kinds = quantities.filter((quantity): quantity is ErrorKind => quantity in targetRates[targetQuantity])
-  if (targetQuantity === 'ber' && kinds.length === 0) {
-    throw new ModulationError(`A bit error rate as target needs one among the quantities: ${Object.keys(bitErrorRates).join(', ')}.`, ['target', 'quantity'])
+  const kinds = quantities.filter(quantity => quantity in targetRates[targetQuantity])
+  if (targetQuantity !== 'ser' && kinds.length === 0) {
+    const named = { ber: 'A bit error rate', rate: 'An information rate' }[targetQuantity]
+    throw new ModulationError(`${named} as target needs one among the quantities: ${Object.keys(targetRates[targetQuantity]).join(', ')}.`, ['target', 'quantity'])
   }
   return kinds
 }

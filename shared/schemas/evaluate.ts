@@ -1,6 +1,7 @@
 import { z } from 'zod'
 import { factorFamilies, lattices } from './candidates'
 import { numberBetween, wholeBetween } from './common'
+import { estimate } from './values'
 import { families } from '../modulation'
 import type { FamilyParameter } from '../modulation'
 
@@ -47,30 +48,46 @@ export const evaluatedConstellation = z.strictObject({
   }
 })
 
-export const evaluationQuantities = ['serUnion', 'serAllPairs', 'serNearest', 'serExact'] as const
+export const evaluationQuantities = [
+  'serUnion', 'serAllPairs', 'serNearest', 'serExact', 'berAllPairs', 'berNearest', 'berExact', 'mutualInformation', 'bitMetricRate',
+] as const
 export type EvaluationQuantity = (typeof evaluationQuantities)[number]
+
+/** What the required Es/N0 is found for: an error rate, or an information rate in bit per symbol. */
+const target = z.strictObject({
+  quantity: z.enum(['ser', 'ber', 'rate'], { error: 'The target is a symbol error rate (ser), a bit error rate (ber) or an information rate (rate).' }),
+  value: z.number({ error: 'Enter the target\'s value as a number.' }),
+}).superRefine(({ quantity, value }, refine) => {
+  const [low, high] = quantity === 'rate' ? [1e-6, 12] : [1e-15, 0.5]
+  if (value >= low && value <= high) return
+  const message = quantity === 'rate' ? 'Enter a target rate from 1e-6 to 12 bit per symbol.' : `Enter a target ${quantity.toUpperCase()} from 1e-15 to 0.5.`
+  refine.addIssue({ code: 'custom', path: ['value'], message })
+})
 
 /** POST /api/evaluate */
 export const evaluation = z.strictObject({
   constellation: evaluatedConstellation,
   esN0Db: z.array(numberBetween(-60, 120, 'An Es/N0 value is from −60 to 120 dB.'))
     .min(1, 'Send 1 to 1,001 values of Es/N0.').max(limits.snrValues, 'Send 1 to 1,001 values of Es/N0.'),
-  target: z.strictObject({
-    quantity: z.literal('ser', { error: 'The target is a symbol error rate (ser).' }),
-    value: numberBetween(1e-15, 0.5, 'Enter a target SER from 1e-15 to 0.5.'),
-  }).optional(),
+  target: target.optional(),
   quantities: z.array(z.enum(evaluationQuantities, {
     error: ({ input }) => `The quantity ${String(input).slice(0, 40)} is not offered: a quantity is one of ${evaluationQuantities.join(', ')}.`,
-  })).min(1, 'Name at least one quantity, or leave quantities out.').max(8, 'Name at most 8 quantities.')
+  })).min(1, 'Name at least one quantity, or leave quantities out.').max(16, 'Name at most 16 quantities.')
     .default(['serUnion', 'serNearest', 'serExact']),
 })
 export type EvaluationRequest = z.infer<typeof evaluation>
 
 const numbers = z.array(z.number())
+const estimates = z.array(estimate)
 export const evaluationAnswer = z.object({
   order: z.int(), dimensions: z.int(), bitsPerSymbol: z.number(), meanEnergy: z.number(), peakEnergy: z.number(), paprDb: z.number(),
   minimumDistance: z.number(),
   neighbours: z.object({ relevantMean: z.number(), nearestMean: z.number(), relevant: z.array(z.array(z.int())) }),
-  curves: z.object({ esN0Db: numbers, serUnion: numbers.optional(), serAllPairs: numbers.optional(), serNearest: numbers.optional(), serExact: numbers.optional() }),
-  requiredEsN0Db: z.object({ serUnion: z.number(), serAllPairs: z.number(), serNearest: z.number(), serExact: z.number() }).partial().optional(),
+  curves: z.object({
+    esN0Db: numbers,
+    serUnion: numbers.optional(), serAllPairs: numbers.optional(), serNearest: numbers.optional(), serExact: estimates.optional(),
+    berAllPairs: numbers.optional(), berNearest: numbers.optional(), berExact: numbers.optional(),
+    mutualInformation: estimates.optional(), bitMetricRate: estimates.optional(),
+  }),
+  requiredEsN0Db: z.partialRecord(z.enum(evaluationQuantities), estimate).optional(),
 })

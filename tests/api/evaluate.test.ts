@@ -17,9 +17,19 @@ describe('POST /api/evaluate', () => {
     const { body } = await evaluate({ constellation: points, esN0Db: [8] })
     expect(body.meanEnergy).toBeCloseTo((1 + 1.25 + 1.25 + 1.01) / 4, 14)
   })
-  it('takes labels and probabilities beside points', async () => {
-    const constellation = { ...points, labels: ['00', '01', '11', '10'], probabilities: [0.25, 0.25, 0.25, 0.25] }
-    expect((await evaluate({ constellation, esN0Db: [8, 12.5], target: { quantity: 'ser', value: 1e-6 } })).status).toBe(200)
+  it('answers the contract\'s own example', async () => {
+    const { status, body } = await evaluate({
+      constellation: { ...points, labels: ['00', '01', '11', '10'], probabilities: [0.25, 0.25, 0.25, 0.25] }, esN0Db: [8, 12.5],
+      target: { quantity: 'ser', value: 1e-6 }, quantities: ['serUnion', 'serNearest', 'serExact', 'berExact', 'mutualInformation', 'bitMetricRate'],
+    })
+    expect([status, Object.keys(body.curves), Object.keys(body.requiredEsN0Db!)]).toEqual([
+      200, ['esN0Db', 'serUnion', 'serNearest', 'serExact', 'berExact', 'mutualInformation', 'bitMetricRate'], ['serUnion', 'serNearest', 'serExact'],
+    ])
+  })
+  it('finds the SNR that a target rate needs', async () => {
+    // Ungerboeck 1982: 8-PSK reaches 2 bit/symbol at 5.76 dB, computed
+    const { body } = await evaluate({ constellation: { family: 'psk', order: 8 }, esN0Db: [8], target: { quantity: 'rate', value: 2 }, quantities: ['mutualInformation'] })
+    expect(body.requiredEsN0Db!.mutualInformation).toBeCloseTo(5.76, 2)
   })
   it('scales families to unit mean energy', async () => {
     const { body } = await evaluate({ constellation: { family: 'apsk', rings: [4, 12], ratios: [3.15] }, esN0Db: [8] })
@@ -43,7 +53,7 @@ describe('POST /api/evaluate', () => {
     expect((await evaluate({ constellation: points, esN0Db: [8] })).body.requiredEsN0Db).toBeUndefined())
 
   const bad: [string, object, string][] = [
-    ['a quantity that is not offered', { constellation: points, esN0Db: [8], quantities: ['serExact', 'mutualInformation'] }, 'quantities.1'],
+    ['a quantity that is not offered', { constellation: points, esN0Db: [8], quantities: ['serExact', 'colour'] }, 'quantities.1'],
     ['a family that does not exist', { constellation: { family: 'spiral' }, esN0Db: [8] }, 'constellation.family'],
     ['an order that a family cannot have', { constellation: { family: 'cross-qam', order: 16 }, esN0Db: [8] }, 'constellation.order'],
     ['points beside a family that takes its order', { constellation: { ...points, family: 'qam', order: 16 }, esN0Db: [8] }, 'constellation.points'],
@@ -51,6 +61,8 @@ describe('POST /api/evaluate', () => {
     ['a string where a number belongs', { constellation: points, esN0Db: ['8'] }, 'esN0Db.0'],
     ['no SNR value', { constellation: points, esN0Db: [] }, 'esN0Db'],
     ['1,002 SNR values', { constellation: points, esN0Db: Array.from({ length: 1002 }, (_, i) => i / 100) }, 'esN0Db'],
+    ['a bit error rate without labels', { constellation: { family: 'psk', order: 12 }, esN0Db: [8], quantities: ['berExact'] }, 'constellation.labels'],
+    ['a target that no quantity has', { constellation: points, esN0Db: [8], target: { quantity: 'rate', value: 1 } }, 'target.quantity'],
     ['an unknown field', { constellation: points, esN0Db: [8], precision: 3 }, 'precision'],
     ['probabilities that do not add up', { constellation: { ...points, probabilities: [0.5, 0.1, 0.1, 0.1] }, esN0Db: [8] }, 'constellation.probabilities'],
     ['points of nine coordinates', { constellation: { family: 'custom', points: [[1, 0, 0, 0, 0, 0, 0, 0, 0], [0, 1, 0, 0, 0, 0, 0, 0, 0]] }, esN0Db: [8] }, 'constellation.points.0'],

@@ -11,5 +11,14 @@ describe('the cost limit of an evaluation', () => {
   it('refuses it for 4096 points at 1,001 values', () => expect(paths({ family: 'qam', order: 4096 })).toEqual(['quantities']))
   it('lets 4096 points have it at 41 values', () =>
     expect(costIssues(evaluation.parse({ constellation: { family: 'qam', order: 4096 }, esN0Db: esN0Db.slice(0, 41), quantities: ['serAllPairs'] }))).toEqual([]))
+  it('lets 256 scattered points have all quantities at 41 values', () => {
+    const points = Array.from({ length: 256 }, (_, i) => [Math.cos(i * i), Math.sin(i * 3) * i / 256])
+    const quantities = ['serExact', 'berExact', 'mutualInformation', 'bitMetricRate']
+    expect(costIssues(evaluation.parse({ constellation: { family: 'custom', points }, esN0Db: esN0Db.slice(0, 41), quantities }))).toEqual([])
+  })
+  it('names the quantity that costs too much among others', () => {
+    const issues = costIssues(evaluation.parse({ constellation: { family: 'psk', order: 4096 }, esN0Db: esN0Db.slice(0, 41), quantities: ['serExact', 'berExact'] }))
+    expect([issues[0]!.path, issues[0]!.message.includes('Leave berExact out')]).toEqual(['quantities', true])
+  })
   it('counts the rings of APSK', () => expect(paths({ family: 'apsk', rings: [2048, 2048], ratios: [2] })).toEqual(['quantities']))
 })
