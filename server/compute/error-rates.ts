@@ -1,7 +1,7 @@
-import { berExactCurve, berMap, bitErrorRates, requiredSnr, serExactCurve, serMap, serMapUnion } from '#shared/modulation'
-import type { BitErrorKind, Constellation, Estimate, Geometry, RequiredSnr, SymbolErrorKind } from '#shared/modulation'
+import { berExactCurve, berFadingCurve, berMap, bitErrorRates, fromDecibels, requiredSnr, serExactCurve, serFadingCurve, serMap, serMapUnion } from '#shared/modulation'
+import type { BitErrorKind, Channel, Constellation, Estimate, Geometry, RequiredSnr, SymbolErrorKind } from '#shared/modulation'
 import { symbolErrorRates } from '#shared/modulation/symbol-error'
-import type { CanonicalInputs, CanonicalPoints } from '#shared/study/canonical-inputs'
+import type { CanonicalFading, CanonicalInputs, CanonicalPoints } from '#shared/study/canonical-inputs'
 import { geometryOf, labelledGeometryOf, pointsKey } from './points'
 
 export type ErrorKind = SymbolErrorKind | BitErrorKind
@@ -58,9 +58,24 @@ function mapRate({ constellation }: Geometry, kind: ErrorKind): ErrorRate | null
   }
 }
 
+/** Fading with maximal-ratio combining; what is exact is so in one and two dimensions. Of all rates only the exact BER may rise again. */
+function fadingRate(geometry: Geometry, kind: ErrorKind, fading: CanonicalFading): ErrorRate | null {
+  const { constellation: { dimensions, meanEnergy } } = geometry
+  if (dimensions > 2 && (kind === 'serExact' || kind === 'berExact')) return null
+  const channel: Channel = {
+    kind: fading.kind, branches: fading.branches, m: fading.m, kFactor: fading.kDb === undefined ? undefined : fromDecibels(fading.kDb),
+  }
+  const curve = (n0s: readonly number[]) => isBitError(kind) ? berFadingCurve(geometry, kind, n0s, channel) : serFadingCurve(geometry, kind, n0s, channel)
+  return {
+    rates: n0s => [...curve(n0s)],
+    required: target => noted(requiredSnr({ rate: n0 => curve([n0])[0]!, meanEnergy, monotone: kind !== 'berExact' }, target)),
+  }
+}
+
 /** An error rate of a row by one way; null where that way does not exist for its decisions and its channel. */
 export function errorRateOf(model: RowModel, kind: ErrorKind): ErrorRate | null {
   const geometry = isBitError(kind) ? labelledGeometryOf(model.points) : geometryOf(model.points)
+  if (model.channel) return fadingRate(geometry, kind, model.channel)
   if (model.decision === 'map') return mapRate(geometry, kind)
   return plainRate(geometry, kind)
 }
