@@ -79,6 +79,15 @@ export function halfPlane(from: Place, to: Place): HalfPlane {
   }
 }
 
+/** A point's label, its surroundings and how often it is mistaken, in words. */
+export function pointWords(index: number, { neighbours, minimumDistance, labels, errorByPoint, availableEsN0Db }: CandidateConstellation): string {
+  const label = labels ? `, label ${labels[index]}` : ''
+  const error = errorByPoint && availableEsN0Db !== null
+    ? `; mistaken with probability ${formatNumber(errorByPoint[index]!, '0.00e-0')} at the available ${formatNumber(availableEsN0Db, '0.00', 'down')} dB`
+    : ''
+  return `${pointSentence(index, neighbours[index]!, minimumDistance)}${label}${error}.`
+}
+
 /** What a point's surroundings are, in words. */
 export function pointSentence(index: number, neighbours: Neighbours, minimumDistance: number): string {
   const nearest = neighbours.filter(neighbour => neighbour.nearest).length

@@ -1,5 +1,5 @@
 import { describe, expect, it } from 'vitest'
-import { dotsPath, halfPlane, pointAt, pointSentence, pointTowards, polygonsPath } from '../../../app/utils/charts/constellation'
+import { dotsPath, halfPlane, pointAt, pointSentence, pointTowards, pointWords, polygonsPath } from '../../../app/utils/charts/constellation'
 
 const square = [[1, 1], [-1, 1], [-1, -1], [1, -1]]
 const same = (value: number) => value
@@ -15,11 +15,16 @@ describe('going from point to point', () => {
 
 describe('the words for a point', () => {
   it('count relevant and nearest neighbours', () => expect(pointSentence(5, [
-    { point: 1, distance: 0.632, nearest: true }, { point: 2, distance: 0.632, nearest: true }, { point: 3, distance: 0.9, nearest: false },
-    { point: 4, distance: 0.9, nearest: false },
+    { point: 1, distance: 0.632, nearest: true, share: null }, { point: 2, distance: 0.632, nearest: true, share: null }, { point: 3, distance: 0.9, nearest: false, share: null },
+    { point: 4, distance: 0.9, nearest: false, share: null },
   ], 0.6324555)).toBe('Point 5: 4 relevant neighbours, 2 at the minimum distance 0.632'))
-  it('say when no neighbour is a nearest one', () => expect(pointSentence(0, [{ point: 1, distance: 1, nearest: false }], 0.5))
+  it('say when no neighbour is a nearest one', () => expect(pointSentence(0, [{ point: 1, distance: 1, nearest: false, share: null }], 0.5))
     .toBe('Point 0: 1 relevant neighbour, none at the minimum distance 0.500'))
+  it('name its label and how often it is mistaken', () => expect(pointWords(0, {
+    dimensions: 1, points: [[-1, 0], [1, 0]], cells: [], box: 2, minimumDistance: 2, probabilities: null,
+    neighbours: [[{ point: 1, distance: 2, nearest: true, share: 1 }], [{ point: 0, distance: 2, nearest: true, share: 1 }]],
+    labels: ['0', '1'], errorByPoint: [1.234e-6, 1.234e-6], availableEsN0Db: 10.567,
+  })).toBe('Point 0: 1 relevant neighbour, 1 at the minimum distance 2.000, label 0; mistaken with probability 1.23e−6 at the available 10.56 dB.'))
 })
 
 describe('what is drawn', () => {
