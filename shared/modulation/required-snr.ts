@@ -40,7 +40,7 @@ const lowest = -30
 const highest = 90
 /** Step of the search for curves that may rise again, dB; wider ranges of a bit error rate take this many steps. */
 const scanStep = 0.25
-const scanSteps = 48
+const scanSteps = 24
 /** Room about a range that bounds give, so that rounding does not push the crossing out of it, dB. */
 const room = 0.01
 /** A curve that falls by less than this factor over the last decibels has a floor. */

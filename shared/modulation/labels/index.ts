@@ -18,8 +18,7 @@ export { naturalLabels } from './words'
  */
 export function familyLabels(id: FamilyId, parameters: FamilyParameters): string[] | null {
   if (id === 'custom' || familyOf(id).validate(parameters).length > 0) return null
-  if (id === 'product') return productLabels(parameters.factors!)
-  const order = id === 'apsk' ? parameters.rings!.reduce((sum, n) => sum + n, 0) : parameters.order!
+  const order = orderOf(id, parameters)
   const bits = labelBits(order)
   if (bits === null) return null
   switch (id) {
@@ -28,15 +27,26 @@ export function familyLabels(id: FamilyId, parameters: FamilyParameters): string
     case 'qam': return written(qamWords(bits), bits)
     case 'apsk': return written(standardRingWords(parameters) ?? searchedWords(id, parameters), bits)
     case 'cross-qam':
-    case 'hexagonal': return written(searchedWords(id, parameters), bits)
+    case 'hexagonal':
+    case 'lattice': return written(searchedWords(id, parameters), bits)
+    case 'product': return productLabels(parameters.factors!)
+    // A hypercube and biorthogonal points are in an order that makes natural labels good; orthogonal and simplex ones leave no choice.
     default: return naturalLabels(order)
   }
 }
 
-/** Words of the factors one behind the other, the first factor's first: null unless each factor has its own. */
-function productLabels(factors: NonNullable<FamilyParameters['factors']>): string[] | null {
-  return factors.reduce<string[] | null>((product, { family, ...parameters }) => {
-    const own = product && familyLabels(family, parameters)
-    return own && product!.flatMap(before => own.map(word => before + word))
-  }, [''])
+function orderOf(id: FamilyId, { order, rings, points, factors }: FamilyParameters): number {
+  switch (id) {
+    case 'apsk': return rings!.reduce((sum, n) => sum + n, 0)
+    case 'custom': return points!.length
+    case 'product': return factors!.reduce((product, { family, ...parameters }) => product * orderOf(family, parameters), 1)
+    default: return order!
+  }
+}
+
+/** Every choice of a label from each factor, one after another, the last factor changing fastest; custom factors count naturally. */
+function productLabels(factors: NonNullable<FamilyParameters['factors']>): string[] {
+  return factors
+    .map(({ family, ...parameters }) => familyLabels(family, parameters) ?? naturalLabels(orderOf(family, parameters))!)
+    .reduce((product, labels) => product.flatMap(before => labels.map(label => before + label)), [''])
 }

@@ -2,6 +2,7 @@ import { familyOf } from '../families'
 import type { FamilyId, FamilyParameters } from '../families'
 import { foldedWords } from './cross'
 import { grayWord } from './gray'
+import { halvedWords } from './halves'
 import { nearGrayWords, sortedIntoColumns } from './near-gray'
 
 /** Members of families whose labels take a search are kept, so many at most: their labels depend on little. */
@@ -36,6 +37,7 @@ function evenRings({ rings, phases }: FamilyParameters): FamilyParameters {
 /** Labels to begin with, by family: all are Gray along two coordinates of their own. */
 function startsOf(id: FamilyId, points: number[][]): number[][] {
   if (id === 'cross-qam') return [foldedWords(points)]
+  if (points[0]!.length > 2) return [halvedWords(points)]
   const rows = 2 ** Math.floor(Math.log2(points.length) / 2)
   const columns = points.length / rows
   const starts = [sortedIntoColumns(points, columns, (column, row) => grayWord(column) * rows + grayWord(row))]

@@ -3,20 +3,18 @@ import type { Random } from '../random'
 import { onesIn } from './words'
 
 /**
- * What a pair of points weighs: its share of errors where d_min²/(4·N0) is 4, an error rate near 1e-3.
- * Farther than twice the minimum distance nothing counts.
+ * What a pair of points weighs: its share of errors where d_min²/(4·N0) is 4, an error rate near 1e-3. In the plane nothing counts that is
+ * farther than twice the minimum distance; in more dimensions neighbours are so many that only nearer ones are counted.
  */
 const steepness = 4
-const farthest = 4
+const farthestOf = (dimensions: number) => dimensions <= 2 ? 4 : dimensions <= 4 ? 2 : 1
 
 /** Small sets are shaken so often as M²·shakes reaches this, at most forty times. */
 const shaking = 40_000
 const mostShakes = 40
 
-/** Rounds over all points at most, for small sets and for those above a thousand: the last ones move little. */
-const mostRounds = 12
-const fewRounds = 3
-const large = 1024
+/** Comparisons of two labels from each start at most, some tenths of a second: large sets are left where the last ones move little. */
+const mostComparisons = 4e7
 
 /** Points up to which every pair is tried; beyond, a point changes only with those whose labels differ in one or two bits. */
 const everyPair = 256
@@ -78,7 +76,8 @@ function nearPairs(points: readonly ArrayLike<number>[]): Near {
   let least = Infinity
   within(() => least, (_a, _b, square) => least = square)
   const lists = points.map(() => [] as [number, number][])
-  within(() => least * farthest * (1 + 1e-9), (a, b, square) => {
+  const farthest = farthestOf(points[0]!.length) * (1 + 1e-9)
+  within(() => least * farthest, (a, b, square) => {
     // Rounded, so that equal distances weigh the same to the last bit and ties stay ties.
     const weight = Number(Math.exp(-steepness * (square / least - 1)).toPrecision(9))
     lists[a]!.push([b, weight])
@@ -114,13 +113,13 @@ function gain(words: Uint16Array, { offsets, neighbours, weights }: Near, i: num
   return change
 }
 
-/** Exchanges, each point with the partner that gains most, until a whole round finds none or the rounds are over. */
+/** Exchanges, each point with the partner that gains most, until a whole round finds none or the work is too much. */
 function improve(words: Uint16Array, near: Near): void {
   const order = words.length
   const placeOf = new Int32Array(order)
   words.forEach((word, i) => placeOf[word] = i)
   const masks = Array.from({ length: order }, (_, mask) => mask).filter(mask => mask > 0 && (order <= everyPair || onesIn[mask]! <= 2))
-  const steps = order * (order > large ? fewRounds : mostRounds)
+  const steps = mostComparisons / (masks.length * 2 * near.neighbours.length / order)
   for (let step = 0, idle = 0; idle < order && step < steps; step++) {
     const i = step % order
     let best = -1

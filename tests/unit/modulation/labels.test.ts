@@ -8,6 +8,9 @@ const members: [FamilyId, FamilyParameters][] = [
   ['apsk', { rings: [4, 12], ratios: [2.6] }], ['apsk', { rings: [4, 12, 16], ratios: [2.5, 4.3] }],
   ['apsk', { rings: [1, 7], ratios: [] }], ['apsk', { rings: [8, 16, 20, 20], ratios: [2, 3, 4] }],
   ['hexagonal', { order: 2 }], ['hexagonal', { order: 64 }], ['hexagonal', { order: 256 }],
+  ['orthogonal', { order: 8 }], ['biorthogonal', { order: 8 }], ['simplex', { order: 4 }], ['hypercube', { order: 32 }],
+  ['lattice', { lattice: 'D4', order: 64 }], ['lattice', { lattice: 'E8', order: 128 }],
+  ['product', { factors: [{ family: 'psk', order: 4 }, { family: 'apsk', rings: [4, 12], ratios: [2.85] }] }],
 ]
 
 describe.each(members)('labels of %s %j', (id, parameters) => {
@@ -35,12 +38,29 @@ describe('Gray labels', () => {
   it.each([
     ['pam', { order: 64 }], ['psk', { order: 32 }], ['qam', { order: 32 }], ['qam', { order: 256 }],
     ['apsk', { rings: [4, 12], ratios: [2.85] }], ['apsk', { rings: [4, 12, 16], ratios: [2.84, 5.27] }],
+    ['hypercube', { order: 64 }], ['product', { factors: [{ family: 'psk', order: 8 }, { family: 'psk', order: 8 }] }],
   ] as [FamilyId, FamilyParameters][])('of %s %j differ in one bit between nearest points', (id, parameters) => expect(meanOfNearest(id, parameters)).toBe(1))
   // 1.1538 = 60/52: Smith's folded rectangle has no better neighbour by exchange of two labels.
   it.each([
     ['cross-qam', { order: 32 }, 1.154], ['cross-qam', { order: 128 }, 1.11], ['cross-qam', { order: 512 }, 1.1],
-    ['hexagonal', { order: 16 }, 1.34], ['hexagonal', { order: 64 }, 1.41], ['hexagonal', { order: 256 }, 1.54],
+    ['lattice', { lattice: 'D4', order: 64 }, 2], ['hexagonal', { order: 16 }, 1.34], ['hexagonal', { order: 64 }, 1.41], ['hexagonal', { order: 256 }, 1.54],
   ] as [FamilyId, FamilyParameters, number][])('of %s %j differ in few more', (id, parameters, most) => expect(meanOfNearest(id, parameters)).toBeLessThan(most))
+})
+
+describe('labels of a product', () => {
+  const factors = [{ family: 'psk', order: 4 }, { family: 'custom', points: [[0], [1]] }] as const
+  it('are those of its factors one after another, custom factors counted naturally', () => {
+    expect(familyLabels('product', { factors })).toEqual(['000', '001', '100', '101', '110', '111', '010', '011'])
+  })
+})
+
+describe('opposite biorthogonal points', () => {
+  it('differ in every bit', () => {
+    const labels = familyLabels('biorthogonal', { order: 8 })!
+    const { points } = generate('biorthogonal', { order: 8 })
+    const opposite = labels.map((label, i) => labels.find((_, j) => [0, 1, 2, 3].every(n => points[4 * j + n] === -points[4 * i + n]!))!)
+    expect(opposite.every((other, i) => [...other].every((bit, n) => bit !== labels[i]![n]))).toBe(true)
+  })
 })
 
 describe('labels do not depend on what leaves the order of points', () => {
@@ -51,6 +71,7 @@ describe('labels do not depend on what leaves the order of points', () => {
 describe('no labels', () => {
   it.each([
     ['psk', { order: 6 }], ['hexagonal', { order: 7 }], ['apsk', { rings: [5, 6], ratios: [2] }], ['custom', { points: [[0], [1]] }], ['qam', { order: 5 }],
+    ['product', { factors: [{ family: 'psk', order: 4 }, { family: 'psk', order: 3 }] }], ['lattice', { lattice: 'D4', order: 25 }],
   ] as [FamilyId, FamilyParameters][])('of %s %j', (id, parameters) => expect(familyLabels(id, parameters)).toBeNull())
   it('in natural order of twelve points', () => expect(naturalLabels(12)).toBeNull())
 })
