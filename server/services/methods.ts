@@ -15,15 +15,19 @@ const setFormula = ({ tex, case: which }: Formula) => ({
   case: which ?? null, tex, html: katex.renderToString(tex, { displayMode: true, fleqn: true, output: 'htmlAndMathml' }),
 })
 
-const powerOfTen = (value: number) => plain(value).replace('e+', 'e')
+/** A number in the digits shown: small ones with their power of ten. */
+const inDigits = (value: number) => Math.abs(value) < 1e-3 && value !== 0
+  ? value.toExponential(digitsShown - 1).replace(/-/g, '−')
+  : plain(Number(value.toPrecision(digitsShown)))
+const shortly = (tolerance: number) => (tolerance < 1e-3 ? tolerance.toExponential() : String(tolerance)).replace('-', '−')
 
 function publishedText(check: Check): string {
-  return typeof check.published === 'string' ? check.published.replace(/-/g, '−') : powerOfTen(Number(publishedOf(check).toPrecision(digitsShown)))
+  return typeof check.published === 'string' ? check.published.replace(/-/g, '−') : inDigits(publishedOf(check))
 }
 
 function toleranceText({ published, within }: Check): string {
-  if (typeof within === 'number') return within === 0 ? 'exact' : powerOfTen(within)
-  if (within) return `${powerOfTen(within.relative)} relative`
+  if (typeof within === 'number') return within === 0 ? 'exact' : shortly(within)
+  if (within) return `${shortly(within.relative)} relative`
   return typeof published === 'string' ? 'last digit' : '1e−9 relative'
 }
 
