@@ -1,7 +1,11 @@
 import { PieceIntegral } from './symbol-error-edge'
+import { SeenEdge } from './symbol-error-seen-edge'
 
-/** One for the module: calls do not overlap, and each takes up its pieces anew. */
+/** For the module: calls do not overlap, and each takes up its pieces anew. */
 const integral = new PieceIntegral()
+const seen = new SeenEdge()
+const density = new Float64Array(1)
+const sum = new Float64Array(1)
 
 /** A point this near to an edge's line, in √N0, is on it: the integral there is that of its limit to any digit. */
 const onLine = 1e-30
@@ -20,6 +24,21 @@ export function edgeFlow(h: number, t1: number, t2: number, n0: number): number 
   const distance = Math.abs(h)
   const flow = distance > onLine * Math.sqrt(n0) ? flowFrom(distance, t1, t2, n0) : flowOnLine(t1, t2)
   return h < 0 ? -flow : flow
+}
+
+/**
+ * The same, a few times as fast and less exact, where it is asked for at many places.
+ * @returns −½ to ½, relative error below 2e-10
+ */
+export function quickEdgeFlow(h: number, t1: number, t2: number, n0: number): number {
+  const distance = Math.abs(h)
+  if (!(distance > onLine * Math.sqrt(n0))) return edgeFlow(h, t1, t2, n0)
+  if (t1 + t2 < 0) seen.take(distance, -t2, -t1)
+  else seen.take(distance, t1, t2)
+  density[0] = n0
+  sum[0] = 0
+  seen.addTo(sum, h < 0 ? -1 : 1, density, 1)
+  return sum[0]
 }
 
 /** Cut at the foot where the foot lies on the edge. */
