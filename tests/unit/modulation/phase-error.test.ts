@@ -49,7 +49,7 @@ describe('a phase error', () => {
     }
   })
   it.each([0.5, 3, 10, 40])('of %d° leads to the floor as noise vanishes', (degrees) => {
-    const geometry = analyse(scattered(8, 10))
+    const geometry = analyse(scattered(8, 16))
     const floor = serPhaseErrorFloor(geometry, radians(degrees))
     expect(relative(serWithPhaseError(geometry, 1e-11, radians(degrees)), floor)).toBeLessThan(1e-4)
     expect(relative(berWithPhaseError(geometry, 1e-11, radians(degrees)), berPhaseErrorFloor(geometry, radians(degrees)))).toBeLessThan(1e-4)
