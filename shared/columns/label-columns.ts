@@ -1,16 +1,33 @@
+import { familyLabels, naturalLabels } from '../modulation/labels'
 import type { CandidateInputs } from '../schemas/candidates'
+import { familyOfRow, familyParameters, rowSize } from '../study/family-parameters'
 import type { Entry, InputColumn } from './column'
-import { parseFraction } from './entry'
+import { choiceEntry, parseFraction } from './entry'
 import { plain } from './format'
 import { choiceInput, numberInput, unusedByEntered } from './make'
 import { decisionChoices, labellingChoices, probabilityChoices } from './words'
 
 const group = 'Labels, probabilities, decisions' as const
 
-export const labelling = choiceInput('labelling', labellingChoices, {
-  id: 'labelling', title: 'Labels', group,
-  meaning: 'Bits of each point: the family\'s own (Gray where it has one), natural binary in the order of the points, or yours.',
-}, { width: 16, unused: unusedByEntered('labels') })
+/** Labels that the row has, for own ones to begin with; null where it has none. */
+function presentLabels(inputs: CandidateInputs): string[] | null {
+  const { order } = rowSize(inputs)
+  const family = familyOfRow(inputs)
+  if (!family || order === null || family.validate(familyParameters(inputs)).length > 0) return null
+  return (inputs.labelling === 'natural' ? null : familyLabels(family.id, familyParameters(inputs))) ?? naturalLabels(order)
+}
+
+export const labelling: InputColumn = {
+  ...choiceInput('labelling', labellingChoices, {
+    id: 'labelling', title: 'Labels', group,
+    meaning: 'Bits of each point: the family\'s own (Gray where it has one), natural binary in the order of the points, or yours, which begin with those that the row has.',
+  }, { width: 16, unused: unusedByEntered('labels') }),
+  parse: (text, inputs) => {
+    const entry = choiceEntry('labelling', labellingChoices)(text)
+    if ('refused' in entry || entry.change.labelling !== 'own' || !inputs || inputs.labels) return entry
+    return { change: { ...entry.change, labels: presentLabels(inputs) } }
+  },
+}
 
 const words = (text: string) => text.split(/[\s;,]+/).filter(word => word !== '')
 
@@ -34,10 +51,18 @@ export const labels: InputColumn = {
   value: ({ inputs }) => notOwn(inputs) === null ? inputs.labels?.join(' ') ?? null : null,
 }
 
-export const probabilityRule = choiceInput('probabilityRule', probabilityChoices, {
-  id: 'probabilityRule', title: 'Probabilities', group,
-  meaning: 'How often each point is sent: all alike, shaped (Maxwell–Boltzmann) to a wanted entropy, or as you enter.',
-}, { width: 16, unused: unusedByEntered('probabilities') })
+export const probabilityRule: InputColumn = {
+  ...choiceInput('probabilityRule', probabilityChoices, {
+    id: 'probabilityRule', title: 'Probabilities', group,
+    meaning: 'How often each point is sent: all alike, shaped (Maxwell–Boltzmann) to a wanted entropy, or as you enter, which begins with all alike.',
+  }, { width: 16, unused: unusedByEntered('probabilities') }),
+  parse: (text, inputs) => {
+    const entry = choiceEntry('probabilityRule', probabilityChoices)(text)
+    if ('refused' in entry || entry.change.probabilityRule !== 'own' || !inputs || inputs.probabilities) return entry
+    const { order } = rowSize(inputs)
+    return { change: { ...entry.change, probabilities: order === null ? null : Array.from({ length: order }, () => 1 / order) } }
+  },
+}
 
 export const shapedEntropy = numberInput('shapedEntropy', {
   id: 'shapedEntropy', title: 'Wanted entropy H', unit: 'bit/symbol', group, meaning: 'Entropy that shaped probabilities have.',
