@@ -13,7 +13,7 @@ import type { InformationSimulation } from './information-simulated'
 const lowest = -30
 const highest = 90
 /** The search ends when its step or its bracket is shorter, dB. */
-const tolerance = 1e-6
+const tolerance = 1e-5
 /** Either side of a simulated threshold, dB, from which the rate's slope is taken. */
 const slopeSpan = 0.25
 /** A simulated threshold is found with so many times fewer draws, and then refined with all of them, until it moves by less, in dB. */
@@ -49,7 +49,7 @@ export function rateThresholdDb(
   // Few draws find the place and the slope; where the rate is a number they do not matter.
   const few = { ...simulation, draws: Math.round((simulation?.draws ?? defaultDraws(order)) / fewer) }
   const roughly = (db: number) => excess(valueOf(estimate(db, few)))
-  let db = root(roughly, ...bracket(roughly, decibels(esN0ForCapacity(netBits, dimensions))))
+  let db = root(roughly, bracket(roughly, decibels(esN0ForCapacity(netBits, dimensions))))
   let rate = estimate(db)
   if (!isInterval(rate)) return db
 
@@ -62,25 +62,30 @@ export function rateThresholdDb(
   return { value: at(valueOf(rate)), low: at(highOf(rate)), high: at(lowOf(rate)) }
 }
 
-/** Two SNR values in dB between which the excess falls through 0, from a lower bound on. */
-function bracket(excess: (db: number) => number, bound: number): [number, number] {
+/** Two SNR values in dB, with the excess at each, above 0 at the lower one alone. */
+interface Bracket { low: number, atLow: number, high: number, atHigh: number }
+
+/** A bracket from a lower bound on. */
+function bracket(excess: (db: number) => number, bound: number): Bracket {
   // A simulated rate may lie a little above what the bound allows.
   let low = Math.min(highest, Math.max(lowest, bound - 0.01))
-  while (low > lowest && excess(low) <= 0) low = Math.max(lowest, low - 1)
-  if (low === lowest && excess(low) <= 0) {
+  let atLow = excess(low)
+  while (low > lowest && atLow <= 0) atLow = excess(low = Math.max(lowest, low - 1))
+  if (atLow <= 0) {
     throw new ModulationError('So few net bits per symbol are carried from −30 dB Es/N0 on: enter a larger code rate.', ['netBits'])
   }
   for (let step = 1; low < highest; step *= 2) {
     const high = Math.min(highest, low + step)
-    if (excess(high) <= 0) return [low, high]
+    const atHigh = excess(high)
+    if (atHigh <= 0) return { low, atLow, high, atHigh }
     low = high
+    atLow = atHigh
   }
   throw new ModulationError('The rate stays below these net bits per symbol up to 90 dB Es/N0: enter a smaller code rate.', ['netBits'])
 }
 
 /** Root in dB of a function that falls through 0, by regula falsi over the SNR with Illinois' halving of an end that stays. */
-function root(excess: (db: number) => number, low: number, high: number): number {
-  let [atLow, atHigh] = [excess(low), excess(high)]
+function root(excess: (db: number) => number, { low, atLow, high, atHigh }: Bracket): number {
   let stayed = 0
   let before = Infinity
   for (let step = 0; step < 100 && high - low > tolerance; step++) {
@@ -88,9 +93,10 @@ function root(excess: (db: number) => number, low: number, high: number): number
     const secant = decibels((x * atHigh - y * atLow) / (atHigh - atLow))
     // A rate that is H without rounding has no logarithm to go by.
     const db = secant > low && secant < high ? secant : (low + high) / 2
-    const value = excess(db)
-    if (value === 0 || Math.abs(db - before) < tolerance) return db
+    if (Math.abs(db - before) < tolerance) return db
     before = db
+    const value = excess(db)
+    if (value === 0) return db
     if (value > 0) {
       low = db
       atLow = value
