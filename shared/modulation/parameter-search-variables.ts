@@ -21,7 +21,7 @@ export interface Variable {
 /** Ring ratios are searched from here to here unless told otherwise. */
 const ratioBounds = [1.02, 12] as const
 /** Coordinates of points are searched so far about their start, in r.m.s. amplitudes of the points. */
-const pointReach = 0.6
+const pointReach = 1.5
 
 /**
  * The numbers to search, with their bounds. What only turns or scales the whole set is left out: the first phase of several, and of free points the one

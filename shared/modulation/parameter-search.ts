@@ -4,6 +4,8 @@ import { familyOf, generate } from './families'
 import type { FamilyId, FamilyParameters } from './families'
 import type { Interval } from './estimate'
 import { familyLabels } from './labels'
+import { evolutionFrom, stepEvolution } from './evolution'
+import type { Evolution } from './evolution'
 import { simplexAbout, sizeOf, step } from './nelder-mead'
 import type { Simplex } from './nelder-mead'
 import { searchGoal } from './parameter-search-goal'
@@ -28,9 +30,9 @@ export interface ParameterSearchRequest {
   probabilities?: readonly number[] | null
   /** default 1 */
   seed?: number
-  /** evaluations of the goal at most; default 200 a variable, at least 400 */
+  /** evaluations of the goal at most; default 600 a variable */
   budget?: number
-  /** simplices: the first about the start, the last about the best; others begin anywhere; default 4, at least 2 */
+  /** simplices, or populations: the first about the start, the last about the best; others begin anywhere; default 4, at least 2 */
   starts?: number
 }
 
@@ -45,10 +47,10 @@ export interface ParameterSearchState {
   evaluations: number
   budget: number
   starts: number
-  /** simplices that have come to an end */
+  /** simplices that are over: at their end, or left as the budget runs out */
   startsDone: number
-  /** at work, or the last one */
-  simplex: Simplex
+  /** at work, or the last one: a simplex, or an evolving population where there are many variables */
+  simplex: Simplex | Evolution
   /** the goal in the last simplex, dB; the value is the best of all */
   interval: Interval
   done: boolean
@@ -67,6 +69,10 @@ const smallSimplex = 1e-3
 const pointSimplex = 1e-7
 /** Values that differ by less, dB, have converged. */
 const convergedWithin = 2e-3
+/** From this part of the budget on only the last start goes on, about the best. */
+const polishFrom = 0.7
+/** Of so many variables and more a simplex makes no headway. */
+const manyVariables = 7
 /** Draws for a start that its family allows. */
 const draws = 100
 
@@ -79,7 +85,7 @@ const draws = 100
 export function createParameterSearch(request: ParameterSearchRequest, goal = searchGoal(request.goal, request.limit ?? { by: 'mean' })): ParameterSearchState {
   const start = completed(request.parameters, request.free)
   const variables = variablesOf(request.family, start, request.free, request.bounds ?? {})
-  const budget = request.budget ?? Math.max(400, 200 * variables.length)
+  const budget = request.budget ?? 600 * variables.length
   if (!(Number.isInteger(budget) && budget >= 1)) throw new ModulationError('The budget is a whole number of evaluations, from 1.', ['budget'])
   const starts = request.starts ?? 4
   if (!(Number.isInteger(starts) && starts >= 2)) throw new ModulationError('Starts are a whole number, from 2.', ['starts'])
@@ -88,7 +94,7 @@ export function createParameterSearch(request: ParameterSearchRequest, goal = se
   const place = placeOf(variables, start)
   return {
     request, variables, labels, best: { parameters: start, place, value }, startValue: value, evaluations: 1, budget, starts, startsDone: 0,
-    simplex: simplexAbout(place, firstStep), interval: { value, low: value, high: value }, done: false, converged: false,
+    simplex: beginning(place, firstStep, seedOf(request, 0)), interval: { value, low: value, high: value }, done: false, converged: false,
   }
 }
 
@@ -110,17 +116,21 @@ export function advanceParameterSearch(
 
 function takeStep(state: ParameterSearchState, goal: (constellation: Constellation) => number): void {
   if (state.done) return
-  step(state.simplex, place => valueAt(state, place, goal))
+  const f = (place: number[]) => valueAt(state, place, goal)
+  if ('mean' in state.simplex) stepEvolution(state.simplex, f)
+  else step(state.simplex, f)
   const known = state.simplex.values.filter(value => value !== null && value < unreachable) as number[]
   if (known.length > 0) state.interval = { value: state.best.value, low: Math.min(...known), high: Math.max(...known) }
   const complete = known.length === state.simplex.values.length
   const spread = state.interval.high - state.interval.low
   const size = sizeOf(state.simplex)
-  if ((complete && spread <= sameValue && size <= smallSimplex) || size <= pointSimplex) {
-    state.startsDone++
+  const ended = complete && ((spread <= sameValue && size <= smallSimplex) || size <= pointSimplex)
+  const late = state.startsDone < state.starts - 1 && state.evaluations >= polishFrom * state.budget
+  if (ended || late) {
+    state.startsDone = late ? state.starts - 1 : state.startsDone + 1
     if (state.startsDone === state.starts) {
       state.done = true
-      state.converged = complete && spread <= convergedWithin
+      state.converged = spread <= convergedWithin
     } else {
       state.simplex = nextSimplex(state)
     }
@@ -147,13 +157,20 @@ function reached(compute: () => number): number {
   }
 }
 
+const seedOf = ({ seed = 1 }: ParameterSearchRequest, start: number) => seed * 1000 + start
+
+function beginning(place: readonly number[], size: number, seed: number): Simplex | Evolution {
+  return place.length < manyVariables ? simplexAbout(place, size) : evolutionFrom(place, size / 2, seed)
+}
+
 /** Anywhere that the family allows; the last one about the best. */
-function nextSimplex({ request: { family, seed = 1 }, variables, best, starts, startsDone }: ParameterSearchState): Simplex {
-  if (startsDone === starts - 1) return simplexAbout(best.place, polishStep)
-  const random = seededRandom(seed * 1000 + startsDone)
+function nextSimplex({ request, variables, best, starts, startsDone }: ParameterSearchState): Simplex | Evolution {
+  const seed = seedOf(request, startsDone)
+  if (startsDone === starts - 1) return beginning(best.place, polishStep, seed)
+  const random = seededRandom(seed)
   for (let draw = 0; draw < draws; draw++) {
     const place = variables.map(() => random())
-    if (familyOf(family).validate(parametersAt(variables, best.parameters, place)).length === 0) return simplexAbout(place, firstStep)
+    if (familyOf(request.family).validate(parametersAt(variables, best.parameters, place)).length === 0) return beginning(place, firstStep, seed)
   }
-  return simplexAbout(best.place, firstStep)
+  return beginning(best.place, firstStep, seed)
 }

@@ -121,12 +121,24 @@ describe('goals', () => {
 })
 
 describe('free points', () => {
-  it('eight points that leave their ring win more than a decibel', () => {
-    const ring = generate('psk', { order: 8 }).points
-    const points = Array.from({ length: 8 }, (_, i) => [...ring.subarray(2 * i, 2 * i + 2)])
-    const found = searched({ family: 'custom', parameters: { points }, free: ['points'], goal: { kind: 'ser', target: 1e-3 } })
-    expect(found.best.value).toBeLessThan(found.startValue - 1)
+  const goal = { kind: 'ser', target: 1e-3 } as const
+  const ring = generate('psk', { order: 8 }).points
+  const points = Array.from({ length: 8 }, (_, i) => [...ring.subarray(2 * i, 2 * i + 2)])
+  const request: ParameterSearchRequest = { family: 'custom', parameters: { points }, free: ['points'], goal, starts: 2 }
+
+  it('eight points leave their ring for something better than seven about one, and than the densest lattice', () => {
+    const found = searched(request)
+    const required = searchGoal(goal, { by: 'mean' })
+    expect(found.best.value).toBeLessThan(required(generate('apsk', { rings: [1, 7], ratios: [] })))
+    expect(found.best.value).toBeLessThan(required(generate('hexagonal', { order: 8 })))
+    expect(found.converged).toBe(true)
   }, 60000)
+
+  it('go on from JSON, in slices, to the same end', () => {
+    let state = createParameterSearch({ ...request, budget: 150 })
+    while (!state.done) state = advanceParameterSearch(JSON.parse(JSON.stringify(state)) as ParameterSearchState, 0)
+    expect(JSON.stringify(state)).toBe(JSON.stringify(searched({ ...request, budget: 150 })))
+  })
 
   it('the farthest point stays, which leaves no turn and no scale', () => {
     const points = [[0.1, 0.2], [3, 0], [-1, 1], [0, -1]]
