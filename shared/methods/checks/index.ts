@@ -8,6 +8,7 @@ import { gaussianChecks } from './gaussian'
 import { geometryChecks } from './geometry'
 import { informationChecks } from './information'
 import { linkChecks } from './link'
+import { phaseErrorChecks } from './phase-error'
 import { spaceChecks } from './space'
 import { symbolErrorChecks } from './symbol-error'
 
@@ -16,7 +17,7 @@ export type { Check } from './check'
 
 /** Every published value that the build is held against. A new one is an entry in the file of its subject. */
 const all: readonly Check[] = [
-  ...energyChecks, ...gaussianChecks, ...geometryChecks, ...spaceChecks, ...symbolErrorChecks, ...bitErrorChecks, ...informationChecks, ...channelChecks, ...linkChecks,
+  ...energyChecks, ...gaussianChecks, ...geometryChecks, ...spaceChecks, ...symbolErrorChecks, ...bitErrorChecks, ...informationChecks, ...channelChecks, ...phaseErrorChecks, ...linkChecks,
 ]
 
 /** The checks with ids of their own: the method, and a number within it. */
