@@ -5,16 +5,16 @@ import { DiagramView } from './diagram-view'
 import { serExact } from './symbol-error-exact'
 import { SeenEdge } from './symbol-error-seen-edge'
 
-/** Edges that carry less than this part of the symbol error rate are left out. */
-const negligible = 1e-12
-
 /**
  * Probabilities that point i is sent and another one, c, decided on, for one or two dimensions; minimum-distance decisions.
  * @param geometry decision regions, from analyse
  * @param n0 noise density N0 above 0, signal units squared
+ * @param negligible edges that carry less than this part of the symbol error rate are left out
  * @param take gets each point i with its row p_i·P(c | i) over all c (that of i itself says nothing); the array is used again
  */
-export function decisionProbabilities(geometry: Geometry, n0: number, take: (i: number, row: Float64Array) => void): void {
+export function decisionProbabilities(
+  geometry: Geometry, n0: number, negligible: number, take: (i: number, row: Float64Array) => void,
+): void {
   const { constellation } = geometry
   const rate = serExact(geometry, n0)
   const farthest = rate > 0 ? n0 * (Math.log(geometry.neighbours.length / negligible) - Math.log(rate)) : 0

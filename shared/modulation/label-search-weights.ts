@@ -12,15 +12,18 @@ export interface PairWeights {
   weights: Float64Array
 }
 
-/** Pairs that weigh less than this part of the mean point are left out of the search, and all but so many of a point. */
+/** Pairs that weigh less than this part of the mean point are left out of the search. */
 const negligible = 1e-6
+/** Of a point with many partners the heaviest count, fewer where there are many points. */
 const mostPartners = 256
+const leastPartners = 64
+const mostPairs = 2 ** 18
 
 /** Weights from the exact probabilities of each decision, one or two dimensions. */
 export function exactWeights(geometry: Geometry, n0: number): PairWeights {
   const { order } = geometry.constellation
   const lists = Array.from({ length: order }, () => new Map<number, number>())
-  decisionProbabilities(geometry, n0, (i, row) => {
+  decisionProbabilities(geometry, n0, negligible, (i, row) => {
     row[i] = 0
     for (const c of heaviest(row)) {
       lists[i]!.set(c, (lists[i]!.get(c) ?? 0) + row[c]!)
@@ -56,7 +59,8 @@ function heaviest(row: Float64Array): number[] {
   for (let c = 0; c < row.length; c++) {
     if (row[c]! > least) chosen.push(c)
   }
-  return chosen.length <= mostPartners ? chosen : chosen.sort((a, b) => row[b]! - row[a]!).slice(0, mostPartners)
+  const most = Math.max(leastPartners, Math.min(mostPartners, mostPairs / row.length))
+  return chosen.length <= most ? chosen : chosen.sort((a, b) => row[b]! - row[a]!).slice(0, most)
 }
 
 function packed(lists: Map<number, number>[]): PairWeights {
