@@ -2,6 +2,7 @@ import { bracketedRoot } from './bracketed-root'
 import { bitErrorRates } from './bit-error'
 import type { BitErrorKind } from './bit-error'
 import { berExactCurve, requireExactBits } from './bit-error-exact'
+import type { Constellation } from './constellation'
 import { fromDecibels } from './decibels'
 import { ModulationError } from './errors'
 import { qInverse } from './gaussian'
@@ -69,7 +70,7 @@ export function requiredSnr(curve: ErrorCurve, target: number): RequiredSnr {
 }
 
 function solve(curve: ErrorCurve, target: number, counted: boolean): RequiredSnr {
-  if (!(target > 0 && target < 1)) throw new ModulationError('A target error rate is above 0 and below 1.', ['target'])
+  requireTarget(target)
   if ('geometry' in curve && curve.kind === 'berExact') return solveExactBits(curve.geometry, target)
   const { rate, meanEnergy, monotone, guess } = described(curve, target)
   const excess = (db: number) => Math.log(rate(meanEnergy / fromDecibels(db)) / target)
@@ -91,28 +92,46 @@ function solve(curve: ErrorCurve, target: number, counted: boolean): RequiredSnr
   return { esN0Db: bracketedRoot(excess, last, last + scanStep, NaN), crossings, floor }
 }
 
+function solveExactBits(geometry: Geometry, target: number): RequiredSnr {
+  requireExactBits(geometry)
+  return requiredOfBits(geometry.constellation, {
+    symbols: { geometry, kind: 'serExact' },
+    symbolRate: n0 => symbolErrorRates.serExact(geometry, n0),
+    bitRates: n0s => berExactCurve(geometry, n0s),
+  }, target)
+}
+
+/** A bit error rate with the symbol error rate of the same decisions. */
+export interface BitCurves {
+  symbols: ErrorCurve
+  symbolRate: (n0: number) => number
+  bitRates: (n0s: number[]) => Float64Array
+}
+
 /**
  * A symbol in error has from one to k wrong bits: the exact bit error rate lies between 1/k of the symbol error rate and all of it, which
  * falls throughout. So it crosses the target only between the places where those two do, and there it may rise.
  */
-function solveExactBits(geometry: Geometry, target: number): RequiredSnr {
-  requireExactBits(geometry)
-  const { meanEnergy, bitsPerSymbol } = geometry.constellation
-  const curve = { geometry, kind: 'serExact' } as const
-  const rateAt = (db: number) => symbolErrorRates.serExact(geometry, meanEnergy / fromDecibels(db))
-  const bitRates = (dbs: number[]) => berExactCurve(geometry, dbs.map(db => meanEnergy / fromDecibels(db)))
-  const end = rateAt(highest) > target ? highest : rateAt(lowest) <= target ? lowest : requiredEsN0Db(curve, target) + room
+export function requiredOfBits({ meanEnergy, bitsPerSymbol }: Constellation, { symbols, symbolRate, bitRates }: BitCurves, target: number): RequiredSnr {
+  requireTarget(target)
+  const rateAt = (db: number) => symbolRate(meanEnergy / fromDecibels(db))
+  const bitRatesAt = (dbs: number[]) => bitRates(dbs.map(db => meanEnergy / fromDecibels(db)))
+  const end = rateAt(highest) > target ? highest : rateAt(lowest) <= target ? lowest : requiredEsN0Db(symbols, target) + room
   const most = target * bitsPerSymbol
-  const begin = most >= 1 || rateAt(lowest) <= most ? lowest : rateAt(highest) > most ? highest : requiredEsN0Db(curve, most) - room
+  const begin = most >= 1 || rateAt(lowest) <= most ? lowest : rateAt(highest) > most ? highest : requiredEsN0Db(symbols, most) - room
   const steps = Math.max(1, Math.min(scanSteps, Math.ceil((end - begin) / scanStep)))
   const places = Array.from({ length: steps + 1 }, (_, n) => begin + (end - begin) * n / steps)
-  const met = [...bitRates(places)].map(rate => rate <= target)
+  const met = [...bitRatesAt(places)].map(rate => rate <= target)
   if (!met[steps]) throw missed(null)
   const crossings = met.filter((now, n) => n > 0 && now !== met[n - 1]).length
   if (crossings === 0) throw alwaysMet()
   const last = met.lastIndexOf(false)
-  const excess = (db: number) => Math.log(bitRates([db])[0]! / target)
+  const excess = (db: number) => Math.log(bitRatesAt([db])[0]! / target)
   return { esN0Db: bracketedRoot(excess, places[last]!, places[last + 1]!, NaN), crossings, floor: null }
+}
+
+function requireTarget(target: number): void {
+  if (!(target > 0 && target < 1)) throw new ModulationError('A target error rate is above 0 and below 1.', ['target'])
 }
 
 function missed(floor: number | null): ModulationError {
