@@ -26,7 +26,7 @@ export const serNearest = valueColumn('serNearest', '0.00e-0', {
 
 export const serExact = valueColumn('serExact', '0.00e-0', {
   id: 'serExact', method: 'exactSer', title: 'SER at available, exact', group, firstOpening: true, width: 25,
-  meaning: 'Symbol error rate at the available Es/N0, exact for minimum-distance decisions.',
+  meaning: 'Symbol error rate at the available Es/N0, exact for the row\'s decisions and channel; in more dimensions an estimate with its interval where no exact way is known.',
   formula: 'Σᵢ pᵢ Σ_edges (1/2π) ∫ exp(−(h²+t²)/N0)·h/(h²+t²) dt; one dimension: sums of Q', source: 'Methods §2; Craig 1991', tolerance,
   lines: v => at(v, v.serExact),
 })

@@ -41,7 +41,10 @@ export const netBits = valueColumn('netBits', '0.000', {
   id: 'netBits', method: 'netBits', title: 'Net bits R', unit: 'bit/symbol', group, width: 22,
   meaning: 'Net bits per symbol: what energy per bit, rates and gaps use.',
   formula: 'R = H − (1−r)·k, which is r·k for equal probabilities', source: 'Methods §0; Böcherer 2015', tolerance,
-  lines: (v, row) => [`r = ${shown(row.inputs.codeRate, 'fraction')}, k = ${shown(v.bitsPerSymbol, '0.000')}: R = ${shown(v.netBits, '0.000')} bit/symbol`],
+  lines: (v, { inputs }) => [
+    `r = ${shown(inputs.codeRate, 'fraction')}, k = ${shown(v.bitsPerSymbol, '0.000')}: R = ${shown(v.netBits, '0.000')} bit/symbol`,
+    ...inputs.probabilityRule === 'equal' || v.bitsPerSymbol === null ? [] : [`of probabilities with the entropy H = ${shown(v.netBits + (1 - inputs.codeRate) * v.bitsPerSymbol, '0.000')} bit/symbol`],
+  ],
 })
 
 export const bitsPerSymbol = valueColumn('bitsPerSymbol', '0.000', {
