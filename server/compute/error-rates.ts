@@ -1,4 +1,4 @@
-import { berExactCurve, berFadingCurve, berMap, bitErrorRates, fromDecibels, requiredSnr, serExactCurve, serFadingCurve, serMap, serMapUnion } from '#shared/modulation'
+import { berExactCurve, berFadingCurve, berMap, bitErrorRates, fromDecibels, requiredFadingSnr, requiredSnr, serExactCurve, serFadingCurve, serMap, serMapUnion } from '#shared/modulation'
 import type { BitErrorKind, Channel, Constellation, Estimate, Geometry, RequiredSnr, SymbolErrorKind } from '#shared/modulation'
 import { symbolErrorRates } from '#shared/modulation/symbol-error'
 import type { CanonicalFading, CanonicalInputs, CanonicalPoints } from '#shared/study/canonical-inputs'
@@ -58,9 +58,9 @@ function mapRate({ constellation }: Geometry, kind: ErrorKind): ErrorRate | null
   }
 }
 
-/** Fading with maximal-ratio combining; what is exact is so in one and two dimensions. Of all rates only the exact BER may rise again. */
+/** Fading with maximal-ratio combining; what is exact is so in one and two dimensions. */
 function fadingRate(geometry: Geometry, kind: ErrorKind, fading: CanonicalFading): ErrorRate | null {
-  const { constellation: { dimensions, meanEnergy } } = geometry
+  const { constellation: { dimensions } } = geometry
   if (dimensions > 2 && (kind === 'serExact' || kind === 'berExact')) return null
   const channel: Channel = {
     kind: fading.kind, branches: fading.branches, m: fading.m, kFactor: fading.kDb === undefined ? undefined : fromDecibels(fading.kDb),
@@ -68,7 +68,7 @@ function fadingRate(geometry: Geometry, kind: ErrorKind, fading: CanonicalFading
   const curve = (n0s: readonly number[]) => isBitError(kind) ? berFadingCurve(geometry, kind, n0s, channel) : serFadingCurve(geometry, kind, n0s, channel)
   return {
     rates: n0s => [...curve(n0s)],
-    required: target => noted(requiredSnr({ rate: n0 => curve([n0])[0]!, meanEnergy, monotone: kind !== 'berExact' }, target)),
+    required: target => noted(requiredFadingSnr(geometry, kind, target, channel)),
   }
 }
 
