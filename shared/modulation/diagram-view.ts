@@ -1,3 +1,4 @@
+import { requirePlane } from './geometry'
 import type { Geometry } from './geometry'
 
 /** Edges of one shape, on average, from which a set is regular. */
@@ -25,7 +26,8 @@ export class DiagramView {
   private readonly t2: Float64Array
 
   /** @param geometry decision regions of two dimensions */
-  constructor({ constellation: { points, order }, offsets, neighbours, distances, edges }: Geometry) {
+  constructor(geometry: Geometry) {
+    const { constellation: { points, order }, offsets, neighbours, distances, edges } = requirePlane(geometry)
     const byX = Int32Array.from({ length: order }, (_, i) => i).sort((i, j) => points[2 * i]! - points[2 * j]! || i - j)
     const rank = new Int32Array(order)
     byX.forEach((i, place) => rank[i] = place)

@@ -1,3 +1,4 @@
+import { requirePlane } from './geometry'
 import type { Geometry } from './geometry'
 
 /** A rectangle of the plane, signal units. */
@@ -11,9 +12,11 @@ export interface Box {
 /**
  * Decision cells as polygons clipped to a box, for drawing.
  * Points of one dimension lie on the horizontal axis; their cells are strips.
+ * @throws ModulationError with path ['dimensions'] for more than two dimensions
  * @returns for each point the corners [x, y], counterclockwise; none where the cell lies outside the box
  */
 export function decisionCells(geometry: Geometry, box: Box): number[][][] {
+  requirePlane(geometry)
   const { constellation: { points, dimensions, order }, offsets, neighbours } = geometry
   const at = (i: number) => dimensions === 1 ? [points[i]!, 0] : [points[2 * i]!, points[2 * i + 1]!]
   return Array.from({ length: order }, (_, i) => {

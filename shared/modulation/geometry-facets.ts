@@ -1,11 +1,7 @@
+import type { SpaceFacets } from './geometry-space'
+
 /** Facets of all decision cells, each once, before they are gathered by point: list entry f lies between points first[f] and second[f]. */
-export interface Facets {
-  /** d_min, signal units */
-  minimumDistance: number
-  first: number[]
-  second: number[]
-  /** distance of the two points */
-  distance: number[]
+export interface Facets extends SpaceFacets {
   /** the facet's ends along the bisector, left of first → second, from the middle between the points; may be infinite */
   start: number[]
   end: number[]

@@ -1,6 +1,7 @@
 import type { Constellation } from './constellation'
 import { probabilityOf } from './constellation'
 import type { Facets } from './geometry-facets'
+import type { SpaceFacets } from './geometry-space'
 
 /** Distances of relevant neighbours, rising, with what the pairs of each weigh: Σ (p_i + p_j). */
 export interface DistanceClasses {
@@ -27,15 +28,10 @@ export interface Pieces {
 /** Lengths that differ by less than this part of d_min are equal: it moves no error rate above 1e-30 by 1e-10. */
 export const quantum = 1e-13
 
-/**
- * Congruence classes of distances and of cut edges.
- * Both sides of a facet see it at the same distance, so that each is taken once with both probabilities.
- */
-export function piecesOf(constellation: Constellation, facets: Facets): { distanceClasses: DistanceClasses, pieces: Pieces } {
-  const { first, second, distance, start, end } = facets
-  const step = quantum * facets.minimumDistance
-  const weights = first.map((i, f) => probabilityOf(constellation, i) + probabilityOf(constellation, second[f]!))
-
+/** Congruence classes of cut edges. Both sides of a facet see it at the same distance, so that each is taken once with both probabilities. */
+export function piecesOf(constellation: Constellation, facets: Facets): Pieces {
+  const { distance, start, end } = facets
+  const weights = weightsOf(constellation, facets)
   const rows: Row[] = []
   distance.forEach((d, f) => {
     const h = d / 2
@@ -44,19 +40,21 @@ export function piecesOf(constellation: Constellation, facets: Facets): { distan
     else if (start[f]! >= 0) rows.push({ h, a: start[f]!, b: end[f]!, weight })
     else rows.push({ h, a: 0, b: end[f]!, weight }, { h, a: 0, b: -start[f]!, weight })
   })
-  return {
-    distanceClasses: distanceClassesOf(distance, weights, step),
-    pieces: packed(merged(rows, step)),
-  }
+  return packed(merged(rows, quantum * facets.minimumDistance))
 }
 
 /** A piece of an edge at distance h, from a to b along the line from the foot of the perpendicular. */
 export interface Row { h: number, a: number, b: number, weight: number }
 
-function distanceClassesOf(distance: number[], weights: number[], step: number): DistanceClasses {
-  const classes = merged(distance.map((h, f) => ({ h, a: 0, b: 0, weight: weights[f]! })), step)
+/** Classes of equal distances of relevant neighbours. */
+export function distanceClassesOf(constellation: Constellation, facets: SpaceFacets): DistanceClasses {
+  const weights = weightsOf(constellation, facets)
+  const classes = merged(facets.distance.map((h, f) => ({ h, a: 0, b: 0, weight: weights[f]! })), quantum * facets.minimumDistance)
   return { distance: Float64Array.from(classes, row => row.h), weight: Float64Array.from(classes, row => row.weight) }
 }
+
+const weightsOf = (constellation: Constellation, { first, second }: SpaceFacets) =>
+  first.map((i, f) => probabilityOf(constellation, i) + probabilityOf(constellation, second[f]!))
 
 /** Rows whose three lengths agree to a step, together; in rising order of h, a and b. */
 export function merged(rows: Row[], step: number): Row[] {

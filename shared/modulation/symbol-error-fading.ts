@@ -69,10 +69,11 @@ export function addFadedPieces(sums: Float64Array, pieces: readonly Row[], n0s: 
   }
 }
 
-function exact({ constellation, pieces: { h, a, b, weight } }: Geometry, n0s: ArrayLike<number>, fading: Fading, pairwise: FadedPairwise) {
-  if (constellation.dimensions > 2) {
+function exact({ pieces }: Geometry, n0s: ArrayLike<number>, fading: Fading, pairwise: FadedPairwise) {
+  if (!pieces) {
     throw new ModulationError('The exact symbol error rate with fading is offered for one and two dimensions: use the bound.', ['dimensions'])
   }
+  const { h, a, b, weight } = pieces
   const sums = new Float64Array(n0s.length)
   addFadedPieces(sums, Array.from(h, (distance, n) => ({ h: distance, a: a[n]!, b: b[n]!, weight: weight[n]! })), n0s, fading, pairwise)
   return sums

@@ -1,4 +1,5 @@
 import { probabilityOf } from './constellation'
+import { requireEdges } from './geometry'
 import type { Geometry } from './geometry'
 import { turnedEdge } from './turned-point'
 import type { TurnedEdge } from './turned-point'
@@ -19,7 +20,11 @@ const quantum = 1e-12
 /** By geometry, as error rates are asked for at one N0 after another. */
 const known = new WeakMap<Geometry, TurnedClass[]>()
 
-/** Classes of congruent points, for geometry of two dimensions. */
+/**
+ * Classes of congruent points.
+ * @param geometry of two dimensions
+ * @throws ModulationError with path ['dimensions'] for more, where cells have no edges
+ */
 export function turnedClassesOf(geometry: Geometry): TurnedClass[] {
   const before = known.get(geometry)
   if (before) return before
@@ -38,7 +43,8 @@ export function turnedClassesOf(geometry: Geometry): TurnedClass[] {
   return result
 }
 
-function edgesOf({ constellation, offsets, neighbours, distances, edges }: Geometry, i: number): TurnedEdge[] {
+function edgesOf({ constellation, offsets, neighbours, distances, edges: given }: Geometry, i: number): TurnedEdge[] {
+  const edges = requireEdges(given)
   const { points } = constellation
   return Array.from({ length: offsets[i + 1]! - offsets[i]! }, (_, n) => {
     const entry = offsets[i]! + n

@@ -1,5 +1,6 @@
 import type { Constellation } from './constellation'
 import { edgeFlow } from './edge-flow'
+import { requireEdges } from './geometry'
 import type { CellEdges } from './geometry'
 import { onesIn } from './labels/words'
 import { SeenEdge } from './symbol-error-seen-edge'
@@ -9,7 +10,8 @@ export interface Cells {
   constellation: Constellation
   offsets: Int32Array
   neighbours: Int32Array
-  edges: CellEdges
+  /** null for more than two dimensions */
+  edges: CellEdges | null
 }
 
 /** Each edge of a diagram of one or two dimensions once, between the cells of points a and b. */
@@ -35,7 +37,8 @@ const density = new Float64Array(1)
 const sum = new Float64Array(1)
 
 /** The edges of all cells, each from the point of the lower index that has it. */
-export function diagramEdgesOf({ constellation: { points, dimensions, order }, offsets, neighbours, edges }: Cells): DiagramEdges {
+export function diagramEdgesOf({ constellation: { points, dimensions, order }, offsets, neighbours, edges: given }: Cells): DiagramEdges {
+  const edges = requireEdges(given)
   const [a, entries] = [[] as number[], [] as number[]]
   for (let i = 0; i < order; i++) {
     for (let entry = offsets[i]!; entry < offsets[i + 1]!; entry++) {
@@ -55,6 +58,27 @@ export function diagramEdgesOf({ constellation: { points, dimensions, order }, o
     ax: Float64Array.from(a, x), ay: Float64Array.from(a, y), ex: along(x), ey: along(y),
     h: Float64Array.from(entries, entry => edges.h[entry]!),
     t1: Float64Array.from(entries, entry => edges.t1[entry]!), t2: Float64Array.from(entries, entry => edges.t2[entry]!),
+  }
+}
+
+/**
+ * The edges that change the number of wrong bits of a word, and come within a distance of a place.
+ * @param words labels as numbers
+ * @param word what was sent
+ */
+export function edgesThatMatter(diagram: DiagramEdges, words: Uint16Array, word: number, x: number, y: number, distance: number): DiagramEdges {
+  const { a, b, ax, ay, ex, ey, h, t1, t2 } = diagram
+  const kept = a.map((_, e) => e).filter((e) => {
+    if (onesIn[word ^ words[a[e]!]!] === onesIn[word ^ words[b[e]!]!]) return false
+    const [dx, dy] = [x - ax[e]!, y - ay[e]!]
+    const foot = dy * ex[e]! - dx * ey[e]!
+    const aside = Math.max(0, t1[e]! - foot, foot - t2[e]!)
+    return Math.hypot(h[e]! - (dx * ex[e]! + dy * ey[e]!), aside) <= distance
+  })
+  const some = (values: Float64Array) => Float64Array.from(kept, e => values[e]!)
+  return {
+    a: kept.map(e => a[e]!), b: kept.map(e => b[e]!),
+    ax: some(ax), ay: some(ay), ex: some(ex), ey: some(ey), h: some(h), t1: some(t1), t2: some(t2),
   }
 }
 

@@ -46,7 +46,6 @@ describe('refused constellations', () => {
     ['short labels', () => createConstellation(square, { labels: ['0', '01', '10', '11'] }), 'A label is a word of 2 bits 0 or 1.', ['labels', 0]],
     ['equal labels', () => createConstellation(square, { labels: ['00', '01', '00', '11'] }), 'All labels are different: points 1 and 3 have the same one.', ['labels', 2]],
     ['a spacing of 0', () => normalise(createConstellation(square), { normalisation: 'minimumDistance', spacing: 0 }), 'Spacing is the minimum distance in signal units, a number above 0.', ['spacing']],
-    ['geometry of three dimensions', () => analyse(createConstellation([[1, 0, 0], [0, 1, 0]])), 'Geometry is offered for one and two dimensions.', ['dimensions']],
   ]
   it.each(cases)('%s: the sentence', (_, call, message) => expect(refusal(call).message).toBe(message))
   it.each(cases)('%s: the path', (_, call, __, path) => expect(refusal(call).path).toEqual(path))

@@ -58,7 +58,6 @@ describe('a refused evaluation names the field', () => {
     ['family', { constellation: { family: 'spiral' } }, ['constellation', 'family']],
     ['order', { constellation: { family: 'psk', order: 1 } }, ['constellation', 'order']],
     ['coincident points', { constellation: { family: 'custom', points: [[0, 1], [0, 1]] } }, ['constellation', 'points', 1]],
-    ['three dimensions', { constellation: { family: 'custom', points: [[0, 1, 2], [0, 1, 3]] } }, ['constellation', 'points']],
     ['quantity', { quantities: ['serExact', 'berGuessed'] }, ['quantities', 1]],
     ['labels for a bit error rate', { constellation: { family: 'custom', points }, quantities: ['berExact'] }, ['constellation', 'labels']],
     ['labels for six points', { constellation: { family: 'psk', order: 6 }, quantities: ['berNearest'] }, ['constellation', 'labels']],
