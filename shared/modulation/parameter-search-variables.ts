@@ -75,7 +75,7 @@ export function parametersAt(variables: readonly Variable[], parameters: FamilyP
 
 function numbersOf(parameters: FamilyParameters, parameter: FreeParameter): number[] {
   const numbers = parameter === 'points' ? parameters.points?.flat() : parameters[parameter]
-  if (!numbers?.length) throw new ModulationError(`A search of ${parameter} begins at some: enter them.`, [parameter])
+  if (!numbers?.length) throw new ModulationError(`A search begins at given values: enter ${parameter === 'offset' ? 'an offset' : parameter}.`, [parameter])
   return [...numbers]
 }
 

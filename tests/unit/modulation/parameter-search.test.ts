@@ -152,6 +152,7 @@ describe('refusals', () => {
   const goal = { kind: 'ser', target: 1e-3 } as const
   it.each([
     ['a parameter that the family lacks', { family: 'psk', parameters: { order: 8 }, free: ['ratios'], goal }, ['free']],
+    ['no points to begin at', { family: 'custom', parameters: {}, free: ['points'], goal }, ['points']],
     ['bounds that leave the start out', { ...rings, bounds: { ratios: [3, 4] }, goal }, ['bounds', 'ratios']],
     ['nothing free', { ...rings, free: [], goal }, ['free']],
     ['an empty budget', { ...rings, budget: 0, goal }, ['budget']],
