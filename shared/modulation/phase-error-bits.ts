@@ -10,7 +10,7 @@ import { coreSpan, overPhase, phaseDensity, phaseMass, requirePhaseError } from 
 import { phaseTolerance, serWithPhaseError, smoothSpacing } from './phase-error'
 import { breaksOf, crossingsOf, turnedEdge } from './turned-point'
 import type { TurnedEdge } from './turned-point'
-import { diagramEdgesOf, wrongBitsAt } from './wrong-bits'
+import { diagramEdgesOf, edgesThatMatter, wrongBitsAt } from './wrong-bits'
 import type { DiagramEdges } from './wrong-bits'
 
 /** Edges too far away to matter may together take this part of the sum. */
@@ -39,16 +39,16 @@ export function berWithPhaseError(geometry: Geometry, n0: number, sigmaRad: numb
   let sum = 0
   words.forEach((word, i) => {
     const { edges, radius, turn } = turning(constellation, diagram, i)
-    const wrong = (phi: number) => {
-      const [x, y] = turn(phi)
-      return density(phi) * wrongBitsAt(diagram, words, word, x, y, nearestTo(constellation, x, y), n0, reach)
-    }
     const p = probabilityOf(constellation, i)
-    sum += p * overPhase(sigmaRad, phaseTolerance / 10, limit => integrateAdaptively(
-      wrong,
-      breaksOf(edges, radius, { n0, limit, core: coreSpan * sigmaRad, spacing: smoothSpacing(radius, sigmaRad, n0) }),
-      phaseTolerance, phaseTolerance / 10 * sum / p,
-    ))
+    sum += p * overPhase(sigmaRad, phaseTolerance / 10, (limit) => {
+      const some = edgesThatMatter(diagram, words, word, ...turn(0), Math.sqrt(reach) + 2 * radius * Math.sin(limit / 2))
+      const wrong = (phi: number) => {
+        const [x, y] = turn(phi)
+        return density(phi) * wrongBitsAt(some, words, word, x, y, nearestTo(constellation, x, y), n0, reach)
+      }
+      const range = { n0, limit, core: coreSpan * sigmaRad, spacing: smoothSpacing(radius, sigmaRad, n0) }
+      return integrateAdaptively(wrong, breaksOf(edges, radius, range), phaseTolerance, phaseTolerance / 10 * sum / p)
+    })
   })
   return sum / constellation.bitsPerSymbol
 }

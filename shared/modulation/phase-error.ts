@@ -18,10 +18,11 @@ const negligibleExponent = 30
 const jumpSpacing = 1e-9
 
 /**
- * An integrand that the noise makes smooth needs no breaks nearer to each other than half the angle over which noise or phase error spread.
+ * An integrand that the noise makes smooth needs no breaks nearer to each other than a few times the angle over which noise or phase error
+ * spread: 21 nodes do for that.
  * @param radius of the point
  */
-export const smoothSpacing = (radius: number, sigma: number, n0: number): number => Math.min(sigma, Math.sqrt(n0 / 2) / radius) / 2
+export const smoothSpacing = (radius: number, sigma: number, n0: number): number => 3 * Math.min(sigma, Math.sqrt(n0 / 2) / radius)
 
 /**
  * Exact mean symbol error rate under a normal carrier phase error, for two dimensions: the sent point turns against unmoved cells.
