@@ -58,9 +58,15 @@ export function formatNumber(value: number, format: NumberFormat, round: Roundin
 export const formatEnds = ({ low, high }: Pick<Interval, 'low' | 'high'>, format: NumberFormat): string =>
   `${formatNumber(low, format, 'down')}…${formatNumber(high, format, 'up')}`
 
-/** An estimate in a cell: its interval comes first, so that the digits of a column stand below each other. */
+/** Whether an interval is too narrow to show: both of its ends read alike. */
+const isNarrow = ({ low, high }: Interval, format: NumberFormat) => formatNumber(low, format, 'down') === formatNumber(high, format, 'up')
+
+/**
+ * An estimate in a cell: its interval comes first, so that the digits of a column stand below each other. One that the digits shown
+ * do not tell from a number is shown as that.
+ */
 export const formatEstimate = (interval: Interval, format: NumberFormat, round: Rounding = 'nearest'): string =>
-  `(${formatEnds(interval, format)}) ${formatNumber(interval.value, format, round)}`
+  `${isNarrow(interval, format) ? '' : `(${formatEnds(interval, format)}) `}${formatNumber(interval.value, format, round)}`
 
 /** An estimate with all its digits: what copying gives. */
 export const plainEstimate = ({ value, low, high }: Interval): string => `${plain(value)} (${plain(low)}…${plain(high)})`

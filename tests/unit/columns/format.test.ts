@@ -26,5 +26,6 @@ describe('an estimate', () => {
   it('has ends that are rounded outwards', () => expect(formatEnds(interval, '0.00')).toBe('20.79…20.91'))
   it('has its number last, below those of exact cells', () => expect(formatEstimate(interval, '0.00')).toBe('(20.79…20.91) 20.84'))
   it('rounds a margin down at both of its ends that could flatter', () => expect(formatEstimate({ value: 1.087, low: 1.029, high: 1.131 }, '+0.00', 'down')).toBe('(+1.02…+1.14) +1.08'))
+  it('is a number where the digits shown do not tell its ends apart', () => expect(formatEstimate({ value: 3, low: 3 - 1e-14, high: 3 }, '0.000')).toBe('3.000'))
   it('is copied with all digits', () => expect(plainEstimate(interval)).toBe('20.8449 (20.7911…20.9011)'))
 })
