@@ -1,7 +1,8 @@
 import { bracketedRoot } from './bracketed-root'
 import { bitErrorRates } from './bit-error'
 import type { BitErrorKind } from './bit-error'
-import { berExactCurve, requireExactBits } from './bit-error-exact'
+import { berExactCurve } from './bit-error-exact'
+import { bitFactorsOf, serOfFactors } from './bit-error-factors'
 import type { Constellation } from './constellation'
 import { fromDecibels } from './decibels'
 import { ModulationError } from './errors'
@@ -93,12 +94,15 @@ function solve(curve: ErrorCurve, target: number, counted: boolean): RequiredSnr
 }
 
 function solveExactBits(geometry: Geometry, target: number): RequiredSnr {
-  requireExactBits(geometry)
-  return requiredOfBits(geometry.constellation, {
-    symbols: { geometry, kind: 'serExact' },
-    symbolRate: n0 => symbolErrorRates.serExact(geometry, n0),
-    bitRates: n0s => berExactCurve(geometry, n0s),
-  }, target)
+  const { constellation } = geometry
+  const bitRates = (n0s: number[]) => berExactCurve(geometry, n0s)
+  // Refuses what has no exact rate before anything is searched.
+  bitRates([])
+  if (constellation.dimensions <= 2) {
+    return requiredOfBits(constellation, { symbols: { geometry, kind: 'serExact' }, symbolRate: n0 => symbolErrorRates.serExact(geometry, n0), bitRates }, target)
+  }
+  const symbolRate = (n0: number) => serOfFactors(bitFactorsOf(constellation)!, n0)
+  return requiredOfBits(constellation, { symbols: { rate: symbolRate, meanEnergy: constellation.meanEnergy, monotone: true }, symbolRate, bitRates }, target)
 }
 
 /** A bit error rate with the symbol error rate of the same decisions. */

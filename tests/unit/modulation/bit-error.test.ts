@@ -1,6 +1,9 @@
 import { readFileSync } from 'node:fs'
 import { describe, expect, it } from 'vitest'
-import { ModulationError, analyse, berAllPairs, berExact, berExactCurve, berNearest, createConstellation, generate, naturalLabels, q, serExact } from '../../../shared/modulation'
+import {
+  ModulationError, analyse, berAllPairs, berExact, berExactCurve, berNearest, createConstellation, familyLabels, generate, naturalLabels, q, qInverse,
+  requiredEsN0Db, serExact,
+} from '../../../shared/modulation'
 import { randomFrom } from './seeded'
 
 // 30-digit values by tests/reference/data/make-ber.py: brute-force clipping and quadrature with mpmath.
@@ -80,6 +83,37 @@ describe('bit error rates', () => {
   it('is 0 where the symbol error rate underflows', () => expect(berExact(geometry, 1e-9)).toBe(0))
 })
 
+describe('a product whose bits each depend on one factor', () => {
+  const levels = [-3, -1, 1.5, 3]
+  const points = levels.flatMap(x => levels.map(y => [x, 2 * y]))
+  const natural = naturalLabels(4)!
+  const labels = natural.flatMap(a => natural.map(b => a + b))
+  /** Turned, it is no product in its own coordinates. */
+  const turned = points.map(([x, y]) => [0.6 * x! - 0.8 * y!, 0.8 * x! + 0.6 * y!])
+  it.each([20, 1, 0.1])('has the mean of their rates, as when it is turned, at N0 = %d', (n0) => {
+    expect(Math.abs(berExact(geometryOf(points, labels), n0) / berExact(geometryOf(turned, labels), n0) - 1)).toBeLessThan(1e-9)
+  })
+  it('keeps unequal probabilities that are products', () => {
+    const p = [0.1, 0.4, 0.3, 0.2]
+    const probabilities = p.flatMap(a => p.map(b => a * b))
+    const rates = [points, turned].map(set => berExact(analyse(createConstellation(set, { labels, probabilities })), 1))
+    expect(Math.abs(rates[0]! / rates[1]! - 1)).toBeLessThan(1e-9)
+  })
+  // Energy Es/N in each coordinate: Q(√(2·Es/(N·N0)))
+  it('a hypercube of eight dimensions has the rate of one binary coordinate', () => {
+    const cube = analyse(generate('hypercube', { order: 256 }, { labels: familyLabels('hypercube', { order: 256 }) }))
+    expect(Math.abs(berExact(cube, 0.05) / q(Math.sqrt(5)) - 1)).toBeLessThan(1e-12)
+  })
+  it('twice QPSK requires 3.01 dB more than once, at the same energy a bit', () => {
+    const factors = [{ family: 'psk', order: 4 }, { family: 'psk', order: 4 }] as const
+    const twice = analyse(generate('product', { factors }, { labels: familyLabels('product', { factors }) }))
+    expect(requiredEsN0Db({ geometry: twice, kind: 'berExact' }, 1e-5)).toBeCloseTo(20 * Math.log10(qInverse(1e-5)) + 10 * Math.log10(2), 8)
+  })
+  it('a coordinate that is the same for all points counts nothing', () => {
+    expect(berExact(geometryOf(levels.map(x => [x, 7]), natural), 0.4)).toBeCloseTo(berExact(geometryOf(levels.map(x => [x]), natural), 0.4), 14)
+  })
+})
+
 describe('a seeded Monte Carlo agrees with the exact BER', () => {
   it('of 16 random points at 12 dB', () => {
     const random = randomFrom(99)
@@ -121,6 +155,10 @@ describe('refused', () => {
   it('says the remedy', () => expect(() => berExact(unlabelled, 0.1)).toThrow('A bit error rate needs labels: give each of the 8 points a different word of 3 bits.'))
   it('says that the number of points is no power of two', () => {
     expect(() => berExact(analyse(generate('psk', { order: 6 })), 0.1)).toThrow('labels need a power of two of points, and there are 6.')
+  })
+  it('biorthogonal signals in four dimensions, which are no product', () => {
+    const geometry = analyse(generate('biorthogonal', { order: 8 }, { labels: familyLabels('biorthogonal', { order: 8 }) }))
+    expect(pathOf(() => berExact(geometry, 0.1))).toEqual(['dimensions'])
   })
   it('a noise density of 0', () => expect(pathOf(() => berExact(geometryOf(scattered(5, 4)), 0))).toEqual(['n0']))
 })
