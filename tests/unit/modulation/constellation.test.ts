@@ -1,5 +1,5 @@
 import { describe, expect, it } from 'vitest'
-import { ModulationError, analyse, asymptoticEfficiencyDb, createConstellation, generate, minimumDistanceOf, normalise, paprDb } from '../../../shared/modulation'
+import { ModulationError, asymptoticEfficiencyDb, createConstellation, generate, minimumDistanceOf, normalise, paprDb } from '../../../shared/modulation'
 
 const square = [[1, 1], [1, -1], [-1, 1], [-1, -1]]
 
