@@ -1,7 +1,7 @@
 import type { StudyRole } from '#shared/schemas/members'
 
 /** How a route finds the study that it belongs to. */
-export type Subject = 'study' | 'candidate' | 'sweep'
+export type Subject = 'study' | 'candidate' | 'sweep' | 'search'
 
 /**
  * Who may call a route: anyone, any signed-in account, one signed in with its password and not by an API token, administrators,
@@ -78,6 +78,11 @@ export const rules = {
   'GET /api/studies/:id/sweeps': reads('study'),
   'POST /api/studies/:id/sweeps': edits('study'),
   'DELETE /api/sweeps/:id': edits('sweep'),
+
+  'POST /api/candidates/:id/searches': edits('candidate'),
+  'GET /api/studies/:id/searches': reads('study'),
+  'DELETE /api/searches/:id': edits('search'),
+  'POST /api/searches/:id/resume': edits('search'),
 
   'GET /api/studies/:id/export.xlsx': reads('study'),
   'GET /api/studies/:id/export.csv': reads('study'),

@@ -2,6 +2,7 @@ import { z } from 'zod'
 import { candidate, candidateChange, candidateMove, candidateSelection, candidatesCreation, pinChange } from '#shared/schemas/candidates'
 import { listOf, pageQuery } from '#shared/schemas/common'
 import { evaluation, evaluationAnswer } from '#shared/schemas/evaluate'
+import { search, searchCreation } from '#shared/schemas/searches'
 import { startedSweep, sweep, sweepCancellation, sweepCreation } from '#shared/schemas/sweeps'
 import { partsAnswer, partsRequest } from '#shared/schemas/parts'
 import { bitErrorCurves, candidateConstellation, candidateCurves, curvesQuery, informationCurves } from '#shared/schemas/values'
@@ -45,6 +46,17 @@ export const sweepOperations = tagged('Sweeps', {
     body: sweepCreation, status: 202, answer: startedSweep,
   },
   'DELETE /api/sweeps/:id': { summary: 'Cancels a sweep; rows without numbers are removed, the others stay.', answer: sweepCancellation },
+})
+
+export const searchOperations = tagged('Searches', {
+  'POST /api/candidates/:id/searches': {
+    summary: 'Begins a search from a row: for labels of a lower BER at the available Es/N0, or for parameters that need less SNR. How far it is follows as events; where it finds something better, that becomes a row behind this one whose note says how it was found.',
+    body: searchCreation, status: 202, answer: search,
+    refusals: { 422: 'The search or the row lacks something, such as labels or a start within the bounds; the message says what to change.' },
+  },
+  'GET /api/studies/:id/searches': { summary: 'The study\'s searches, the newest first; at most 200.', answer: listOf(search) },
+  'DELETE /api/searches/:id': { summary: 'Cancels a search; what it has found is kept, and it may be resumed.', answer: search },
+  'POST /api/searches/:id/resume': { summary: 'Goes on with a search that was cancelled or has failed, from where it stood.', answer: search },
 })
 
 export const evaluationOperations = tagged('Evaluation', {

@@ -4,7 +4,7 @@ import type { z } from 'zod'
 export interface Operation {
   summary: string
   /** group in the description */
-  tag: 'Session' | 'Account' | 'People' | 'Studies' | 'Candidates' | 'Sweeps' | 'Exports' | 'Evaluation' | 'Methods' | 'Server'
+  tag: 'Session' | 'Account' | 'People' | 'Studies' | 'Candidates' | 'Sweeps' | 'Searches' | 'Exports' | 'Evaluation' | 'Methods' | 'Server'
   query?: z.ZodObject
   body?: z.ZodType
   /** status of success; 200 unless said */

@@ -7,6 +7,7 @@ import type { CanonicalInputs } from '#shared/study/canonical-inputs'
 import type { DrawnRow } from './draw-constellation'
 import type { Evaluated } from './evaluate-candidate'
 import type { EvaluatedPart } from './evaluate-part'
+import type { search, SearchState, SearchTask } from './search'
 
 /** What a worker can be asked, by kind, and what it answers. */
 export interface Tasks {
@@ -16,6 +17,8 @@ export interface Tasks {
   part: { asked: { part: StoredPart, rows: CanonicalInputs[] }, answer: EvaluatedPart[] }
   /** POST /api/evaluate; issues where the core refuses the request */
   evaluation: { asked: EvaluationRequest, answer: { evaluation: Evaluation } | { issues: Issue[] } }
+  /** a slice of a search; `state` null: its beginning */
+  search: { asked: { task: SearchTask, state: SearchState | null, milliseconds: number }, answer: ReturnType<typeof search> }
   /** what the close-up of a row draws */
   constellation: { asked: DrawnRow, answer: CandidateConstellation }
   /** what this build computes for every published value */

@@ -6,10 +6,15 @@ import type { PartValues, StoredPart } from '#shared/schemas/parts'
 import type { SweepCreation } from '#shared/schemas/sweeps'
 // By their paths: drizzle-kit reads this file and knows no aliases.
 import { completeInputs } from '../../shared/schemas/candidates'
+import type { CandidateInputs } from '../../shared/schemas/candidates'
 import { studyRoles } from '../../shared/schemas/members'
 import { partStates } from '../../shared/schemas/parts'
 import { completeRequirements } from '../../shared/schemas/requirements'
+import { searchKinds, searchStates } from '../../shared/schemas/searches'
+import type { SearchCreation } from '../../shared/schemas/searches'
 import { accountRoles } from '../../shared/schemas/session'
+import type { SearchState } from '../compute/search'
+import type { CanonicalInputs } from '#shared/study/canonical-inputs'
 import { completedJson, instant, now, uuid } from './columns'
 
 export const users = mysqlTable('users', {
@@ -137,6 +142,28 @@ export const candidates = mysqlTable('candidates', {
   foreignKey({ name: 'candidates_sweep', columns: [t.sweepId], foreignColumns: [sweeps.id] }).onDelete('set null'),
 ])
 
+/** Searches for labels or parameters. */
+export const jobs = mysqlTable('jobs', {
+  id: uuid('id').primaryKey(),
+  studyId: uuid('study_id').notNull().references(() => studies.id, { onDelete: 'cascade' }),
+  candidateId: uuid('candidate_id').notNull().references(() => candidates.id, { onDelete: 'cascade' }),
+  kind: mysqlEnum('kind', searchKinds).notNull(),
+  definition: json('definition').$type<StoredSearch>().notNull(),
+  state: mysqlEnum('state', searchStates).notNull().default('queued'),
+  /** what the search goes on from, its best so far included; null before its first step */
+  progress: json('progress').$type<SearchState>(),
+  error: varchar('error', { length: 1000 }),
+  /** the row that it has made */
+  resultId: uuid('result_id'),
+  createdBy: varchar('created_by', { length: 120 }).notNull(),
+  createdById: uuid('created_by_id').notNull(),
+  createdAt: instant('created_at').notNull().default(now),
+  updatedAt: instant('updated_at').notNull().default(now),
+}, t => [index('jobs_study').on(t.studyId, t.createdAt), index('jobs_state').on(t.state, t.updatedAt)])
+
+/** A search as it was asked for, and the row as it was then. */
+export interface StoredSearch { asked: SearchCreation, inputs: CandidateInputs, row: CanonicalInputs }
+
 /** What changed in a study, numbered without gaps, for open pages and for those that come back. */
 export const events = mysqlTable('events', {
   studyId: uuid('study_id').notNull().references(() => studies.id, { onDelete: 'cascade' }),
@@ -151,6 +178,7 @@ export interface EventPayload {
   removed?: string[]
   study?: true
   sweep?: string
+  job?: string
 }
 
 /** Who did what, when. Rows are only ever added; names are kept as they were. */

@@ -9,7 +9,7 @@ import { newId } from '../utils/ids'
 export interface Deed {
   /** the study that it happened in, if any */
   study?: { id: string, name: string }
-  by: Account
+  by: Pick<Account, 'id' | 'name'>
   /** what was done, in the past tense: "changed study" */
   action: string
   /** to what: a name */

@@ -1,6 +1,7 @@
 import type { StudyEvent } from '#shared/schemas/events'
 import type { Database } from '../database/client'
 import { rowsOf } from './candidate-rows'
+import { searchOf } from './search-rows'
 import { coalesce, eventsAfter } from './stored-events'
 import { sweepOf } from './sweep-rows'
 
@@ -25,7 +26,7 @@ export async function readEvents(db: Database, studyId: string, after: number, u
   const stored = (await eventsAfter(db, studyId, after)).filter(event => event.number <= upTo)
   const last = stored.at(-1)?.number ?? upTo
   const complete = stored[0]?.number === after + 1
-  const { candidates, removed, study, sweeps } = coalesce(stored.map(event => event.payload))
+  const { candidates, removed, study, sweeps, jobs } = coalesce(stored.map(event => event.payload))
   if (!complete || candidates.length > rowsWorthSending) {
     send({ reload: true, study: true }, last)
     return last
@@ -33,6 +34,10 @@ export async function readEvents(db: Database, studyId: string, after: number, u
   for (const id of sweeps) {
     const sweep = await sweepOf(db, id)
     if (sweep) send({ sweep }, null)
+  }
+  for (const id of jobs) {
+    const job = await searchOf(db, id)
+    if (job) send({ job }, null)
   }
   for (let i = 0; i < candidates.length; i += rowsAMessage) {
     const ids = candidates.slice(i, i + rowsAMessage)

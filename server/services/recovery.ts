@@ -3,6 +3,7 @@ import { useDatabase } from '../database/client'
 import { candidates } from '../database/schema'
 import { requeueRows } from './candidate-keys'
 import { requeueParts } from './parts'
+import { continueSearches } from './search-runs'
 import { pruneEvents } from './stored-events'
 import { continueSweeps } from './sweeps'
 
@@ -16,6 +17,7 @@ const lookEvery = 60_000
 export async function recover(): Promise<void> {
   await requeueRows(0)
   await requeueParts(0)
+  await continueSearches(0)
   await continueSweeps()
 }
 
@@ -23,6 +25,7 @@ async function lookAfter() {
   const db = useDatabase()
   await requeueRows(overdue)
   await requeueParts(overdue)
+  await continueSearches(overdue)
   await continueSweeps()
   await pruneEvents(db)
   await db.delete(candidates).where(and(isNotNull(candidates.deletedAt), lt(candidates.deletedAt, new Date(Date.now() - restorable))))

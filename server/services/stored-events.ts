@@ -25,16 +25,18 @@ export async function lastEventNumber(db: Database, studyId: string): Promise<nu
  * Several events as one: what was removed and came back counts as changed, and the other way round.
  * @param payloads oldest first
  */
-export function coalesce(payloads: readonly EventPayload[]): { candidates: string[], removed: string[], study: boolean, sweeps: string[] } {
+export function coalesce(payloads: readonly EventPayload[]): { candidates: string[], removed: string[], study: boolean, sweeps: string[], jobs: string[] } {
   const changed = new Map<string, 'candidates' | 'removed'>()
   const sweeps = new Set<string>()
+  const jobs = new Set<string>()
   for (const payload of payloads) {
     for (const id of payload.candidates ?? []) changed.set(id, 'candidates')
     for (const id of payload.removed ?? []) changed.set(id, 'removed')
     if (payload.sweep) sweeps.add(payload.sweep)
+    if (payload.job) jobs.add(payload.job)
   }
   const those = (kind: 'candidates' | 'removed') => [...changed].filter(([, k]) => k === kind).map(([id]) => id)
-  return { candidates: those('candidates'), removed: those('removed'), study: payloads.some(p => p.study), sweeps: [...sweeps] }
+  return { candidates: those('candidates'), removed: those('removed'), study: payloads.some(p => p.study), sweeps: [...sweeps], jobs: [...jobs] }
 }
 
 /** Deletes events older than a day. */

@@ -1,6 +1,7 @@
 import { z } from 'zod'
 import { candidate } from './candidates'
 import { id } from './common'
+import { search } from './searches'
 import { sweep } from './sweeps'
 
 /** What GET /api/studies/{id}/events pushes; the stream's id is the event's number in the study. */
@@ -12,6 +13,8 @@ export const studyEvent = z.object({
   /** name, requirements, members or state changed: fetch the study again */
   study: z.literal(true).optional(),
   sweep: sweep.optional(),
+  /** a search that began, went on or ended */
+  job: search.optional(),
   /** more changed than is kept or than is worth sending: load all rows and sweeps again */
   reload: z.literal(true).optional(),
 })

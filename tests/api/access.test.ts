@@ -3,6 +3,7 @@ import { join } from 'node:path'
 import { beforeAll, describe, expect, inject, it } from 'vitest'
 import type { Candidate } from '#shared/schemas/candidates'
 import type { Study } from '#shared/schemas/studies'
+import type { Search } from '#shared/schemas/searches'
 import type { Sweep } from '#shared/schemas/sweeps'
 import { operations } from '../../server/api-description/operations'
 import { rules } from '../../server/access/rules'
@@ -22,9 +23,9 @@ function builtRoutes(): string[] {
   return list.map(({ method, route }) => `${method} ${route}`)
 }
 
-interface Ids { study: string, candidate: string, sweep: string }
+interface Ids { study: string, candidate: string, sweep: string, search: string }
 
-/** A study with a row and a sweep, in which the demonstration's people have their roles. */
+/** A study with a row, a sweep and a search, in which the demonstration's people have their roles. */
 async function walkedStudy(owner: Client): Promise<Ids> {
   const { body: study } = await owner.post<Study>('/api/studies', { name: 'Walked' })
   for (const role of ['editor', 'reviewer', 'observer']) {
@@ -32,14 +33,15 @@ async function walkedStudy(owner: Client): Promise<Ids> {
   }
   const { body: row } = await owner.post<Candidate>(`/api/studies/${study.id}/candidates`, {})
   const { body: sweep } = await owner.post<Sweep>(`/api/studies/${study.id}/sweeps`, { base: { family: 'psk' }, axes: [{ field: 'order', values: [4] }] })
-  return { study: study.id, candidate: row.id, sweep: sweep.id }
+  const { body: search } = await owner.post<Search>(`/api/candidates/${row.id}/searches`, { kind: 'labels', starts: 1 })
+  return { study: study.id, candidate: row.id, sweep: sweep.id, search: search.id }
 }
 
 const nobody = '00000000-0000-7000-8000-000000000000'
 
-/** Address of a route with its parameters filled in; a sweep and a candidate stand for what they belong to. */
+/** Address of a route with its parameters filled in; a sweep, a search and a candidate stand for what they belong to. */
 const addressOf = (path: string, ids: Ids) => path
-  .replace('/candidates/:id', `/candidates/${ids.candidate}`).replace('/sweeps/:id', `/sweeps/${ids.sweep}`)
+  .replace('/candidates/:id', `/candidates/${ids.candidate}`).replace('/sweeps/:id', `/sweeps/${ids.sweep}`).replace('/searches/:id', `/searches/${ids.search}`)
   .replace(':id', ids.study).replace(/:(token|person|user)/, nobody)
 
 /**
