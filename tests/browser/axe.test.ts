@@ -78,6 +78,27 @@ describe.each(['light', 'dark'])('on the %s sheet', (sheet) => {
     expect(await findings(owner.page)).toEqual([])
   })
 
+  it.each(['Search labels…', 'Search parameters…'])('the dialog of %s has no serious finding', async (command) => {
+    await owner.page.goto(`/studies/${study}/candidates`)
+    await owner.page.locator('.ag-row [col-id="name"]').getByText('4+12 at 2.57', { exact: true }).click()
+    await owner.page.getByRole('button', { name: '1 row' }).click()
+    await owner.page.getByRole('menuitem', { name: command }).click()
+    await owner.page.getByRole('dialog').waitFor()
+    expect(await findings(owner.page)).toEqual([])
+  })
+
+  it('the overlay of information rates and the close-up of a point have no serious finding', async () => {
+    await owner.page.goto(`/studies/${study}/candidates`)
+    await owner.page.locator('.ag-row [col-id="name"]').getByText('4+12 at 2.57', { exact: true }).click()
+    await owner.page.getByLabel('Quantity drawn').selectOption({ label: 'information rate' })
+    await owner.page.getByRole('application', { name: /^Rate against/ }).waitFor()
+    const drawing = owner.page.getByRole('application', { name: /^Constellation of/ })
+    await drawing.focus()
+    await owner.page.keyboard.press('Home')
+    await owner.page.getByText(/^Point 0: /).waitFor()
+    expect(await findings(owner.page)).toEqual([])
+  })
+
   it('the administration has no serious finding', async () => {
     const { page } = await opened('admin')
     await page.goto('/administration')
