@@ -51,7 +51,7 @@ export interface TurnedRange {
 
 /**
  * Angles between which the error probability of a turning point is smooth: crossings of edges with the layers in which the noise blurs
- * them, and places where it passes close to an edge.
+ * them, and places where it passes close to an edge or to a corner.
  * @returns rising, with both ends
  */
 export function breaksOf(edges: readonly TurnedEdge[], radius: number, { n0, limit, core, spacing }: TurnedRange): number[] {
@@ -64,6 +64,7 @@ export function breaksOf(edges: readonly TurnedEdge[], radius: number, { n0, lim
       breaks.push(phi, phi - width, phi + width)
     }
     if (crossings.length === 0 && passesClose(edge, radius, blur)) breaks.push(edge.delta)
+    for (const phi of cornersNear(edge, radius, blur)) breaks.push(phi, phi - blur / radius, phi + blur / radius)
   }
   const rising = breaks.filter(phi => Math.abs(phi) < limit).sort((a, b) => a - b)
   const kept = [-limit]
@@ -76,6 +77,16 @@ export function breaksOf(edges: readonly TurnedEdge[], radius: number, { n0, lim
 function passesClose(edge: TurnedEdge, radius: number, distance: number): boolean {
   const foot = turnedFoot(edge, radius, edge.delta)
   return Math.abs(turnedDistance(edge, radius, edge.delta)) < distance && foot > edge.t1 && foot < edge.t2
+}
+
+/** Angles at which the point passes an end of an edge within a distance. */
+function cornersNear({ h, t1, t2, delta }: TurnedEdge, radius: number, distance: number): number[] {
+  const along = h + radius * Math.cos(delta)
+  return [t1, t2].flatMap((t) => {
+    const aside = t - radius * Math.sin(delta)
+    const near = radius > 0 && Math.abs(Math.hypot(along, aside) - radius) < distance
+    return near ? [wrapped(Math.atan2(aside, along) + delta)] : []
+  })
 }
 
 /** An edge as the turning point i meets it: its line at a distance h from the point in a direction (ux, uy), of unit length. */
