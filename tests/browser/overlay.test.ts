@@ -135,7 +135,7 @@ describe('the drawing', () => {
 describe('saving', () => {
   it('as SVG: a drawing that needs nothing else, with the rows\' names', async () => {
     const download = await save('Overlay', 'Drawing as SVG')
-    expect(download.suggestedFilename()).toBe('overlay-esN0.svg')
+    expect(download.suggestedFilename()).toBe('overlay-ser-esN0.svg')
     const text = (await fileOf(download)).toString('utf8')
     const found = await page.evaluate((source) => {
       const parsed = new DOMParser().parseFromString(source, 'image/svg+xml')
@@ -187,7 +187,7 @@ describe('the close-up', () => {
     await words().filter({ hasText: /1\.414/ }).waitFor()
     const { body } = await owner.get<CandidateConstellation>(`/api/candidates/${study.rows[1]!.id}/constellation`)
     expect(body.neighbours.map(list => list.length)).toEqual([2, 2, 2, 2])
-    expect(await shown().getByRole('table').filter({ hasText: 'Neighbour' }).first().getByRole('row').count()).toBe(3)
+    expect(await shown().getByRole('table', { name: /^Relevant neighbours of point/ }).getByRole('row').count()).toBe(3)
   })
 
   it('follows the selection', async () => {

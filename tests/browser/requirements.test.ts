@@ -42,6 +42,16 @@ const caseOf = (name: string) => page.getByRole('region', { name: `Case ${name}`
 /** The last cell of a case's line: what that line comes to. */
 const sum = (name: string, what: string) => caseOf(name).getByRole('row').filter({ hasText: what }).last().getByRole('cell').nth(1)
 
+describe('the target', () => {
+  it('may be a bit error rate before decoding', async () => {
+    await page.getByLabel('Target stated as').selectOption({ label: 'BER, bit error rate' })
+    await page.getByLabel('Target bit error rate (BER)').fill('1e-5')
+    await page.getByLabel('Target holds').selectOption({ label: 'Before decoding' })
+    await allSaved()
+    await expect.poll(async () => (await saved()).target).toEqual({ quantity: 'ber', value: 1e-5, stage: 'beforeDecoding' })
+  })
+})
+
 describe('the link budget', () => {
   it('states what the clear and the faded case deliver', async () => {
     expect(await sum('Clear', 'Available Es/N0 at saturation, dB').textContent()).toBe('45.95')
