@@ -1,5 +1,8 @@
-import { berExactCurve, berFadingCurve, berMap, bitErrorRates, fromDecibels, requiredFadingSnr, requiredSnr, serExactCurve, serFadingCurve, serMap, serMapUnion } from '#shared/modulation'
+import {
+  berExactCurve, berFadingCurve, berMap, berWithPhaseError, bitErrorRates, fromDecibels, requiredEsN0Estimate, requiredFadingSnr, requiredSnr, requiredSnrWithPhaseError, serFadingCurve, serMap, serMapUnion, serWithPhaseError, symbolErrorRateCurve,
+} from '#shared/modulation'
 import type { BitErrorKind, Channel, Constellation, Estimate, Geometry, RequiredSnr, SymbolErrorKind } from '#shared/modulation'
+import { bitFactorsOf } from '#shared/modulation/bit-error-factors'
 import { symbolErrorRates } from '#shared/modulation/symbol-error'
 import type { CanonicalFading, CanonicalInputs, CanonicalPoints } from '#shared/study/canonical-inputs'
 import { geometryOf, labelledGeometryOf, pointsKey } from './points'
@@ -31,10 +34,15 @@ const isBitError = (kind: ErrorKind): kind is BitErrorKind => kind in bitErrorRa
 
 const noted = ({ esN0Db, crossings, floor }: RequiredSnr): Required => ({ esN0Db, crossedMoreThanOnce: crossings > 1, floor })
 
+const once = (esN0Db: Estimate): Required => ({ esN0Db, crossedMoreThanOnce: false, floor: null })
+
 /** White Gaussian noise alone, decisions by minimum distance. */
-function plainRate(geometry: Geometry, kind: ErrorKind): ErrorRate {
+function plainRate(geometry: Geometry, kind: ErrorKind): ErrorRate | null {
+  const { constellation } = geometry
+  if (kind === 'berExact' && constellation.dimensions > 2 && constellation.labels && !bitFactorsOf(constellation)) return null
   const required = (target: number) => noted(requiredSnr({ geometry, kind }, target))
-  if (kind === 'serExact') return { rates: n0s => [...serExactCurve(geometry, n0s)], required }
+  // Exact where a way to that is known, else the directional estimate between the two bounds.
+  if (kind === 'serExact') return { rates: n0s => symbolErrorRateCurve(geometry, n0s), required: target => once(requiredEsN0Estimate(geometry, target)) }
   if (kind === 'berExact') return { rates: n0s => [...berExactCurve(geometry, n0s)], required }
   const rate = isBitError(kind) ? bitErrorRates[kind] : symbolErrorRates[kind]
   return { rates: n0s => n0s.map(n0 => rate(geometry, n0)), required }
@@ -72,10 +80,22 @@ function fadingRate(geometry: Geometry, kind: ErrorKind, fading: CanonicalFading
   }
 }
 
+/** A carrier phase error: the exact rates of two dimensions alone, as no bound is known of them. */
+function phaseErrorRate(geometry: Geometry, kind: ErrorKind, degrees: number): ErrorRate | null {
+  if (kind !== 'serExact' && kind !== 'berExact') return null
+  const sigma = degrees * Math.PI / 180
+  const rate = kind === 'berExact' ? berWithPhaseError : serWithPhaseError
+  return {
+    rates: n0s => n0s.map(n0 => rate(geometry, n0, sigma)),
+    required: target => noted(requiredSnrWithPhaseError(geometry, sigma, kind === 'berExact' ? 'ber' : 'ser', target)),
+  }
+}
+
 /** An error rate of a row by one way; null where that way does not exist for its decisions and its channel. */
 export function errorRateOf(model: RowModel, kind: ErrorKind): ErrorRate | null {
   const geometry = isBitError(kind) ? labelledGeometryOf(model.points) : geometryOf(model.points)
   if (model.channel) return fadingRate(geometry, kind, model.channel)
+  if (model.phaseErrorDeg) return phaseErrorRate(geometry, kind, model.phaseErrorDeg)
   if (model.decision === 'map') return mapRate(geometry, kind)
   return plainRate(geometry, kind)
 }

@@ -1,4 +1,4 @@
-import { bitMetricRate, largestGainDb, largestRotationRad, mapEstimate, mapNotes, ModulationError, mutualInformation, requiredSnr, serMap, valueOf } from '#shared/modulation'
+import { bitMetricRate, directionalEstimate, largestGainDb, largestRotationRad, mapEstimate, mapNotes, ModulationError, mutualInformation, requiredSnr, serLowerBound, serMap, valueOf } from '#shared/modulation'
 import type { Estimate } from '#shared/modulation'
 import { frameErrorRate } from '#shared/modulation/frame-error'
 import type { Issue } from '#shared/schemas/common'
@@ -86,8 +86,11 @@ function frames(row: Row): PartValuesOf<'frames'> {
   return { frameErrorRate: ser === null ? null : mapEstimate(ser, rate => frameErrorRate(rate, frameSymbols)) }
 }
 
-function lower(): PartValuesOf<'lower'> {
-  throw refusal('The lower bound is not offered for this row.', 'family')
+function lower(row: Row): PartValuesOf<'lower'> {
+  requireNoiseAlone(row, 'The lower bound is')
+  if (row.inputs.decision) throw refusal('The lower bound is for decisions by minimum distance: choose them.', 'decision')
+  const geometry = geometryOf(row.model.points)
+  return { serLower: serLowerBound(geometry, row.n0), serDirectional: directionalEstimate(geometry)(row.n0) }
 }
 
 function map(row: Row): PartValuesOf<'map'> {

@@ -18,8 +18,9 @@ function hasLabels(inputs: CandidateInputs): boolean {
 /** What a row lacks for the study's target, told at the row's field that remedies it. */
 export function targetIssues(inputs: CandidateInputs, requirements: Requirements): Issue[] {
   if (requirements.target.quantity !== 'ber' || !needsErrorRate(inputs, requirements)) return []
-  if ((rowSize(inputs).dimensions ?? 1) > 2) {
-    return [{ path: 'basis', message: 'The target is a bit error rate, which is exact for one and two dimensions only: use a rate threshold or an entered basis, or a target SER.' }]
+  const byFactors = inputs.family === 'product' || inputs.family === 'hypercube'
+  if (!byFactors && (rowSize(inputs).dimensions ?? 1) > 2) {
+    return [{ path: 'basis', message: 'The target is a bit error rate, which is exact for one and two dimensions and for products of such sets only: use a rate threshold or an entered basis, or a target SER.' }]
   }
   return hasLabels(inputs)
     ? []

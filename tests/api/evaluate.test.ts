@@ -81,9 +81,9 @@ describe('POST /api/evaluate', () => {
     const { body } = await evaluate<Problem>({ constellation: { family: 'apsk', rings: [4, 4], ratios: [1.0000000001] }, esN0Db: [8] })
     expect(body.errors![0]!.path).toBe('constellation.ratios')
   })
-  it('refuses points of three coordinates, naming the dimensions', async () => {
-    const { status, body } = await evaluate<Problem>({ constellation: { family: 'custom', points: [[1, 0, 0], [0, 1, 0]] }, esN0Db: [8] })
-    expect([status, body.detail]).toEqual([422, 'Geometry is offered for one and two dimensions.'])
+  it('gives the SER of points of three coordinates that are no product as an interval', async () => {
+    const { body } = await evaluate({ constellation: { family: 'custom', points: [[1, 0, 0.2], [0, 1, 0], [-1, 0.3, 0], [0, 0, 1]] }, esN0Db: [8], quantities: ['serExact'] })
+    expect(body.curves.serExact).toEqual([{ value: expect.any(Number), low: expect.any(Number), high: expect.any(Number) }])
   })
   it('refuses what would take too long, saying what to reduce', async () => {
     const { status, body } = await evaluate<Problem>({

@@ -30,7 +30,7 @@ export interface CandidatesLayout {
   letters: (id: string) => string
 }
 
-const roundedDigits = { '0.00': 2, '+0.00': 2, '0.0': 1 } as const
+const roundedDigits = { '0.000': 3, '0.00': 2, '+0.00': 2, '0.0': 1 } as const
 const digitsOf = ({ id, format }: Column) => {
   if (!(format in roundedDigits)) throw new Error(`The export does not know how the column ${id} rounds.`)
   return roundedDigits[format as keyof typeof roundedDigits]

@@ -1,4 +1,5 @@
 import { describe, expect, it } from 'vitest'
+import { valueOf } from '#shared/modulation'
 import { defaultInputs } from '#shared/schemas/candidates'
 import type { CandidateInputs } from '#shared/schemas/candidates'
 import { defaultRequirements } from '#shared/schemas/requirements'
@@ -19,13 +20,13 @@ const entered: Partial<CandidateInputs> = {
 describe('one row', () => {
   it('requires the Es/N0 of the exact curve', () => {
     const { requiredEsN0Db } = values({})
-    const { values: at } = evaluated({}, { available: { from: 'entered', esN0Db: requiredEsN0Db! } })
+    const { values: at } = evaluated({}, { available: { from: 'entered', esN0Db: valueOf(requiredEsN0Db!) } })
     expect(at!.serExact).toBeCloseTo(1e-6, 14)
   })
-  it('has a bound penalty above 0', () => expect(values({}).boundPenaltyDb).toBeGreaterThan(0))
+  it('has a bound penalty above 0', () => expect(valueOf(values({}).boundPenaltyDb!)).toBeGreaterThan(0))
   it('takes its back-off off what is available when peak power is the limit', () => {
     const { availableEsN0Db, backOffDb } = values({}, { limitedBy: 'peakPower' })
-    expect(availableEsN0Db).toBeCloseTo(20 - backOffDb, 12)
+    expect(availableEsN0Db).toBeCloseTo(20 - backOffDb!, 12)
   })
   it('takes nothing off when mean power is the limit', () => expect(values({}).availableEsN0Db).toBe(20))
   it('has the energy of its spacing where N0 is given', () => {
@@ -45,6 +46,40 @@ describe('one row', () => {
     expect(evaluated({ family: 'apsk', rings: [4, 4], ratios: [1.0000000001] }).errors.map(error => error.path)).toEqual(['ratios']))
   it('keeps a refusal of the core with its place', () =>
     expect(evaluated({ family: 'psk', order: 2 }, { target: { quantity: 'ser', value: 0.5, stage: 'afterDecoding' } }).errors[0]!.path).toBe('requirements.target.value'))
+})
+
+describe('a row with options', () => {
+  const target = (quantity: 'ser' | 'ber', stage: 'beforeDecoding' | 'afterDecoding' = 'afterDecoding') => ({ target: { quantity, value: 1e-4, stage } })
+  const coded: Partial<CandidateInputs> = { basis: 'rateThreshold', codeRate: 0.75, decoderGapDb: 0.8 }
+
+  it('requires less for a bit error rate than for the same symbol error rate', () =>
+    expect([values({}, target('ber')).requiredBy, valueOf(values({}, target('ber')).requiredEsN0Db!) < valueOf(values({}, target('ser')).requiredEsN0Db!)]).toEqual(['berExact', true]))
+  it('adds the decoder\'s gap to its rate threshold', () =>
+    expect(valueOf(values(coded).requiredEsN0Db!) - valueOf(values({ ...coded, decoderGapDb: 0 }).requiredEsN0Db!)).toBeCloseTo(0.8, 9))
+  it('requires what a target before decoding asks for, where that is more', () =>
+    expect(values(coded, target('ser', 'beforeDecoding')).requiredEsN0Db).toBe(values({}, target('ser')).requiredEsN0Db))
+  it('has the SER of binary PSK over Rayleigh fading', () => {
+    // Proakis: ½(1 − √(γ/(1+γ))) at γ = 20 dB
+    expect(values({ family: 'psk', order: 2, channel: 'rayleigh' }, target('ser')).serExact).toBeCloseTo(0.5 * (1 - Math.sqrt(100 / 101)), 10)
+  })
+  it('rests on the union bound over fading in more dimensions, and says so', () => {
+    const row = values({ family: 'hypercube', order: 16, channel: 'rayleigh' }, target('ser'))
+    expect([row.requiredBy, row.serExact, row.requiredEsN0Db]).toEqual(['serUnion', null, row.requiredUnionEsN0Db])
+  })
+  it('tells the floor that a phase error leaves', () => expect(values({ phaseErrorDeg: 3 }, target('ser')).errorFloor).toBeGreaterThan(0))
+  it('has no union bound under a phase error', () => expect(values({ phaseErrorDeg: 3 }, target('ser')).serUnion).toBeNull())
+  it('needs less energy with shaped probabilities, for fewer bits', () => {
+    const row = values({ probabilityRule: 'shaped', shapedEntropy: 3.5 }, target('ser'))
+    expect([row.netBits, valueOf(row.requiredEsN0Db!) < valueOf(values({}, target('ser')).requiredEsN0Db!)]).toEqual([expect.closeTo(3.5, 9), true])
+  })
+  it('is judged at the unfavourable end of an interval', () => {
+    const row = values({ family: 'lattice', lattice: 'D4', order: 24 }, target('ser'))
+    const { low } = row.marginDb as { low: number }
+    expect(row.checks[0]!.by).toBeCloseTo(low - 1, 12)
+  })
+  it('has no back-off in more dimensions where mean power is the limit', () => expect(values({ family: 'orthogonal', order: 4 }).backOffDb).toBeNull())
+  it('asks for a back-off in more dimensions where peak power is the limit', () =>
+    expect(evaluated({ family: 'orthogonal', order: 4 }, { limitedBy: 'peakPower' }).errors[0]!.path).toBe('backOff'))
 })
 
 describe('an entered scheme', () => {
