@@ -4,6 +4,7 @@ import { ModulationError } from './errors'
 import type { Geometry } from './geometry'
 import { serInsideWithPhaseError, serPhaseErrorFloor, serWithPhaseError } from './phase-error'
 import { berPhaseErrorFloor, berWithPhaseError } from './phase-error-bits'
+import { requiredSnr } from './required-snr'
 import type { RequiredSnr } from './required-snr'
 
 /** Range of the search, dB. */
@@ -20,7 +21,7 @@ const room = 0.01
  * its floor. Errors that need noise, although the phase error alone would have led to none, fall with the SNR throughout. Below where they
  * alone are above the target so is the whole; above where they and the floor together meet it, so does the whole: the search is between.
  * @param geometry decision regions of minimum distance, from analyse, of two dimensions
- * @param sigmaRad r.m.s. phase error above 0, radians
+ * @param sigmaRad r.m.s. phase error, radians, 0 or more
  * @param quantity symbol or bit error rate
  * @param target above 0 and below 1
  * @returns Es/N0 to 1e-9 dB, from −30 to 90
@@ -29,6 +30,7 @@ const room = 0.01
  */
 export function requiredSnrWithPhaseError(geometry: Geometry, sigmaRad: number, quantity: 'ser' | 'ber', target: number): RequiredSnr {
   if (!(target > 0 && target < 1)) throw new ModulationError('A target error rate is above 0 and below 1.', ['target'])
+  if (sigmaRad === 0) return requiredSnr({ geometry, kind: quantity === 'ser' ? 'serExact' : 'berExact' }, target)
   const { meanEnergy, bitsPerSymbol } = geometry.constellation
   const [rate, floorOf] = quantity === 'ser' ? [serWithPhaseError, serPhaseErrorFloor] : [berWithPhaseError, berPhaseErrorFloor]
   const floor = floorOf(geometry, sigmaRad)

@@ -113,6 +113,9 @@ describe('required Es/N0 under a phase error', () => {
     const required = [0.5, 1, 2, 3, 4].map(degrees => requiredSnrWithPhaseError(qam16, radians(degrees), 'ser', 1e-3).esN0Db)
     expect(required).toEqual([...required].sort((a, b) => a - b))
   })
+  it.each([['ser', 'serExact'], ['ber', 'berExact']] as const)('of nothing is that of the %s without', (quantity, kind) => {
+    expect(requiredSnrWithPhaseError(qam16, 0, quantity, 1e-4)).toEqual(requiredSnr({ geometry: qam16, kind }, 1e-4))
+  })
   it('is refused below the floor, which it tells', () => {
     expect(() => requiredSnrWithPhaseError(qam16, radians(10), 'ser', 1e-3)).toThrow('which leaves 4.86e-2.')
   })
