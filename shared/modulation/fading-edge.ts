@@ -13,7 +13,8 @@ const fallOfPanel = 8
 const { nodes, weights } = gaussLegendre(16)
 
 /** Up to this length over the distance and this fall of the logarithm a few nodes in t itself serve, without hyperbolic functions. */
-const shortRules = [{ length: 0.12, fall: 0.25, ...gaussLegendre(5) }, { length: 0.5, fall: 1, ...gaussLegendre(8) }]
+const shortest = { length: 0.12, fall: 0.25, rule: gaussLegendre(5) }
+const short = { length: 0.5, fall: 1, rule: gaussLegendre(8) }
 
 /** What lies behind the last panel may be this part of the sum. */
 const negligible = 1e-14
@@ -31,9 +32,12 @@ const negligible = 1e-14
 export function fadedPiece(fading: Fading, h: number, a: number, b: number, n0: number): number {
   const { moment, slope } = fading
   const square = h * h + a * a
-  const fall = slope(square / n0) * (b - a) * (b + a) / n0
-  const short = shortRules.find(rule => (b - a) ** 2 <= rule.length ** 2 * square && fall <= rule.fall)
-  if (short) return shortPiece(moment, h, a, b - a, n0, short)
+  const length = b - a
+  if (length * length <= short.length ** 2 * square) {
+    const fall = slope(square / n0) * length * (b + a) / n0
+    const few = fall <= shortest.fall && length * length <= shortest.length ** 2 * square
+    if (fall <= short.fall) return shortPiece(moment, h, a, length, n0, few ? shortest.rule : short.rule)
+  }
   const scale = h * h / n0
   const from = Math.asinh(a / h)
   const span = b === Infinity ? Infinity : spanOf(h, a, b)

@@ -1,4 +1,5 @@
 import { ModulationError } from './errors'
+import { expNegative } from './exponential'
 
 /**
  * How the noise-free signal arrives. With fading the receiver knows its channel and combines `branches` independent branches of the same
@@ -52,16 +53,25 @@ function checked(value: number | undefined, least: number, sentence: string, fie
 function nakagami(branches: number, m: number): Fading {
   const power = m * branches
   return {
-    moment: power === 1
-      ? s => 1 / (1 + s / m)
-      : s => Math.exp(-power * Math.log1p(s / m)),
+    moment: Number.isInteger(power) && power <= mostBranches
+      ? s => whole(1 / (1 + s / m), power)
+      : s => expNegative(-power * Math.log1p(s / m)),
     slope: s => branches / (1 + s / m),
   }
 }
 
 function rician(branches: number, k: number): Fading {
   return {
-    moment: s => Math.exp(-branches * (Math.log1p(s / (1 + k)) + k * s / (1 + k + s))),
+    moment: s => whole((1 + k) / (1 + k + s), branches) * expNegative(-branches * k * s / (1 + k + s)),
     slope: s => branches * (1 + k * (1 + k) / (1 + k + s)) / (1 + k + s),
   }
+}
+
+/** A whole power from 1 on, by squaring: error integrals spend their time here. */
+function whole(x: number, power: number): number {
+  let result = power & 1 ? x : 1
+  for (let square = x * x, rest = power >> 1; rest > 0; square *= square, rest >>= 1) {
+    if (rest & 1) result *= square
+  }
+  return result
 }
