@@ -13,8 +13,8 @@ export async function* jsonOf(data: StudyExport): AsyncGenerator<string> {
   yield `${JSON.stringify(head).slice(0, -1)},"candidates":[`
   let separator = '\n'
   for await (const page of data.rows()) {
-    for (const { id, version, pin, inputs, state, errors, values } of page) {
-      yield separator + JSON.stringify({ id, version, pin, inputs, state, errors, values })
+    for (const { id, version, pin, inputs, state, errors, values, parts } of page) {
+      yield separator + JSON.stringify({ id, version, pin, inputs, state, errors, values, parts })
       separator = ',\n'
     }
   }

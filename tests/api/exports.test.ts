@@ -288,7 +288,7 @@ describe('CSV and JSON', () => {
 
   it('the JSON has every row as the API gives it', async () => {
     const { body } = await owner.get<{ candidates: Candidate[] }>(`/api/studies/${ridge}/export.json`)
-    expect(body.candidates).toEqual(rows.map(({ id, version, pin, inputs, state, errors, values }) => ({ id, version, pin, inputs, state, errors, values })))
+    expect(body.candidates).toEqual(rows.map(({ id, version, pin, inputs, state, errors, values, parts }) => ({ id, version, pin, inputs, state, errors, values, parts })))
   })
 
   it.each(['=1+1', '@x', '+x', '-x'])('a name like %s is text to a spreadsheet that opens the CSV', async (name) => {

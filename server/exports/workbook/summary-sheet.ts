@@ -2,7 +2,7 @@ import type ExcelJS from 'exceljs'
 import { lowOf, valueOf } from '#shared/modulation/estimate'
 import { floorToDigits } from '#shared/modulation/rounding'
 import type { MustHaveKind } from '#shared/schemas/requirements'
-import { heldConstantKinds, mustHaveKinds } from '#shared/schemas/requirements'
+import { heldConstantKinds, mustHaveKinds, targetQuantities } from '#shared/schemas/requirements'
 import type { StudyExport } from '../study-export'
 import { fixedAddress, wholeColumn } from './addresses'
 import type { CandidatesLayout } from './candidates-layout'
@@ -55,7 +55,8 @@ function writeRequirements(sheet: ExcelJS.Worksheet, { study: { requirements: r 
     mustHaves.set(m.kind, { value: fixedAddress(summarySheetName, 2, row.number), id: fixedAddress(summarySheetName, 4, row.number) })
     row.commit()
   }
-  input('Target symbol error rate', r.target.value, undefined, '0.0E+0')
+  input(`Target ${targetQuantities[r.target.quantity].words}`, r.target.value, undefined, '0.0E+0')
+  input('Target holds', r.target.stage === 'beforeDecoding' ? 'before decoding' : 'after decoding')
   return {
     mustHaves,
     held: input(`Held constant: ${held.title.toLowerCase()}`, r.heldConstant.value, held.unit),
