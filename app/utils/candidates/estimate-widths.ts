@@ -6,8 +6,8 @@ import { characterPx, paddingPx } from './cell-size'
 
 /** Columns whose cells may hold an interval. */
 const estimated = columns.filter((column): column is ComputedColumn => column.kind === 'computed' && column.interval !== undefined)
-/** "(20.79…20.91) 20.84" and "(1.10e−7…1.36e−7) 1.23e−7" */
-const characters = ({ format }: ComputedColumn) => format === '0.00e-0' ? 27 : 22
+/** "(20.79…20.91) 20.84" and "(1.10e−12…1.36e−12) 1.23e−12" */
+const characters = ({ format }: ComputedColumn) => format === '0.00e-0' ? 31 : 22
 
 /**
  * Makes room for intervals: a column is widened once, when the first interval comes into it, unless the reader has given it a width.
