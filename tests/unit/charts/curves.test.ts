@@ -2,6 +2,7 @@ import { describe, expect, it } from 'vitest'
 import { bandOf, esN0AtHeight, heightAt, lineOf } from '../../../app/utils/charts/curves'
 import { tableLines } from '../../../app/utils/charts/curves-table'
 import { capacity, curvesOf, quantityOf } from '../../../app/utils/charts/quantities'
+import { valueOf } from '../../../shared/modulation/estimate'
 import { q } from '../../../shared/modulation/gaussian'
 import { sampleCurves } from './sample-curves'
 
@@ -36,7 +37,7 @@ describe('the table of the drawing', () => {
     expect(tableLines([sampleCurves(), sampleCurves({ id: 'b', shiftDb: -5 })], ser, 100).map(line => line.snrDb)).toEqual([-5, 0, 5, 10, 15, 20])
   })
   it('gives the computed rates in the order exact, bound, approximation', () => {
-    expect(tableLines([sampleCurves()], ser, 100)[2]!.rates[0]!.map(rate => rate!.toExponential(3))).toEqual(['1.000e-6', '2.000e-6', '5.000e-7'])
+    expect(tableLines([sampleCurves()], ser, 100)[2]!.rates[0]!.map(rate => valueOf(rate!).toExponential(3))).toEqual(['1.000e-6', '2.000e-6', '5.000e-7'])
   })
   it('leaves lines out above its limit', () => expect(tableLines([sampleCurves()], ser, 2).map(line => line.snrDb)).toEqual([0, 20]))
 })

@@ -1,5 +1,5 @@
 import { describe, expect, it } from 'vitest'
-import { partsOf, settled, unasked } from '~/utils/candidates/part-requests'
+import { partsOf, settled, unasked } from '~/utils/candidates/parts'
 import { sampleRow } from '../columns/sample-row'
 
 const row = { ...sampleRow({}), parts: {} }
