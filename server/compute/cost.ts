@@ -1,5 +1,6 @@
 import type { EvaluationRequest } from '#shared/schemas/evaluate'
 import type { Issue } from '#shared/schemas/common'
+import { geometrySeconds } from '#shared/study/geometry-cost'
 
 /** Longest evaluation by estimate, in seconds of one thread. */
 export const longestEvaluation = 12
@@ -37,11 +38,14 @@ function sizeOf({ order, points, rings, factors }: EvaluationRequest['constellat
   }
 }
 
+/** Families of more dimensions have structure; scattered points are looked at pair by pair. */
+const geometryOf = ({ points }: EvaluationRequest['constellation']) => points ? geometrySeconds(points.length, points[0]!.length) : 0
+
 /** Estimated seconds of an evaluation. */
 export function estimatedSeconds({ constellation, esN0Db, target, quantities }: EvaluationRequest): number {
   const { points, dimensions } = sizeOf(constellation)
   const rates = esN0Db.length + (target ? searchSteps : 0)
-  const once = 5e-6 * points + (quantities.some(quantity => ofPairs.includes(quantity)) ? secondsOfPairs(points) : 0)
+  const once = 5e-6 * points + geometryOf(constellation) + (quantities.some(quantity => ofPairs.includes(quantity)) ? secondsOfPairs(points) : 0)
   return once + quantities.reduce((sum, quantity) => sum + rates * secondsOf[quantity](points, dimensions), 0)
 }
 
@@ -49,6 +53,9 @@ export function estimatedSeconds({ constellation, esN0Db, target, quantities }: 
 export function costIssues(request: EvaluationRequest): Issue[] {
   const seconds = estimatedSeconds(request)
   if (seconds <= longestEvaluation) return []
+  if (geometryOf(request.constellation) > longestEvaluation / 2) {
+    return [{ path: 'constellation.points', message: `This evaluation is estimated at ${Math.ceil(seconds)} s; at most ${longestEvaluation} s are computed. Send fewer points, or points of fewer coordinates.` }]
+  }
   const costly = request.quantities.filter(quantity => estimatedSeconds({ ...request, quantities: [quantity] }) > longestEvaluation / 2)
   const message = `This evaluation is estimated at ${Math.ceil(seconds)} s; at most ${longestEvaluation} s are computed. `
   const separable = costly.length > 0 && costly.length < request.quantities.length

@@ -1,6 +1,7 @@
 import type { CandidateField, CandidateInputs } from '../schemas/candidates'
 import type { Issue } from '../schemas/common'
-import { familyOfRow, familyParameters } from './family-parameters'
+import { familyOfRow, familyParameters, rowSize } from './family-parameters'
+import { geometrySeconds } from './geometry-cost'
 import { channelIssues, labelIssues, probabilityIssues } from './option-issues'
 import { mostValues, valuesOfRange } from './snr-grid'
 
@@ -12,9 +13,19 @@ const at = (path: CandidateField, message: string): Issue => ({ path, message })
 export function constellationIssues(inputs: CandidateInputs): Issue[] {
   const family = familyOfRow(inputs)
   if (!family) return []
-  return family.validate(familyParameters(inputs)).map(({ path: [field, ...rest], message }) => ({
+  const issues = family.validate(familyParameters(inputs)).map(({ path: [field, ...rest], message }) => ({
     path: [fieldOf[String(field)] ?? field, ...rest].join('.'), message,
   }))
+  return issues.length > 0 ? issues : costIssues(inputs)
+}
+
+/** Longest that the neighbours of a row's points may take to find, in seconds by estimate. */
+const longestGeometry = 60
+
+function costIssues(inputs: CandidateInputs): Issue[] {
+  const { order, dimensions } = rowSize(inputs)
+  if (inputs.family !== 'custom' || geometrySeconds(order ?? 0, dimensions ?? 0) <= longestGeometry) return []
+  return [at('points', `${order!.toLocaleString('en')} points of ${dimensions} coordinates would take minutes: enter fewer, or a family of the list.`)]
 }
 
 function basisIssues(inputs: CandidateInputs): Issue[] {

@@ -20,5 +20,9 @@ describe('the cost limit of an evaluation', () => {
     const issues = costIssues(evaluation.parse({ constellation: { family: 'psk', order: 4096 }, esN0Db: esN0Db.slice(0, 41), quantities: ['serExact', 'berExact'] }))
     expect([issues[0]!.path, issues[0]!.message.includes('Leave berExact out')]).toEqual(['quantities', true])
   })
+  it('names points of many coordinates whose neighbours take too long', () => {
+    const points = Array.from({ length: 1024 }, (_, i) => [Math.cos(i), Math.sin(i * i), i / 1024, Math.cos(i * i * i)])
+    expect(costIssues(evaluation.parse({ constellation: { family: 'custom', points }, esN0Db: [10] }))[0]!.path).toBe('constellation.points')
+  })
   it('counts the rings of APSK', () => expect(paths({ family: 'apsk', rings: [2048, 2048], ratios: [2] })).toEqual(['quantities']))
 })
