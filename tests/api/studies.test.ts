@@ -103,7 +103,7 @@ describe('a study in the list', () => {
     const ring = body.items.find(({ name }) => name === 'Ring ratios of sixteen points')!
     await expect.poll(async () => (await owner.get<List<StudySummary>>('/api/studies')).body.items.find(({ id }) => id === ring.id)!.computing, { timeout: 60_000 }).toBe(0)
     const { items: rows } = (await owner.get<List<Candidate>>(`/api/studies/${ring.id}/candidates`)).body
-    const best = rows.filter(row => row.values?.passes).toSorted((a, b) => b.values!.surplusDb! - a.values!.surplusDb!)
+    const best = rows.filter(row => row.values?.passes).toSorted((a, b) => valueOf(b.values!.surplusDb!) - valueOf(a.values!.surplusDb!))
     const { items } = (await owner.get<List<StudySummary>>('/api/studies')).body
     const summary = items.find(({ id }) => id === ring.id)!
     expect(summary.members.map(({ role }) => role)).toEqual(['owner', 'editor', 'reviewer', 'observer'])
