@@ -2,6 +2,7 @@ import ExcelJS from 'exceljs'
 import Papa from 'papaparse'
 import { beforeAll, describe, expect, it, vi } from 'vitest'
 import { columns, headerOf } from '#shared/columns'
+import { lowOf } from '#shared/modulation/estimate'
 import type { Candidate } from '#shared/schemas/candidates'
 import type { StudySummary } from '#shared/schemas/studies'
 import type { CandidateConstellation, CandidateCurves } from '#shared/schemas/values'
@@ -170,7 +171,7 @@ describe('the workbook', () => {
   it('one decibel more of output power, in its one cell, is one decibel more of surplus', () => {
     const output = inputCell('Link cases', 'Saturated output', 'F')
     const entered = { [output]: 28 }
-    expect(now(rows[0]!, 'Surplus, exact', entered)).toBeCloseTo(valueOf(rows[0]!.values!.surplusDb!) + 1, 9)
+    expect(now(rows[0]!, 'Surplus, exact', entered)).toBeCloseTo(lowOf(rows[0]!.values!.surplusDb!) + 1, 9)
   })
 
   it('the verdict\'s words follow a link line', () => {
@@ -195,12 +196,12 @@ describe('the workbook', () => {
     expect(now(rows[0]!, 'Deciding case')).toBe('Faded')
     expect(now(rows[0]!, 'Deciding case', entered)).toBe('Clear')
     const { cases } = rows[0]!.values!
-    expect(now(rows[0]!, 'Margin, exact', entered)).toBeCloseTo(valueOf(cases.find(({ name }) => name === 'Clear')!.marginDb!), 9)
+    expect(now(rows[0]!, 'Margin, exact', entered)).toBeCloseTo(lowOf(cases.find(({ name }) => name === 'Clear')!.marginDb!), 9)
   })
 
   it('a row\'s own implementation loss counts instead of the study\'s', () => {
     const own = { [`Candidates!${address(rows[0]!, 'Implementation loss')}`]: 3.5 }
-    expect(now(rows[0]!, 'Surplus, exact', own)).toBeCloseTo(valueOf(rows[0]!.values!.surplusDb!) + rows[0]!.values!.implementationLossDb - 3.5, 9)
+    expect(now(rows[0]!, 'Surplus, exact', own)).toBeCloseTo(lowOf(rows[0]!.values!.surplusDb!) + rows[0]!.values!.implementationLossDb - 3.5, 9)
   })
 
   it('shades verdicts by their words: teal where they pass, vermilion where they fail or cannot be computed', () => {
