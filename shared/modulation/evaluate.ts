@@ -17,6 +17,7 @@ import { rateThresholdDb } from './rate-threshold'
 import { requiredEsN0Db } from './required-snr'
 import { symbolErrorRates } from './symbol-error'
 import type { SymbolErrorKind } from './symbol-error'
+import { requiredEsN0Estimate } from './symbol-error-estimate'
 
 export const evaluationQuantities = Object.keys(evaluationCurves) as EvaluationQuantity[]
 
@@ -96,7 +97,8 @@ function addCurve<Q extends EvaluationQuantity>(curves: Partial<EvaluationCurves
 const isInformationRate = (quantity: EvaluationQuantity): quantity is InformationRateKind => quantity in informationRates
 
 function requiredFor(geometry: Geometry, quantity: EvaluationQuantity, value: number): Estimate {
-  return isInformationRate(quantity) ? rateThresholdDb(geometry.constellation, quantity, value) : requiredEsN0Db({ geometry, kind: quantity }, value)
+  if (isInformationRate(quantity)) return rateThresholdDb(geometry.constellation, quantity, value)
+  return quantity === 'serExact' ? requiredEsN0Estimate(geometry, value) : requiredEsN0Db({ geometry, kind: quantity }, value)
 }
 
 const isTarget = (quantity: string): quantity is keyof typeof targetRates => quantity in targetRates

@@ -7,10 +7,10 @@ import { ratesOf } from './information'
 import type { InformationRateKind } from './information'
 import { symbolErrorRates } from './symbol-error'
 import type { SymbolErrorKind } from './symbol-error'
-import { serExactCurve } from './symbol-error-exact'
+import { symbolErrorRateCurve } from './symbol-error-estimate'
 
 /** Curves by the names of the evaluation's quantities: a value for each noise density. */
-export type EvaluationCurves = Record<SymbolErrorKind | BitErrorKind, number[]> & Record<InformationRateKind, Estimate[]>
+export type EvaluationCurves = Record<Exclude<SymbolErrorKind, 'serExact'> | BitErrorKind, number[]> & Record<InformationRateKind | 'serExact', Estimate[]>
 export type EvaluationQuantity = keyof EvaluationCurves
 
 type CurveOf<Values> = (geometry: Geometry, n0s: readonly number[]) => Values
@@ -24,7 +24,7 @@ export const evaluationCurves: { readonly [Q in EvaluationQuantity]: CurveOf<Eva
   serUnion: errorRate('serUnion'),
   serAllPairs: errorRate('serAllPairs'),
   serNearest: errorRate('serNearest'),
-  serExact: (geometry, n0s) => [...serExactCurve(geometry, n0s)],
+  serExact: (geometry, n0s) => symbolErrorRateCurve(geometry, n0s),
   berAllPairs: errorRate('berAllPairs'),
   berNearest: errorRate('berNearest'),
   berExact: (geometry, n0s) => [...berExactCurve(geometry, n0s)],

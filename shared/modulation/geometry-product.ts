@@ -19,6 +19,8 @@ export function productFacets(points: Float64Array, factors: readonly Informatio
   const codes = Int32Array.from({ length: order }, (_, i) => places.reduce((sum, of, f) => sum + of[i]! * strides[f]!, 0))
   codes.forEach((code, i) => pointAt[code] = i)
   factors.forEach((factor, f) => {
+    // All points have the same coordinates here: nobody to be mistaken for.
+    if (factor.order === 1) return
     const facets = facetsOf(factor)
     result.minimumDistance = Math.min(result.minimumDistance, facets.minimumDistance)
     const behind = Array.from({ length: factor.order }, (): number[] => [])

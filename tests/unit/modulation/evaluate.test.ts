@@ -80,3 +80,13 @@ describe('a refused evaluation names the field', () => {
 describe('the core', () => {
   it('has a version', () => expect(coreVersion).toMatch(/^\d+\.\d+\.\d+$/))
 })
+
+describe('an evaluation of more than two dimensions', () => {
+  const of = (constellation: EvaluationRequest['constellation']) => evaluate({ constellation, esN0Db: [10], target: { quantity: 'ser', value: 1e-4 } })
+  it('tells neighbours', () => expect(of({ family: 'hypercube', order: 8 }).neighbours.relevant[0]).toEqual([1, 2, 4]))
+  it('has numbers where the exact rate is known', () => expect(typeof of({ family: 'hypercube', order: 8 }).curves.serExact![0]).toBe('number'))
+  it('has an exact requirement there', () => expect(typeof of({ family: 'biorthogonal', order: 8 }).requiredEsN0Db!.serExact).toBe('number'))
+  it('has intervals elsewhere', () => expect(of({ family: 'lattice', lattice: 'D4', order: 16 }).curves.serExact![0]).toEqual({ value: expect.any(Number), low: expect.any(Number), high: expect.any(Number) }))
+  it('has an interval as requirement there', () => expect(of({ family: 'lattice', lattice: 'D4', order: 16 }).requiredEsN0Db!.serExact).toHaveProperty('low'))
+  it('takes custom points of three coordinates', () => expect(of({ family: 'custom', points: [[0, 1, 2], [0, 1, 3]] }).dimensions).toBe(3))
+})
