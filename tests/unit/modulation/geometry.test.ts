@@ -76,10 +76,10 @@ describe('relevant neighbours equal those of exact clipping', () => {
 
 describe('cells', () => {
   const geometry = analyse(createConstellation([[0, 0], [2, 0], [0, 2]]))
-  it('know how far their edges are', () => expect([...geometry.edges.h.subarray(0, 2)]).toEqual([1, 1]))
+  it('know how far their edges are', () => expect([...geometry.edges!.h.subarray(0, 2)]).toEqual([1, 1]))
   it('know where their edges end', () => {
     // The corner (1, 1) lies 1 to the left of 0 → 1 and 1 to the right of 0 → 2.
-    expect([geometry.edges.t1[0], geometry.edges.t2[0], geometry.edges.t1[1], geometry.edges.t2[1]]).toEqual([-Infinity, 1, -1, Infinity])
+    expect([geometry.edges!.t1[0], geometry.edges!.t2[0], geometry.edges!.t1[1], geometry.edges!.t2[1]]).toEqual([-Infinity, 1, -1, Infinity])
   })
   it('are drawn inside a box', () => {
     const [first] = decisionCells(geometry, { left: -3, right: 3, bottom: -3, top: 3 })
