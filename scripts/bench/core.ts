@@ -1,4 +1,4 @@
-import { analyse, createConstellation, evaluate, generate, requiredEsN0Db, serExactCurve } from '../../shared/modulation/index'
+import { analyse, createConstellation, directionalEstimate, evaluate, generate, requiredEsN0Db, serExactCurve } from '../../shared/modulation/index'
 import type { EvaluationRequest } from '../../shared/modulation/index'
 import { fromDecibels } from '../../shared/modulation/decibels'
 import type { Measure } from './measure'
@@ -41,14 +41,14 @@ export function measureSweep(): Measurement {
   return { what: '1,000-row sweep, M 2 to 256, core alone', milliseconds: performance.now() - start, limit: 1500 }
 }
 
-/** M points uniform in a square, from a fixed seed (a linear congruential generator is random enough to place points). */
-export function randomPoints(order: number): number[][] {
+/** M points uniform in a square or a cube of more dimensions, from a fixed seed (a linear congruential generator is random enough to place points). */
+export function randomPoints(order: number, dimensions = 2): number[][] {
   let state = 12345
   const next = () => {
     state = (state * 1103515245 + 12345) % 2147483648
     return state / 1073741824 - 1
   }
-  return Array.from({ length: order }, () => [next(), next()])
+  return Array.from({ length: order }, () => Array.from({ length: dimensions }, next))
 }
 
 /** Geometry and exact SER at 41 SNR values of random points. */
@@ -69,6 +69,19 @@ export function measureRegular(family: 'qam' | 'psk' | 'hexagonal'): Measurement
   return { what: `${family} of 4096 points, generated, geometry and required Es/N0`, milliseconds: performance.now() - start, limit: null }
 }
 
+/** Relevant neighbours of random points in 4 dimensions, by linear programmes, and one error rate from 100,000 directions. */
+export function measureSpace(order: number): Measurement[] {
+  const constellation = createConstellation(randomPoints(order, 4))
+  const start = performance.now()
+  const geometry = analyse(constellation)
+  const analysed = performance.now()
+  directionalEstimate(geometry)(constellation.meanEnergy / fromDecibels(20))
+  return [
+    { what: `M = ${order} random points in 4 dimensions, geometry`, milliseconds: analysed - start, limit: 5000 },
+    { what: `M = ${order} random points in 4 dimensions, directional estimate and lower bound`, milliseconds: performance.now() - analysed, limit: null },
+  ]
+}
+
 /** All measurements; the first sweep only warms the compiler up. */
 export function measureCore(): Measurement[] {
   measureSweep()
@@ -76,6 +89,7 @@ export function measureCore(): Measurement[] {
     measureSweep(),
     ...[256, 1024, 4096].map(measureRandom),
     ...(['qam', 'psk', 'hexagonal'] as const).map(measureRegular),
+    ...measureSpace(256),
   ]
 }
 
