@@ -1,6 +1,5 @@
 import { beforeAll, describe, expect, it } from 'vitest'
 import { valueOf } from '#shared/modulation/estimate'
-import { valueOf } from '#shared/modulation'
 import type { ActivityEntry } from '#shared/schemas/activity'
 import type { Candidate } from '#shared/schemas/candidates'
 import type { Study, StudySummary } from '#shared/schemas/studies'
