@@ -23,7 +23,7 @@ export const offset: InputColumn = {
 export const factors: InputColumn = {
   id: 'factors', title: 'Factors', group, kind: 'input', type: 'list', fields: ['factors'],
   format: 'plain', round: 'nearest', firstOpening: false, width: 26,
-  meaning: 'Cartesian product: its factors, 2 to 8, as 16-QAM × 4-PAM. Each factor keeps the scale of its family.',
+  meaning: 'Cartesian product: its factors, 2 to 8, as 16-QAM × 4-PAM. All factors are brought to one minimum distance.',
   text: inputs => factorsText(inputs.factors),
   parse: parseFactors,
   unused: unusedParameter('factors', 'factors'),

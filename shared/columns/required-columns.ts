@@ -78,6 +78,9 @@ export const requiredEpkN0 = valueColumn('requiredEpkN0Db', '0.00', {
   lines: v => [`${shown(v.requiredEsN0Db)} dB + ${shown(v.paprDb)} dB = ${shown(v.requiredEpkN0Db)} dB`],
 })
 
+/** Bounds and approximation are then those of the BER. */
+const isBitTarget = ({ requiredBy }: CandidateValues) => requiredBy === 'berExact'
+
 const by = (what: string, formula: string, source: string) => ({
   unit: 'dB', group, tolerance, source, formula,
   meaning: `Smallest Es/N0 at which the ${what} meets the target.`,
@@ -86,26 +89,28 @@ const by = (what: string, formula: string, source: string) => ({
 export const requiredUnion = valueColumn('requiredUnionEsN0Db', '0.00', {
   id: 'requiredUnion', method: 'unionBound', title: 'Required Es/N0, bound', width: 26,
   ...by('union bound over relevant neighbours', 'smallest Es/N0 with Σᵢ pᵢ Σⱼ∈Nᵢ Q(dᵢⱼ/√(2·N0)) ≤ target', 'Methods §2, §4'),
-  lines: (v, _row, context) => [`bound ≤ ${target(context)} from ${shown(v.requiredUnionEsN0Db)} dB`],
+  lines: (v, _row, context) => isBitTarget(v)
+    ? ['a target for the BER is bounded over all pairs only']
+    : [`bound ≤ ${target(context)} from ${shown(v.requiredUnionEsN0Db)} dB`],
 })
 
 export const requiredAllPairs = valueColumn('requiredAllPairsEsN0Db', '0.00', {
   id: 'requiredAllPairs', method: 'unionBound', title: 'Required Es/N0, all pairs', width: 29,
-  ...by('union bound over all pairs', 'smallest Es/N0 with Σᵢ pᵢ Σⱼ≠ᵢ Q(dᵢⱼ/√(2·N0)) ≤ target', 'Methods §2, §4'),
-  lines: (v, _row, context) => [`all-pairs bound ≤ ${target(context)} from ${shown(v.requiredAllPairsEsN0Db)} dB`],
+  ...by('union bound over all pairs', 'smallest Es/N0 with Σᵢ pᵢ Σⱼ≠ᵢ wᵢⱼ·Q(dᵢⱼ/√(2·N0)) ≤ target; SER: wᵢⱼ = 1, BER: wᵢⱼ = d_H(i,j)/k', 'Methods §2, §3, §4'),
+  lines: (v, _row, context) => [`all-pairs bound of the ${isBitTarget(v) ? 'BER' : 'SER'} ≤ ${target(context)} from ${shown(v.requiredAllPairsEsN0Db)} dB`],
 })
 
 export const requiredNearest = valueColumn('requiredNearestEsN0Db', '0.00', {
   id: 'requiredNearest', method: 'nearestNeighbour', title: 'Required Es/N0, approximation', width: 33,
-  ...by('nearest-neighbour approximation', 'smallest Es/N0 with Ā·Q(d_min/√(2·N0)) ≤ target', 'Methods §2, §4'),
-  lines: (v, _row, context) => [`${shown(v.nearestMean)}·Q(d_min/√(2·N0)) ≤ ${target(context)} from ${shown(v.requiredNearestEsN0Db)} dB`],
+  ...by('nearest-neighbour approximation', 'smallest Es/N0 with Ā·Q(d_min/√(2·N0)) ≤ target; BER: (1/k) Σᵢ pᵢ Σⱼ∈Nᵢ d_H(i,j)·Q(dᵢⱼ/√(2·N0)) ≤ target', 'Methods §2, §3, §4'),
+  lines: (v, _row, context) => [`${isBitTarget(v) ? 'approximation of the BER by relevant neighbours' : `${shown(v.nearestMean)}·Q(d_min/√(2·N0))`} ≤ ${target(context)} from ${shown(v.requiredNearestEsN0Db)} dB`],
 })
 
 export const boundPenalty = valueColumn('boundPenaltyDb', '0.00', {
   id: 'boundPenalty', method: 'boundPenalty', title: 'Bound penalty', unit: 'dB', group, firstOpening: true, width: 18,
   meaning: 'How much required SNR the union bound costs against the exact error rate.',
   formula: 'required Es/N0 by the bound − required Es/N0 exact', source: 'Methods §4', tolerance: tolerances.differenceDb,
-  lines: v => [`${shown(v.requiredUnionEsN0Db)} dB − ${shown(v.requiredEsN0Db)} dB = ${shown(v.boundPenaltyDb, '0.00e-0')} dB`],
+  lines: v => [`${shown(isBitTarget(v) ? v.requiredAllPairsEsN0Db : v.requiredUnionEsN0Db)} dB − ${shown(v.requiredEsN0Db)} dB = ${shown(v.boundPenaltyDb, '0.00e-0')} dB`],
 })
 
 export const gapToCapacity = valueColumn('gapToCapacityDb', '0.00', {

@@ -13,7 +13,7 @@ export const families = {
   },
   parameterSearch: {
     section: 8, title: 'Parameter search',
-    text: 'Ring ratios, ring phases, spacing, offsets or free points are varied within bounds from seeded starts until the required SNR no longer falls or the budget is spent; with peak power as the limit the back-off counts. The result becomes a candidate that says how it was found. It is never worse than its start, and a search that did not converge says so.',
+    text: 'Ring ratios, ring phases, offsets or free points are varied within bounds from seeded starts until the required SNR no longer falls or the budget is spent; with peak power as the limit the back-off counts. The result becomes a candidate that says how it was found. It is never worse than its start, and a search that did not converge says so.',
     formulas: [],
     sources: ['foschini', 'commonPractice'],
   },

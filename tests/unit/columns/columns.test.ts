@@ -45,6 +45,15 @@ describe('values of columns', () => {
   it('put the row\'s numbers into the margin', () => {
     expect(whyOf(columnOf('margin')!, row, context)?.lines).toEqual(['23.28 dB − 20.92 dB − 1.50 dB = +0.86 dB'])
   })
+  describe('under a target for the BER', () => {
+    const bits = sampleRow({ requiredBy: 'berExact', requiredEsN0Db: 18.23, requiredUnionEsN0Db: null, requiredAllPairsEsN0Db: 18.24, requiredNearestEsN0Db: 18.22, boundPenaltyDb: 0.01 })
+    it.each([
+      ['boundPenalty', '18.24 dB − 18.23 dB = 1.00e−2 dB'],
+      ['requiredUnion', 'a target for the BER is bounded over all pairs only'],
+      ['requiredAllPairs', 'all-pairs bound of the BER ≤ — from 18.24 dB'],
+      ['requiredNearest', 'approximation of the BER by relevant neighbours ≤ — from 18.22 dB'],
+    ])('explain %s by the BER', (id, line) => expect(whyOf(columnOf(id)!, bits, context)?.lines).toEqual([line]))
+  })
   it('take both intervals into Δ', () => {
     const [own, other] = [sampleRow({ requiredEsN0Db: { value: 21, low: 20.9, high: 21.1 } }), sampleRow({ requiredEsN0Db: { value: 20, low: 19.8, high: 20.2 } })]
     const delta = columnOf('delta')!
