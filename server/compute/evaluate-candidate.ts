@@ -9,9 +9,11 @@ import { linkValues } from './link-values'
 import { symbolErrorCurves } from './curves'
 import { errorRateOf, modelOf } from './error-rates'
 import { geometryOf, noiseDensityAt } from './points'
-import { requiredValues } from './required'
+import { requiredValues, thresholdOf } from './required'
+import type { RequiredValues } from './required'
 import { rowPath } from './row-path'
 import { settingOf } from './setting'
+import type { Setting } from './setting'
 
 /** What is stored of a row's computation; values and curves are null when it has errors. */
 export interface Evaluated {
@@ -67,13 +69,23 @@ function compute(inputs: CanonicalInputs): CandidateValues {
       : null,
     requiredEbN0Db: mapEstimate(requiredEsN0Db, db => ebN0Db(db, netBits)),
     requiredEpkN0Db: paprDb === null ? null : mapEstimate(requiredEsN0Db, db => epkN0Db(db, paprDb)),
-    gapToCapacityDb: constellation ? mapEstimate(requiredEsN0Db, db => gapToCapacityDb(db, netBits, dimensions)) : null,
+    gapToCapacityDb: gapToCapacityOf(inputs, required, setting),
     evmPercent: constellation ? mapEstimate(requiredEsN0Db, db => evmPercentAt(db, dimensions)) : null,
     ...backOff, symbolRateHz, occupiedBandwidthHz, netBitRate, spectralEfficiency,
     ...link, availableEbN0Db: ebN0Db(link.availableEsN0Db, netBits),
     implementationLossDb, rollOff, ...rates,
     passes: judged.passes, verdict: judged.text, checks: judged.checks,
   }
+}
+
+/**
+ * Gap to capacity in dB of the required Es/N0; where a rate threshold decides, of the threshold alone, as the decoder's gap is not the
+ * points' own. Null without points, and over fading, whose capacity is another.
+ */
+function gapToCapacityOf({ constellation, channel, threshold }: CanonicalInputs, { requiredBy, requiredEsN0Db }: RequiredValues, { netBits, dimensions }: Setting) {
+  if (!constellation || channel) return null
+  const own = threshold?.kind === requiredBy ? thresholdOf(constellation, threshold.kind, netBits) : requiredEsN0Db
+  return mapEstimate(own, db => gapToCapacityDb(db, netBits, dimensions))
 }
 
 /** SER at the available Es/N0 by each way; null where the row has no such way. */

@@ -113,11 +113,19 @@ export const boundPenalty = valueColumn('boundPenaltyDb', '0.00', {
   lines: v => [`${shown(isBitTarget(v) ? v.requiredAllPairsEsN0Db : v.requiredUnionEsN0Db)} dB − ${shown(v.requiredEsN0Db)} dB = ${shown(v.boundPenaltyDb, '0.00e-0')} dB`],
 })
 
+/** Of a rate threshold, what is required before the decoder's gap is added. */
+const withoutDecoderGap = ({ requiredBy, requiredEsN0Db }: CandidateValues, { inputs: { decoderGapDb } }: Candidate) =>
+  requiredEsN0Db !== null && requiredBy in rateNames ? mapEstimate(requiredEsN0Db, db => db - (decoderGapDb ?? 0)) : requiredEsN0Db
+
 export const gapToCapacity = valueColumn('gapToCapacityDb', '0.00', {
   id: 'gapToCapacity', method: 'capacity', title: 'Gap to capacity', unit: 'dB', group, width: 20,
-  meaning: 'Required Es/N0 minus the one at which capacity equals the net bits per symbol.',
+  meaning: 'Required Es/N0, of a rate threshold without the decoder\'s gap, minus the one at which capacity equals the net bits per symbol; none over fading.',
   formula: 'required − 10·log10((N/2)·(2^(2R/N) − 1))', source: 'Methods §5; Shannon 1948', tolerance,
-  lines: v => [`N = ${shown(v.dimensions, 'integer')}, R = ${shown(v.netBits, '0.000')}: ${shown(v.requiredEsN0Db)} dB − ${shown(v.requiredEsN0Db !== null && v.gapToCapacityDb !== null ? valueOf(v.requiredEsN0Db) - valueOf(v.gapToCapacityDb) : null)} dB = ${shown(v.gapToCapacityDb)} dB`],
+  lines: (v, row) => {
+    const own = withoutDecoderGap(v, row)
+    const capacityDb = own === null || v.gapToCapacityDb === null ? null : valueOf(own) - valueOf(v.gapToCapacityDb)
+    return [`N = ${shown(v.dimensions, 'integer')}, R = ${shown(v.netBits, '0.000')}: ${shown(own)} dB − ${shown(capacityDb)} dB = ${shown(v.gapToCapacityDb)} dB`]
+  },
 })
 
 export const evm = valueColumn('evmPercent', '0.00', {

@@ -19,7 +19,7 @@ export const information = {
   },
   capacity: {
     section: 5, title: 'Capacity and the gap to it',
-    text: 'Capacity is what the best signals of N dimensions and the same energy may reach. The gap is the row’s required SNR, coded or uncoded, minus the SNR at which capacity equals the row’s net bits. No scheme needs less Eb/N0 than ln 2, −1.59 dB.',
+    text: 'Capacity is what the best signals of N dimensions and the same energy may reach. The gap is the row’s required SNR, coded (the rate threshold without the decoder’s gap) or uncoded, minus the SNR at which capacity equals the row’s net bits; it is given for the AWGN channel only. No scheme needs less Eb/N0 than ln 2, −1.59 dB.',
     formulas: [
       { tex: String.raw`C=\frac N2\log_2\!\left(1+\frac{2E_\mathrm s}{N\,N_0}\right),\qquad \Delta_C=\left(\frac{E_\mathrm s}{N_0}\right)_{\!\mathrm{req}}-10\log_{10}\!\left[\frac N2\left(2^{2R/N}-1\right)\right]` },
     ],

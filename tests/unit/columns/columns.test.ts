@@ -45,6 +45,10 @@ describe('values of columns', () => {
   it('put the row\'s numbers into the margin', () => {
     expect(whyOf(columnOf('margin')!, row, context)?.lines).toEqual(['23.28 dB − 20.92 dB − 1.50 dB = +0.86 dB'])
   })
+  it('take the decoder\'s gap off before the gap to capacity', () => {
+    const coded = sampleRow({ requiredBy: 'bitMetricRate', netBits: 3, requiredEsN0Db: 11, gapToCapacityDb: 1.549 }, { decoderGapDb: 1 })
+    expect(whyOf(columnOf('gapToCapacity')!, coded, context)?.lines).toEqual(['N = 2, R = 3.000: 10.00 dB − 8.45 dB = 1.55 dB'])
+  })
   describe('under a target for the BER', () => {
     const bits = sampleRow({ requiredBy: 'berExact', requiredEsN0Db: 18.23, requiredUnionEsN0Db: null, requiredAllPairsEsN0Db: 18.24, requiredNearestEsN0Db: 18.22, boundPenaltyDb: 0.01 })
     it.each([

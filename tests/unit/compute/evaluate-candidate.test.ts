@@ -56,6 +56,9 @@ describe('a row with options', () => {
     expect([values({}, target('ber')).requiredBy, valueOf(values({}, target('ber')).requiredEsN0Db!) < valueOf(values({}, target('ser')).requiredEsN0Db!)]).toEqual(['berExact', true]))
   it('adds the decoder\'s gap to its rate threshold', () =>
     expect(valueOf(values(coded).requiredEsN0Db!) - valueOf(values({ ...coded, decoderGapDb: 0 }).requiredEsN0Db!)).toBeCloseTo(0.8, 9))
+  it('leaves the decoder\'s gap out of its gap to capacity', () =>
+    expect(valueOf(values(coded).gapToCapacityDb!)).toBe(valueOf(values({ ...coded, decoderGapDb: 0 }).gapToCapacityDb!)))
+  it('has no gap to capacity over fading', () => expect(values({ channel: 'rayleigh' }, target('ser')).gapToCapacityDb).toBeNull())
   it('requires what a target before decoding asks for, where that is more', () =>
     expect(values(coded, target('ser', 'beforeDecoding')).requiredEsN0Db).toBe(values({}, target('ser')).requiredEsN0Db))
   it('has the SER of binary PSK over Rayleigh fading', () => {
