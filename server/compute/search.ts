@@ -1,7 +1,8 @@
-import { advanceLabelSearch, createLabelSearch, ModulationError } from '#shared/modulation'
-import type { LabelSearchState } from '#shared/modulation'
+import { advanceLabelSearch, createLabelSearch, ModulationError, shapedProbabilities, withProbabilities } from '#shared/modulation'
+import type { Constellation, LabelSearchState } from '#shared/modulation'
 import { advanceParameterSearch, createParameterSearch } from '#shared/modulation/parameter-search'
 import type { ParameterSearchState } from '#shared/modulation/parameter-search'
+import { searchGoal } from '#shared/modulation/parameter-search-goal'
 import type { SearchGoal, SearchLimit } from '#shared/modulation/parameter-search-goal'
 import type { Issue } from '#shared/schemas/common'
 import type { SearchCreation } from '#shared/schemas/searches'
@@ -52,23 +53,48 @@ function limitOf({ study, backOff, rollOff }: CanonicalInputs): SearchLimit {
   return { by: 'peak', backOff: backOff.by === 'papr' ? 'papr' : { rollOff, exceedance: backOff.exceedance } }
 }
 
+/** The goal in dB. Unless something else is asked for, a target before decoding counts beside the rate threshold, as in the row. */
+function requiredOf({ goal: chosen }: Asked<'parameters'>, row: CanonicalInputs, goal: SearchGoal): (constellation: Constellation) => number {
+  const { threshold, study: { target } } = row
+  const limit = limitOf(row)
+  const required = searchGoal(goal, limit)
+  if (chosen || threshold?.stage !== 'beforeDecoding') return required
+  const before = searchGoal({ kind: target.quantity, target: target.value }, limit)
+  return constellation => Math.max(required(constellation) + threshold.decoderGapDb, before(constellation))
+}
+
+/** The same with probabilities that are shaped anew for all points that are tried, where the row's are: the found row shapes its own too. */
+function goalFunction(asked: Asked<'parameters'>, row: CanonicalInputs, goal: SearchGoal): (constellation: Constellation) => number {
+  const required = requiredOf(asked, row, goal)
+  const probabilities = row.constellation?.probabilities
+  if (!probabilities || Array.isArray(probabilities)) return required
+  return constellation => required(withProbabilities(constellation, shapedProbabilities(constellation, probabilities.entropy)))
+}
+
 const inRadians = ([low, high]: readonly [number, number]) => [low * Math.PI / 180, high * Math.PI / 180] as const
 
 function beginParameters(asked: Asked<'parameters'>, row: CanonicalInputs): SearchState {
   const points = pointsOf(row)
-  const { labels, probabilities } = constellationOf(points)
+  const { labels } = constellationOf(points)
+  const probabilities = Array.isArray(points.probabilities) ? points.probabilities : null
   const goal = goalOf(asked, row, settingOf(row).netBits)
   const { phases, ...bounds } = asked.bounds
   const state = createParameterSearch({
     family: points.family, parameters: points.parameters, free: asked.free, bounds: { ...bounds, ...(phases && { phases: inRadians(phases) }) },
-    goal, limit: limitOf(row), labels, probabilities: probabilities && [...probabilities], seed: asked.seed, starts: asked.starts, budget: asked.budget,
-  })
+    goal, limit: limitOf(row), labels, probabilities, seed: asked.seed, starts: asked.starts, budget: asked.budget,
+  }, goalFunction(asked, row, goal))
   return { kind: 'parameters', goal, state }
 }
 
 function begin({ asked, row }: SearchTask): SearchState {
   requirePlain(row)
   return asked.kind === 'labels' ? beginLabels(asked, row) : beginParameters(asked, row)
+}
+
+function advance({ asked, row }: SearchTask, search: SearchState, milliseconds: number): SearchState {
+  if (search.kind === 'labels') return { ...search, state: advanceLabelSearch(search.state, { milliseconds }) }
+  const goal = asked.kind === 'parameters' ? goalFunction(asked, row, search.goal) : undefined
+  return { ...search, state: advanceParameterSearch(search.state, milliseconds, goal) }
 }
 
 /**
@@ -80,11 +106,7 @@ function begin({ asked, row }: SearchTask): SearchState {
 export function search(task: SearchTask, state: SearchState | null, milliseconds: number): { state: SearchState } | { issues: Issue[] } {
   try {
     if (!state) return { state: begin(task) }
-    return {
-      state: state.kind === 'labels'
-        ? { ...state, state: advanceLabelSearch(state.state, { milliseconds }) }
-        : { ...state, state: advanceParameterSearch(state.state, milliseconds) },
-    }
+    return { state: advance(task, state, milliseconds) }
   } catch (error) {
     if (!(error instanceof ModulationError)) throw error
     return { issues: [{ path: rowPath(error.path), message: error.message }] }
