@@ -1,4 +1,4 @@
-import { bitMetricRate, directionalEstimate, largestGainDb, largestRotationRad, mapEstimate, mapNotes, ModulationError, mutualInformation, requiredSnr, serLowerBound, serMap, valueOf } from '#shared/modulation'
+import { bitMetricRate, directionalEstimate, largestGainDb, largestRotationRad, mapEstimate, mapNotes, ModulationError, mutualInformation, serLowerBound, serMap, valueOf } from '#shared/modulation'
 import type { Estimate } from '#shared/modulation'
 import { frameErrorRate } from '#shared/modulation/frame-error'
 import type { Issue } from '#shared/schemas/common'
@@ -95,13 +95,14 @@ function lower(row: Row): PartValuesOf<'lower'> {
 
 function map(row: Row): PartValuesOf<'map'> {
   requireNoiseAlone(row, 'MAP decisions are')
-  const { model, n0, inputs: { study } } = row
+  const { model, n0, inputs: { study: { target } } } = row
   const { constellation } = geometryOf(model.points)
+  if (constellation.dimensions > 2) throw refusal('MAP decisions are for one and two dimensions: choose decisions by minimum distance.', 'decision')
   const { outside, vanished } = mapNotes(constellation, n0)
-  const rate = (density: number) => serMap(constellation, density)
+  const targeted = target.quantity === 'ber' ? 'berExact' : 'serExact'
   return {
-    serMap: rate(n0), mapOutside: outside.length, mapVanished: vanished.length,
-    requiredMapEsN0Db: orNull(() => requiredSnr({ rate, meanEnergy: constellation.meanEnergy, monotone: true }, study.target.value).esN0Db),
+    serMap: serMap(constellation, n0), mapOutside: outside.length, mapVanished: vanished.length,
+    requiredMapEsN0Db: plain(orNull(() => errorRateOf({ ...model, decision: 'map' }, targeted)?.required(target.value).esN0Db ?? null)),
   }
 }
 

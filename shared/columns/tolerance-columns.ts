@@ -29,8 +29,11 @@ export const serMap = partColumn('map', 'serMap', {
 export const requiredMap = partColumn('map', 'requiredMapEsN0Db', {
   id: 'requiredMap', method: 'mapDecisions', title: 'Required Es/N0, MAP', unit: 'dB', group: 'Required SNR', format: '0.00', width: 22,
   meaning: 'Smallest Es/N0 above which the error rate of MAP decisions stays at or below the target.',
-  formula: 'smallest Es/N0 with SER of MAP decisions ≤ target', source: 'Methods §2, §4', tolerance: tolerances.requiredDb,
-  lines: (v, _row, _candidate, { requirements }) => [`SER ≤ ${shown(requirements?.target.value, '0.00e-0')} from ${shown(v.requiredMapEsN0Db)} dB`],
+  formula: 'smallest Es/N0 with SER or BER of MAP decisions ≤ target', source: 'Methods §2, §3, §4', tolerance: tolerances.requiredDb,
+  lines: (v, _row, _candidate, { requirements }) => {
+    const rate = `${requirements?.target.quantity === 'ber' ? 'BER' : 'SER'} ≤ ${shown(requirements?.target.value, '0.00e-0')}`
+    return [v.requiredMapEsN0Db === null ? `no Es/N0 is known for ${rate}; a BER needs labels` : `${rate} from ${shown(v.requiredMapEsN0Db)} dB`]
+  },
 })
 
 export const mapOutside = partColumn('map', 'mapOutside', {

@@ -25,6 +25,17 @@ describe('parts of a row', () => {
     expect(values('frames', { family: 'psk', order: 4, frameSymbols: 100 }).frameErrorRate).toBeCloseTo(1 - (1 - 7.827011290012703e-4) ** 200, 10))
   it('counts the cells that vanish under MAP', () =>
     expect(values('map', { family: 'pam', order: 3, probabilityRule: 'own', probabilities: [0.495, 0.01, 0.495] }, -5).mapVanished).toBe(1))
+  it('finds what MAP decisions require for a bit error rate', () => {
+    // Equal probabilities: MAP decides by minimum distance. Gray QPSK has BER Q(√(Es/N0)): 1e-6 at 4.753424²
+    const inputs = canonicalInputs({ ...defaultInputs, family: 'psk', order: 4 }, { ...defaultRequirements, target: { quantity: 'ber', value: 1e-6, stage: 'afterDecoding' } })
+    expect(evaluatePart('map', inputs).values).toMatchObject({ requiredMapEsN0Db: expect.closeTo(20 * Math.log10(4.753424308822899), 6) })
+  })
+  it('knows no MAP requirement for a bit error rate without labels', () => {
+    const inputs = canonicalInputs({ ...defaultInputs, family: 'psk', order: 12 }, { ...defaultRequirements, target: { quantity: 'ber', value: 1e-6, stage: 'afterDecoding' } })
+    expect(evaluatePart('map', inputs).values).toMatchObject({ requiredMapEsN0Db: null, serMap: expect.any(Number) })
+  })
+  it('refuses MAP decisions in more dimensions by the decision', () =>
+    expect(part('map', { family: 'orthogonal', order: 4 }).errors.map(error => error.path)).toEqual(['decision']))
   it('refuses information rates with fading', () => expect(part('rates', { channel: 'rayleigh' }).errors[0]!.path).toBe('channel'))
   it('draws BER and information rates over the row\'s range', () => {
     const range = { family: 'psk', order: 4, snrStart: 0, snrStop: 10, snrStep: 5 } as const
