@@ -38,7 +38,9 @@ function pointsOf({ constellation }: CanonicalInputs) {
 function beginLabels({ seed, starts }: Asked<'labels'>, row: CanonicalInputs): SearchState {
   const { constellation } = labelledGeometryOf(pointsOf(row))
   const availableEsN0Db = availableAt(row, settingOf(row))
-  return { kind: 'labels', availableEsN0Db, state: createLabelSearch({ constellation, n0: noiseDensityAt(constellation, availableEsN0Db), seed, starts }) }
+  const state = createLabelSearch({ constellation, n0: noiseDensityAt(constellation, availableEsN0Db), seed, starts })
+  if (state.startBer === 0) throw refusal('The bit error rate is 0 to a double at this Es/N0: lower the available Es/N0.', 'requirements.available')
+  return { kind: 'labels', availableEsN0Db, state }
 }
 
 /** What the row's own required SNR rests on, unless something else is asked for. */

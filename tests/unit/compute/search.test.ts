@@ -71,3 +71,14 @@ describe('a search of a row with shaped probabilities', () => {
     expect(value).toBeCloseTo(found, 6)
   })
 })
+
+describe('a search of labels', () => {
+  const at = (esN0Db: number) => search({
+    asked: { kind: 'labels', seed: 1, starts: 1 }, row: canonicalInputs(rings, { ...defaultRequirements, available: { from: 'entered', esN0Db } }),
+  }, null, 0)
+
+  it('is refused where the bit error rate is too small for a double', () => expect(at(60)).toEqual({
+    issues: [{ path: 'requirements.available', message: 'The bit error rate is 0 to a double at this Es/N0: lower the available Es/N0.' }],
+  }))
+  it('begins where it is not', () => expect(at(15)).toHaveProperty('state.kind', 'labels'))
+})
