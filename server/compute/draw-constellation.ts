@@ -1,6 +1,5 @@
-import { decisionCells, serExactByPoint, serMapByPoint } from '#shared/modulation'
+import { boundShares, decisionCells, serExactByPoint, serMapByPoint } from '#shared/modulation'
 import type { Geometry } from '#shared/modulation'
-import { logQ } from '#shared/modulation/gaussian'
 import type { CandidateConstellation } from '#shared/schemas/values'
 import type { CanonicalInputs, CanonicalPoints } from '#shared/study/canonical-inputs'
 import { modelOf } from './error-rates'
@@ -16,38 +15,31 @@ const space = 0.35
 
 const range = (count: number) => Array.from({ length: count }, (_, i) => i)
 
-/** Shares of the terms Q(d/√(2·N0)) in their sum, by their logarithms: far below the least double they still compare. */
-function sharesOf(distances: Float64Array, n0: number): number[] {
-  const logs = Array.from(distances, d => logQ(d / Math.sqrt(2 * n0)))
-  const largest = Math.max(...logs)
-  const terms = logs.map(log => Math.exp(log - largest))
-  const sum = terms.reduce((a, b) => a + b, 0)
-  return terms.map(term => term / sum)
-}
-
 function errorsOf({ decision, channel, phaseErrorDeg }: RowModel, geometry: Geometry, n0: number): number[] | null {
   if (channel || phaseErrorDeg || geometry.constellation.dimensions > 2) return null
   return [...decision === 'map' ? serMapByPoint(geometry.constellation, n0) : serExactByPoint(geometry, n0)]
 }
 
-/** Available Es/N0 of a row in dB, and what each point's errors are there. */
+/** Available Es/N0 of a row in dB, and there each neighbour's share of the bound and each point's errors. */
 function errorsAt(row: CanonicalInputs | null, geometry: Geometry) {
   const model = row && modelOf(row)
-  if (!model) return { availableEsN0Db: null, n0: null, errorByPoint: null }
+  if (!model) return { availableEsN0Db: null, shares: null, errorByPoint: null }
   const availableEsN0Db = availableAt(row, settingOf(row))
   const n0 = noiseDensityAt(geometry.constellation, availableEsN0Db)
-  return { availableEsN0Db, n0, errorByPoint: errorsOf(model, geometry, n0) }
+  // MAP decisions move the boundaries, and with them the terms of their bound.
+  const shares = model.decision === 'map' ? null : boundShares(geometry, n0)
+  return { availableEsN0Db, shares, errorByPoint: errorsOf(model, geometry, n0) }
 }
 
 /**
  * What the close-up of a row draws, at unit mean energy: points [x, y] (y = 0 for one dimension), decision cells cut to
- * a box of half the side `box`, relevant neighbours with their distances and their shares of the bound.
+ * a box of half the side `box`, relevant neighbours with their distances and, where decisions are by minimum distance, their shares of the bound.
  */
 export function drawConstellation({ points: canonical, row }: DrawnRow): CandidateConstellation {
   const geometry = labelledGeometryOf(canonical)
   const { offsets, neighbours, distances, minimumDistance } = geometry
   const { order, dimensions, points, meanEnergy, labels, probabilities } = geometry.constellation
-  const { availableEsN0Db, n0, errorByPoint } = errorsAt(row, geometry)
+  const { availableEsN0Db, shares, errorByPoint } = errorsAt(row, geometry)
   const scale = 1 / Math.sqrt(meanEnergy)
   const farthest = points.reduce((most, x) => Math.max(most, Math.abs(x)), 0)
   const half = farthest * (1 + space)
@@ -60,10 +52,9 @@ export function drawConstellation({ points: canonical, row }: DrawnRow): Candida
     box: half * scale,
     neighbours: range(order).map((i) => {
       const [first, end] = [offsets[i]!, offsets[i + 1]!]
-      const shares = n0 === null ? null : sharesOf(distances.subarray(first, end), n0)
       return range(end - first).map(n => ({
         point: neighbours[first + n]!, distance: distances[first + n]! * scale,
-        nearest: distances[first + n]! <= minimumDistance * (1 + 1e-9), share: shares?.[n] ?? null,
+        nearest: distances[first + n]! <= minimumDistance * (1 + 1e-9), share: shares?.[first + n] ?? null,
       }))
     }),
     minimumDistance: minimumDistance * scale,
