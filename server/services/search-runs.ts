@@ -4,6 +4,7 @@ import type { SearchState } from '../compute/search'
 import { useDatabase } from '../database/client'
 import type { Transaction } from '../database/client'
 import { candidates, jobs } from '../database/schema'
+import { Refusal } from '../utils/problem'
 import { recordActivity } from './activity'
 import { liveIds, positionsBehind } from './candidate-positions'
 import { enqueueWritten, insertRows, lockedStudy, requireRoom } from './candidate-writing'
@@ -50,6 +51,13 @@ async function run(id: string): Promise<void> {
   }
 }
 
+/** Why a search has failed for good; null where it may go on later, as after a lost connection. */
+export function sentenceOf(error: unknown): string | null {
+  if (error instanceof ComputationFailed) return 'The search broke down twice. Change it, or ask the administrator to look at the server\'s log.'
+  // Its row is refused, as in a full study: another attempt would be too.
+  return error instanceof Refusal ? error.message : null
+}
+
 /** One slice. @returns whether there is more to do */
 async function advance(id: string): Promise<boolean> {
   const [job] = await useDatabase().select().from(jobs).where(and(eq(jobs.id, id), inArray(jobs.state, active)))
@@ -60,8 +68,9 @@ async function advance(id: string): Promise<boolean> {
     if ('issues' in answer) return await fail(job, answer.issues[0]!.message)
     return await keep(job, answer.state)
   } catch (error) {
-    if (error instanceof ComputationFailed) return fail(job, 'The search broke down twice. Change it, or ask the administrator to look at the server\'s log.')
-    throw error
+    const sentence = sentenceOf(error)
+    if (sentence === null) throw error
+    return fail(job, sentence)
   }
 }
 
