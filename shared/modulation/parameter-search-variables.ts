@@ -1,6 +1,7 @@
 import { ModulationError } from './errors'
 import type { FamilyId, FamilyParameters } from './families'
 import { familyOf } from './families'
+import { latticeDimensions } from './families/lattice-cut'
 
 /** Parameters that may be searched. */
 export const freeParameters = ['ratios', 'phases', 'offset', 'points'] as const
@@ -50,8 +51,12 @@ export function variablesOf(family: FamilyId, parameters: FamilyParameters, free
 
 /** The parameters with phases and offsets that the family otherwise supplies. */
 export function completed(parameters: FamilyParameters, free: readonly FreeParameter[]): FamilyParameters {
-  const withPhases = free.includes('phases') && !parameters.phases && parameters.rings
-  return withPhases ? { ...parameters, phases: parameters.rings!.map(n => Math.PI / n) } : parameters
+  const { rings, phases, lattice, offset } = parameters
+  return {
+    ...parameters,
+    ...free.includes('phases') && !phases && rings ? { phases: rings.map(n => Math.PI / n) } : {},
+    ...free.includes('offset') && !offset?.length && lattice ? { offset: new Array<number>(latticeDimensions[lattice]).fill(0) } : {},
+  }
 }
 
 /** Where the parameters lie between the bounds, 0 to 1 each. */

@@ -15,12 +15,13 @@ export const freeTitles: Record<FreeParameter, { title: string, unit: string }> 
 }
 
 /** Parameters of a row that a search may move: those of its family that have more than one free number. */
-export function freeOf({ family, rings, ratios, offset, points }: CandidateInputs): FreeParameter[] {
+export function freeOf({ family, rings, ratios, lattice, points }: CandidateInputs): FreeParameter[] {
   const known = families.find(({ id }) => id === family)?.parameters ?? []
   const some: Record<FreeParameter, boolean> = {
     ratios: (ratios?.length ?? 0) > 0,
     phases: (rings?.filter(n => n > 1).length ?? 0) > 1,
-    offset: (offset?.length ?? 0) > 0,
+    // Left out it is zero, from where it is searched too.
+    offset: lattice !== null,
     points: (points?.length ?? 0) > 1,
   }
   return freeParameters.filter(parameter => known.includes(parameter) && some[parameter])

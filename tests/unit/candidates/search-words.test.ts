@@ -15,6 +15,7 @@ const search: Search = {
 describe('what a search may move', () => {
   it('are ratios and phases of rings', () => expect(freeOf({ ...defaultInputs, family: 'apsk', rings: [4, 12], ratios: [2.57] })).toEqual(['ratios', 'phases']))
   it('are points of one\'s own', () => expect(freeOf({ ...defaultInputs, family: 'custom', points: [[0], [1]] })).toEqual(['points']))
+  it('is the offset of a lattice, zero unless entered', () => expect(freeOf({ ...defaultInputs, family: 'lattice', lattice: 'D4' })).toEqual(['offset']))
   it('is nothing in a square grid', () => expect(freeOf(defaultInputs)).toEqual([]))
 })
 

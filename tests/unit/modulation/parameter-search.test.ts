@@ -148,6 +148,20 @@ describe('free points', () => {
   })
 })
 
+describe('the offset of a lattice', () => {
+  const goal = { kind: 'ser', target: 1e-3 } as const
+
+  it.each([['A2', 2], ['D4', 4]] as const)('begins at zero in %s where none is given', (lattice, dimensions) => {
+    const { best } = createParameterSearch({ family: 'lattice', parameters: { order: 16, lattice }, free: ['offset'], goal })
+    expect(best.parameters.offset).toEqual(new Array(dimensions).fill(0))
+  })
+
+  it('moves to where 16 points of A2 need less', () => {
+    const found = searched({ family: 'lattice', parameters: { order: 16, lattice: 'A2' }, free: ['offset'], goal, starts: 2, budget: 60 })
+    expect(found.best.value).toBeLessThan(found.startValue - 0.1)
+  })
+})
+
 describe('refusals', () => {
   const goal = { kind: 'ser', target: 1e-3 } as const
   it.each([
