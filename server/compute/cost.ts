@@ -1,6 +1,7 @@
 import type { EvaluationRequest } from '#shared/schemas/evaluate'
 import type { Issue } from '#shared/schemas/common'
-import { geometrySeconds } from '#shared/study/geometry-cost'
+import { latticeDimensions } from '#shared/modulation/families/lattice-cut'
+import { geometrySeconds, latticeSeconds } from '#shared/study/geometry-cost'
 
 /** Longest evaluation by estimate, in seconds of one thread. */
 export const longestEvaluation = 12
@@ -29,17 +30,21 @@ const ofPairs: readonly string[] = ['serAllPairs', 'berAllPairs']
 /** Seconds for putting the distances of all pairs together, once. */
 const secondsOfPairs = (points: number) => 5e-8 * points * points
 
-/** Number of points and of coordinates, by whichever parameter gives them: the schema refuses those of other families. */
-function sizeOf({ order, points, rings, factors }: EvaluationRequest['constellation']): { points: number, dimensions: number } {
+/**
+ * Number of points, and of coordinates of the largest part, by whichever parameter gives them: the schema refuses those of other families.
+ * The rates of a product are found a factor at a time.
+ */
+function sizeOf({ order, points, rings, lattice, factors }: EvaluationRequest['constellation']): { points: number, dimensions: number } {
   const one = ({ order = 1, rings }: { order?: number, rings?: number[] }) => rings?.reduce((a, b) => a + b, 0) ?? order
   return {
     points: points?.length ?? factors?.reduce((product, factor) => product * one(factor), 1) ?? one({ order, rings }),
-    dimensions: points?.[0]?.length ?? 2,
+    dimensions: points?.[0]?.length ?? Math.max(...[{ lattice }, ...factors ?? []].map(part => part.lattice ? latticeDimensions[part.lattice] : 2)),
   }
 }
 
-/** Families of more dimensions have structure; scattered points are looked at pair by pair. */
-const geometryOf = ({ points }: EvaluationRequest['constellation']) => points ? geometrySeconds(points.length, points[0]!.length) : 0
+/** Scattered points and lattice cuts are looked at pair by pair; the other families of more dimensions have structure. */
+const geometryOf = (constellation: EvaluationRequest['constellation']) =>
+  constellation.points ? geometrySeconds(constellation.points.length, constellation.points[0]!.length) : latticeSeconds(constellation)
 
 /** Estimated seconds of an evaluation. */
 export function estimatedSeconds({ constellation, esN0Db, target, quantities }: EvaluationRequest): number {
@@ -54,7 +59,11 @@ export function costIssues(request: EvaluationRequest): Issue[] {
   const seconds = estimatedSeconds(request)
   if (seconds <= longestEvaluation) return []
   if (geometryOf(request.constellation) > longestEvaluation / 2) {
-    return [{ path: 'constellation.points', message: `This evaluation is estimated at ${Math.ceil(seconds)} s; at most ${longestEvaluation} s are computed. Send fewer points, or points of fewer coordinates.` }]
+    const { points, factors } = request.constellation
+    return [{
+      path: `constellation.${points ? 'points' : factors ? 'factors' : 'order'}`,
+      message: `This evaluation is estimated at ${Math.ceil(seconds)} s; at most ${longestEvaluation} s are computed. Send fewer points, or points of fewer coordinates.`,
+    }]
   }
   const costly = request.quantities.filter(quantity => estimatedSeconds({ ...request, quantities: [quantity] }) > longestEvaluation / 2)
   const message = `This evaluation is estimated at ${Math.ceil(seconds)} s; at most ${longestEvaluation} s are computed. `

@@ -1,7 +1,7 @@
 import type { CandidateField, CandidateInputs } from '../schemas/candidates'
 import type { Issue } from '../schemas/common'
 import { familyOfRow, familyParameters, rowSize } from './family-parameters'
-import { geometrySeconds } from './geometry-cost'
+import { geometrySeconds, latticePointsWithin, latticeSeconds } from './geometry-cost'
 import { channelIssues, labelIssues, probabilityIssues } from './option-issues'
 import { mostValues, valuesOfRange } from './snr-grid'
 
@@ -22,10 +22,19 @@ export function constellationIssues(inputs: CandidateInputs): Issue[] {
 /** Longest that the neighbours of a row's points may take to find, in seconds by estimate. */
 const longestGeometry = 60
 
+const mostOf = (lattice: NonNullable<CandidateInputs['lattice']>) => latticePointsWithin(lattice, longestGeometry).toLocaleString('en')
+
 function costIssues(inputs: CandidateInputs): Issue[] {
   const { order, dimensions } = rowSize(inputs)
-  if (inputs.family !== 'custom' || geometrySeconds(order ?? 0, dimensions ?? 0) <= longestGeometry) return []
-  return [at('points', `${order!.toLocaleString('en')} points of ${dimensions} coordinates would take minutes: enter fewer, or a family of the list.`)]
+  if (inputs.family === 'custom' && geometrySeconds(order ?? 0, dimensions ?? 0) > longestGeometry) {
+    return [at('points', `${order!.toLocaleString('en')} points of ${dimensions} coordinates would take minutes: enter fewer, or a family of the list.`)]
+  }
+  if (inputs.family === 'lattice' && latticeSeconds(inputs) > longestGeometry) {
+    return [at('order', `${order!.toLocaleString('en')} points of ${inputs.lattice} would take minutes: at most ${mostOf(inputs.lattice!)} are allowed.`)]
+  }
+  return inputs.family === 'product' && latticeSeconds({ factors: inputs.factors }) > longestGeometry
+    ? [at('factors', `The lattice cuts among these factors would take minutes: a cut of E8 has at most ${mostOf('E8')} points.`)]
+    : []
 }
 
 function basisIssues(inputs: CandidateInputs): Issue[] {

@@ -24,5 +24,13 @@ describe('the cost limit of an evaluation', () => {
     const points = Array.from({ length: 1024 }, (_, i) => [Math.cos(i), Math.sin(i * i), i / 1024, Math.cos(i * i * i)])
     expect(costIssues(evaluation.parse({ constellation: { family: 'custom', points }, esN0Db: [10] }))[0]!.path).toBe('constellation.points')
   })
+  it.each(['D4', 'E8'])('lets 256 points of %s have their neighbours', lattice =>
+    expect(costIssues(evaluation.parse({ constellation: { family: 'lattice', lattice, order: 256 }, esN0Db: [10] }))).toEqual([]))
+  it('names the order of a lattice cut whose neighbours take too long', () =>
+    expect(costIssues(evaluation.parse({ constellation: { family: 'lattice', lattice: 'E8', order: 4096 }, esN0Db: [10] }))[0]!.path).toBe('constellation.order'))
+  it('names the factors of a product with such a cut', () => {
+    const factors = [{ family: 'lattice', lattice: 'E8', order: 2048 }, { family: 'pam', order: 2 }]
+    expect(costIssues(evaluation.parse({ constellation: { family: 'product', factors }, esN0Db: [10] }))[0]!.path).toBe('constellation.factors')
+  })
   it('counts the rings of APSK', () => expect(paths({ family: 'apsk', rings: [2048, 2048], ratios: [2] })).toEqual(['quantities']))
 })

@@ -20,6 +20,13 @@ describe('contradictions within a row', () => {
   it('names phases by the row\'s field', () => expect(paths({ family: 'apsk', rings: [4, 12], ratios: [2], phasesDeg: [0] })).toEqual(['phasesDeg']))
   it('names both of two points that coincide', () =>
     expect(issues({ family: 'custom', points: [[1, 0], [0, 1], [1, 0]] })[0]!.message).toBe('All points are different: points 1 and 3 coincide.'))
+  it.each(['D4', 'E8'] as const)('takes 256 points of %s', lattice => expect(issues({ family: 'lattice', lattice, order: 256 })).toEqual([]))
+  it('refuses a factor of 2,048 points of E8', () =>
+    expect(paths({ family: 'product', factors: [{ family: 'lattice', lattice: 'E8', order: 2048 }, { family: 'pam', order: 2 }] })).toEqual(['factors']))
+  it('takes 1,024 points of E8', () => expect(issues({ family: 'lattice', lattice: 'E8', order: 1024 })).toEqual([]))
+  it('refuses 4,096 points of E8, which would take minutes', () => expect(issues({ family: 'lattice', lattice: 'E8', order: 4096 })).toEqual([
+    { path: 'order', message: '4,096 points of E8 would take minutes: at most 1,803 are allowed.' },
+  ]))
   it('refuses a code rate below 1 with an uncoded basis', () => expect(issues({ codeRate: 0.5 })).toEqual([{
     path: 'codeRate',
     message: 'A code rate below 1 with an uncoded basis is refused: it would charge for the code and credit nothing. Use 1, or the basis rate threshold or entered.',
