@@ -278,10 +278,11 @@ describe('a row that could not be computed', () => {
 describe('CSV and JSON', () => {
   it('the CSV has every column of every row, numbers in full', async () => {
     const { head, lines } = await csvOf(ridge)
-    expect(head).toEqual(columns.map(headerOf))
+    // The ends of intervals stand behind the grid's columns.
+    expect(head.slice(0, columns.length)).toEqual(columns.map(headerOf))
     const { body: study } = await owner.get<{ requirements: never }>(`/api/studies/${ridge}`)
     const context = { reference: rows.find(({ inputs }) => inputs.role === 'reference') ?? null, requirements: study.requirements }
-    expect(lines).toEqual(rows.map(row => columns.map((column) => {
+    expect(lines.map(line => line.slice(0, columns.length))).toEqual(rows.map(row => columns.map((column) => {
       const value = column.value(row, context)
       return value === null ? '' : String(value)
     })))
