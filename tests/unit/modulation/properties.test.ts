@@ -1,6 +1,6 @@
 import fc from 'fast-check'
 import { describe, expect, it } from 'vitest'
-import { analyse, createConstellation, paprDb, requiredEsN0Db, serAllPairs, serExact, serNearest, serUnionBound } from '../../../shared/modulation'
+import { analyse, createConstellation, paprDb, requiredEsN0Db, serAllPairs, serExact, serLowerBound, serNearest, serUnionBound } from '../../../shared/modulation'
 
 const settings = { seed: 7, numRuns: 100 }
 
@@ -48,6 +48,13 @@ describe('error rates of any points', () => {
     expect(exact).toBeLessThanOrEqual(union * (1 + 1e-12))
     expect(union).toBeLessThanOrEqual(pairs * (1 + 1e-12))
   }), settings))
+  it('lie between the lower bound and the union bound when exact', () => fc.assert(fc.property(plane, argument, (points, x) => {
+    const geometry = geometryOf(points)
+    const n0 = densityFor(geometry.minimumDistance, x)
+    const exact = serExact(geometry, n0)
+    expect(serLowerBound(geometry, n0)).toBeLessThanOrEqual(exact * (1 + 1e-9))
+    expect(exact).toBeLessThanOrEqual(serUnionBound(geometry, n0) * (1 + 1e-9))
+  }), { ...settings, numRuns: 300 }))
   it('are probabilities when exact', () => fc.assert(fc.property(plane, fc.double({ min: 1e-4, max: 1, noNaN: true }), (points, x) => {
     expect(ratesOf(points, densityFor(geometryOf(points).minimumDistance, x))[0]).toBeLessThan(1 - 1 / points.length + 1e-9)
   }), settings))
