@@ -63,7 +63,8 @@ describe('a search for labels', () => {
   it('goes on after the server that ran it was killed', async () => {
     const first = await otherServer()
     const study = await ownStudy(first.client, 'Killed in a search')
-    await begin(first.client, await ownRow(first.client, study, scattered), { kind: 'labels', starts: 4 })
+    // Some seconds of slices: long enough to be killed in.
+    await begin(first.client, await ownRow(first.client, study, { ...scattered, points: scattered.points.slice(0, 128) }), { kind: 'labels', starts: 100 })
     const before = await reached(first.client, study, ['running'])
     await first.kill()
     const second = await otherServer()
