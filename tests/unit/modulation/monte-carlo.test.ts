@@ -73,7 +73,7 @@ describe('exact BER of unequal probabilities agrees with a count of wrong bits',
       const weights = points.map(() => 0.2 + random())
       const total = weights.reduce((sum, w) => sum + w, 0)
       const p = weights.map(w => w / total)
-      const labels = naturalLabels(order)
+      const labels = naturalLabels(order)!
       const geometry = analyse(createConstellation(points, { labels, probabilities: p }))
       const n0 = geometry.constellation.meanEnergy / fromDecibels(db)
       const { mean, error } = countedBits(points, p, labels, n0, random)
