@@ -13,8 +13,8 @@ const negligible = 1e-12
 const integral = new PieceIntegral()
 
 /**
- * Exact mean symbol error rates of minimum-distance decisions over many noise densities: any points of one or two dimensions, and of more
- * dimensions Cartesian products of such, simplex-like and biorthogonal sets.
+ * Exact mean symbol error rates of minimum-distance decisions over many noise densities, for all sets of one or two dimensions,
+ * their Cartesian products, and equidistant and biorthogonal sets of more dimensions.
  * @param geometry decision regions, from analyse
  * @param n0s noise densities N0 above 0, signal units squared
  * @returns one probability for each of n0s; relative error below 1e-9 from 0.9 down to 1e-30

@@ -15,7 +15,8 @@ const rounding = 1e-12
 const known = new WeakMap<Constellation, Rate | null>()
 
 /**
- * The exact symbol error rate of a set of more than two dimensions from its structure, which its distances tell: any position and scale.
+ * The exact symbol error rate of a set of more than two dimensions from its structure. Distances tell it, wherever the set lies and
+ * whatever its scale.
  * @returns null where no exact rate is known
  * @see methods §2; Proakis, Digital Communications
  */
