@@ -13,7 +13,7 @@ export const lattice = choiceInput('lattice', latticeChoices, {
 export const offset: InputColumn = {
   id: 'offset', title: 'Offset of the cut', unit: 'minimum distances', group, kind: 'input', type: 'list', fields: ['offset'],
   format: 'plain', round: 'nearest', firstOpening: false, width: 24,
-  meaning: 'Lattice: point about which the shortest points are taken, a coordinate for each dimension; left empty: the family\'s own.',
+  meaning: 'Lattice: point about which the shortest points are taken, a coordinate for each dimension; left empty: a lattice point.',
   text: inputs => numberListText(inputs.offset),
   parse: parseNumberList('offset'),
   unused: unusedParameter('offset', 'an offset'),

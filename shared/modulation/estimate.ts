@@ -8,6 +8,9 @@ export interface Interval {
 /** A number, exact within its tolerance, or an interval where only that is known. */
 export type Estimate = number | Interval
 
+/** Half width of a two-sided interval of 95 %, in standard errors of a normal estimate. */
+export const halfWidth = 1.959964
+
 /** Whether only an interval is known. */
 export const isInterval = (estimate: Estimate): estimate is Interval => typeof estimate !== 'number'
 

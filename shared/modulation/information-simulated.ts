@@ -1,3 +1,4 @@
+import { halfWidth } from './estimate'
 import type { Estimate } from './estimate'
 import { observerOf } from './information-observer'
 import type { InformationSource } from './information-source'
@@ -15,8 +16,6 @@ export interface InformationSimulation {
 /** Pairs of point and received vector, by about which one rate's draws are counted out, and the most draws. */
 const defaultPairs = 5e6
 const mostDraws = 65536
-/** Half width of a two-sided interval of 95 %, in standard errors. */
-const halfWidth = 1.959964
 
 /** Equivocations in bit with intervals of 95 %: of the symbol, and summed over the bits (0 without words). */
 export interface SimulatedEquivocation { symbol: Estimate, bits: Estimate }

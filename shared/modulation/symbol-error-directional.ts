@@ -1,4 +1,5 @@
 import { probabilityOf } from './constellation'
+import { halfWidth } from './estimate'
 import type { Estimate } from './estimate'
 import { q } from './gaussian'
 import type { Geometry } from './geometry'
@@ -15,8 +16,6 @@ export interface DirectionalEffort {
 }
 
 const defaultDirections = 1e5
-/** Half width of a two-sided interval of 95 %, in standard errors. */
-const halfWidth = 1.96
 /** Directions that must count for the mean before its standard error is believed; with fewer the bounds are the interval. */
 const fewest = 200
 /** Pairs of neighbours whose joint probability the lower bound computes at most, a rate. */

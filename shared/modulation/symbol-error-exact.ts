@@ -1,3 +1,4 @@
+import { edgeFlow } from './edge-flow'
 import { ModulationError, requireNoiseDensity } from './errors'
 import { expNegative } from './exponential'
 import { requireEdges } from './geometry'
@@ -79,20 +80,8 @@ export function serExactByPoint(geometry: Geometry, n0: number): Float64Array {
   return Float64Array.from({ length: order }, (_, i) => {
     let sum = 0
     for (let entry = offsets[i]!; entry < offsets[i + 1]!; entry++) {
-      sum += edgeError(edges.h[entry]!, edges.t1[entry]!, edges.t2[entry]!, n0)
+      sum += edgeFlow(edges.h[entry]!, edges.t1[entry]!, edges.t2[entry]!, n0)
     }
     return sum
   })
-}
-
-/** A whole edge from t1 to t2, cut at the foot where the foot lies on it. */
-function edgeError(h: number, t1: number, t2: number, n0: number): number {
-  if (t1 >= 0) return pieceError(h, t1, t2, n0)
-  if (t2 <= 0) return pieceError(h, -t2, -t1, n0)
-  return pieceError(h, 0, t2, n0) + pieceError(h, 0, -t1, n0)
-}
-
-function pieceError(h: number, a: number, b: number, n0: number): number {
-  integral.take(h, a, b)
-  return integral.at(n0)
 }

@@ -19,7 +19,7 @@ export interface FamilyParameters {
   points?: readonly (readonly number[])[] | null
   /** lattice: which one */
   lattice?: LatticeId | null
-  /** lattice: centre of the cut, in minimum distances; left out: the family's own */
+  /** lattice: centre of the cut, in minimum distances; left out: a lattice point */
   offset?: readonly number[] | null
   /** product: its factors, 2 to 8, not nested */
   factors?: readonly ({ family: FamilyId } & FamilyParameters)[] | null

@@ -1,10 +1,11 @@
 import { readFileSync } from 'node:fs'
 import { describe, expect, it } from 'vitest'
 import {
-  ModulationError, analyse, berAllPairs, berExact, berExactCurve, berNearest, createConstellation, familyLabels, generate, naturalLabels, q, qInverse,
+  analyse, berAllPairs, berExact, berExactCurve, berNearest, createConstellation, familyLabels, generate, naturalLabels, q, qInverse,
   requiredEsN0Db, serExact,
 } from '../../../shared/modulation'
 import { randomFrom } from './seeded'
+import { pathOf } from './refusal'
 
 // 30-digit values by tests/reference/data/make-ber.py: brute-force clipping and quadrature with mpmath.
 interface Entry {
@@ -141,14 +142,6 @@ describe('a seeded Monte Carlo agrees with the exact BER', () => {
 
 describe('refused', () => {
   const unlabelled = analyse(generate('psk', { order: 8 }))
-  const pathOf = (call: () => unknown) => {
-    try {
-      call()
-    } catch (error) {
-      return error instanceof ModulationError ? error.path : error
-    }
-    return null
-  }
   it.each([
     ['exact', () => berExact(unlabelled, 0.1)], ['neighbours', () => berNearest(unlabelled, 0.1)], ['all pairs', () => berAllPairs(unlabelled.constellation, 0.1)],
   ])('without labels: %s', (_, call) => expect(pathOf(call)).toEqual(['labels']))

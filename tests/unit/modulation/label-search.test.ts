@@ -1,7 +1,8 @@
 import { describe, expect, it } from 'vitest'
-import { ModulationError, advanceLabelSearch, analyse, berAllPairs, berExact, createConstellation, createLabelSearch, familyLabels, generate, naturalLabels } from '../../../shared/modulation'
+import { advanceLabelSearch, analyse, berAllPairs, berExact, createConstellation, createLabelSearch, familyLabels, generate, naturalLabels } from '../../../shared/modulation'
 import type { FamilyId, FamilyParameters, LabelSearchState } from '../../../shared/modulation'
 import { randomFrom } from './seeded'
+import { pathOf } from './refusal'
 
 /** Natural labels in random order. */
 const shuffledLabels = (seed: number, order: number) => {
@@ -92,14 +93,6 @@ describe('in more than two dimensions', () => {
 
 describe('refused', () => {
   const labelled = generate('psk', { order: 8 })
-  const pathOf = (call: () => unknown) => {
-    try {
-      call()
-    } catch (error) {
-      return error instanceof ModulationError ? error.path : error
-    }
-    return null
-  }
   it('six points', () => expect(pathOf(() => createLabelSearch({ constellation: generate('psk', { order: 6 }), n0: 1, seed: 1, starts: 1 }))).toEqual(['labels']))
   it('no starts', () => expect(pathOf(() => createLabelSearch({ constellation: labelled, n0: 1, seed: 1, starts: 0 }))).toEqual(['starts']))
   it('no noise', () => expect(pathOf(() => createLabelSearch({ constellation: labelled, n0: 0, seed: 1, starts: 1 }))).toEqual(['n0']))

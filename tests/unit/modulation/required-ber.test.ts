@@ -1,7 +1,8 @@
 import { describe, expect, it } from 'vitest'
-import { ModulationError, analyse, berExact, createConstellation, familyLabels, fromDecibels, generate, naturalLabels, qInverse, requiredEsN0Db, requiredSnr } from '../../../shared/modulation'
+import { analyse, berExact, createConstellation, familyLabels, fromDecibels, generate, naturalLabels, qInverse, requiredEsN0Db, requiredSnr } from '../../../shared/modulation'
 import type { FamilyId, FamilyParameters } from '../../../shared/modulation'
 import { randomFrom } from './seeded'
+import { pathOf } from './refusal'
 
 const geometryOf = (id: FamilyId, parameters: FamilyParameters) => analyse(generate(id, parameters, { labels: familyLabels(id, parameters) }))
 const kinds = ['berExact', 'berNearest', 'berAllPairs'] as const
@@ -66,14 +67,6 @@ describe('crossings and floors of any curve', () => {
 
 describe('refused', () => {
   const labelled = geometryOf('psk', { order: 8 })
-  const pathOf = (call: () => unknown) => {
-    try {
-      call()
-    } catch (error) {
-      return error instanceof ModulationError ? error.path : error
-    }
-    return null
-  }
   it.each(kinds)('%s without labels', kind => expect(pathOf(() => requiredSnr({ geometry: analyse(generate('psk', { order: 8 })), kind }, 1e-3))).toEqual(['labels']))
   it('a target that is always met', () => {
     expect(() => requiredSnr({ geometry: labelled, kind: 'berExact' }, 0.6)).toThrow('The error rate meets this target from −30 dB Es/N0 on: enter a smaller target.')
